@@ -1,0 +1,8 @@
+/** Reference slope a0 of the recovery models. [A/s] */
+export const referenceSlope = 1e8
+/** Reference temperature T0 (25 °C). [K] */
+export const referenceTemperature = 298.15
+/** Zero of the Celsius scale. [K] */
+export const celsiusZero = 273.15
+/** Boltzmann constant. [eV/K] (CODATA 2018) */
+export const boltzmannElectronvolt = 8.617333e-5
