@@ -1,0 +1,21 @@
+/** `npm run build`: everything under dist/ but dist/build, which holds this program itself. */
+import { readdirSync, rmSync, statSync } from 'node:fs'
+import { buildBundles } from './bundles.ts'
+import { writeDeclarations } from './declarations.ts'
+import { writeLicences } from './licences.ts'
+import { buildValidators } from './validators.ts'
+
+const begun = Date.now()
+const validatorPackages = await buildValidators()
+const [bundledPackages] = await Promise.all([buildBundles(), writeDeclarations()])
+writeLicences([...validatorPackages, ...bundledPackages])
+removeOlderThan(begun)
+
+/** What an earlier build left behind goes last, so that a running program never finds its files gone. */
+function removeOlderThan(time: number): void {
+  for (const entry of readdirSync('dist', { withFileTypes: true })) {
+    const path = `dist/${entry.name}`
+    // A second's grace: some file systems keep whole seconds only.
+    if (entry.isFile() && statSync(path).mtimeMs < time - 1000) rmSync(path)
+  }
+}
