@@ -1,0 +1,171 @@
+import { baseEnergy } from '../models/commutation-energy.ts'
+import { chordConductionPower, forwardDrop, forwardDropUsable, trapezoidConductionPower } from '../models/forward-drop.ts'
+import { gateDrivenSlope } from '../models/gate-slope.ts'
+import { type Kernel, type PartState, type RecoveryEvent, row } from './kernel.ts'
+import { leakageAt } from './part-at-temperature.ts'
+import { recover } from './recover.ts'
+
+const conduction = { constant: 0, logarithmic: 0, linear: 0, ratedCurrent: 1, valley: 0, peak: 0, line: false }
+const drop = { constant: 0, logarithmic: 0, linear: 0, ratedCurrent: 1, current: 0, line: false }
+const base = { voltage: 0, current: 0, slope: 0, voltageFall: 0 }
+const gate = {
+  drive: 0,
+  resistance: 0,
+  inputCapacitance: 0,
+  transconductance: 0,
+  threshold: 0,
+  plateau: null as number | null,
+  sourceInductance: 0,
+  current: 0,
+}
+
+/** Turn-on di/dt at a current: given or from the gate drive, times the draw's factor, at most V/L_loop. [A/s] */
+export function slopeAt(kernel: Kernel, current: number): number {
+  let slope = kernel.slope
+  if (kernel.gate !== null) {
+    gate.drive = kernel.gate.drive
+    gate.resistance = kernel.gate.resistance
+    gate.inputCapacitance = kernel.gate.inputCapacitance
+    gate.transconductance = kernel.gate.transconductance
+    gate.threshold = kernel.gate.threshold
+    gate.plateau = kernel.gate.plateau
+    gate.sourceInductance = kernel.gate.sourceInductance
+    gate.current = current
+    slope = gateDrivenSlope(gate)
+  }
+  slope *= kernel.slopeFactor
+  if (kernel.loopInductance > 0) slope = Math.min(slope, kernel.instant.blockingVoltage / kernel.loopInductance)
+  return slope
+}
+
+/** Adds the losses of one switching period, weighted, to the kernel's rows: each watt enters exactly one row. */
+export function bookInstant(kernel: Kernel, weight: number): void {
+  const slope = slopeAt(kernel, Math.max(kernel.instant.valley, 0))
+  const hot = bookPart(kernel, kernel.hot, kernel.hotEvent, kernel.hotShare, slope, 1, weight)
+  kernel.rows[row.hotPart]! += hot * weight
+  if (kernel.parts > 1) {
+    const others = kernel.parts - 1
+    const other = bookPart(kernel, kernel.other, kernel.otherEvent, kernel.otherShare, slope, others, weight)
+    kernel.rows[row.otherPart]! += other * weight
+  }
+  bookSwitch(kernel, slope, weight)
+}
+
+/** Books `count` equal parts and returns the heat in one of them. [W] */
+function bookPart(
+  kernel: Kernel,
+  state: PartState,
+  event: RecoveryEvent,
+  share: number,
+  slope: number,
+  count: number,
+  weight: number,
+): number {
+  const { rows, frequency, part, instant, turnOn } = kernel
+  recover(kernel, state, share, slope, event)
+  const conducted = conductionPower(kernel, state, share)
+  const leaked = leakagePower(kernel, state)
+  const forward = forwardRecoveryPower(kernel, state, share, slope)
+  const inRectifier = event.rectifierEnergy * frequency
+  const cost =
+    part.capacitiveCharge > 0 ? part.chargingCost * Math.max(0, 1 - event.charge / part.capacitiveCharge) * frequency : 0
+  const scale = weight * count
+  rows[row.conduction]! += conducted * scale
+  rows[row.leakage]! += leaked * scale
+  rows[row.forwardRecovery]! += forward * scale
+  rows[row.recoveryRectifier]! += inRectifier * scale
+  rows[row.recoverySwitch]! += event.switchAddedEnergy * turnOn.addedShare * frequency * scale
+  rows[row.capacitive]! += cost * turnOn.addedShare * scale
+  rows[row.meanRectifierCurrent]! += ((instant.valley + instant.peak) / 2) * instant.conductionShare * share * scale
+  return conducted + leaked + forward + inRectifier
+}
+
+function conductionPower(kernel: Kernel, state: PartState, share: number): number {
+  const { instant, part } = kernel
+  if (part.synchronous) return synchronousConduction(kernel, state, share)
+  conduction.constant = state.constant
+  conduction.logarithmic = state.logarithmic
+  conduction.linear = state.linear
+  conduction.ratedCurrent = part.ratedCurrent
+  conduction.line = part.line
+  conduction.valley = instant.valley * share
+  conduction.peak = instant.peak * share
+  state.chord = !forwardDropUsable(conduction)
+  const power = state.chord ? chordConductionPower(conduction) : trapezoidConductionPower(conduction)
+  return power * instant.conductionShare
+}
+
+/** Body diode in the two dead times, channel in between. */
+function synchronousConduction(kernel: Kernel, state: PartState, share: number): number {
+  const { instant, part, frequency } = kernel
+  const valley = instant.valley * share
+  const peak = instant.peak * share
+  const before = valley > 0 ? dropAt(kernel, state, valley) * valley * frequency * part.deadBefore : 0
+  const after = dropAt(kernel, state, peak) * peak * frequency * part.deadAfter
+  const channelShare = Math.max(instant.conductionShare - (part.deadBefore + part.deadAfter) * frequency, 0)
+  const meanSquare = (valley * valley + valley * peak + peak * peak) / 3
+  return before + after + meanSquare * state.channelResistance * channelShare
+}
+
+function dropAt(kernel: Kernel, state: PartState, current: number): number {
+  drop.constant = state.constant
+  drop.logarithmic = state.logarithmic
+  drop.linear = state.linear
+  drop.ratedCurrent = kernel.part.ratedCurrent
+  drop.line = kernel.part.line
+  drop.current = current
+  return Math.max(forwardDrop(drop), 0)
+}
+
+function leakagePower(kernel: Kernel, state: PartState): number {
+  if (!kernel.part.leaks) return 0
+  const instant = kernel.instant
+  const blocking = instant.blockingVoltage * state.leakage * instant.duty
+  if (!instant.discontinuous) return blocking
+  const idleShare = Math.max(1 - instant.duty - instant.conductionShare, 0)
+  return blocking + instant.idleVoltage * leakageAt(kernel, state, instant.idleVoltage) * idleShare
+}
+
+/** (V_FP − V_F) I_peak t_fr/2 per period; V_FP scales with the square root of the slope. */
+function forwardRecoveryPower(kernel: Kernel, state: PartState, share: number, slope: number): number {
+  const part = kernel.part
+  if (part.forwardRecoveryTime === 0) return 0
+  const peak = kernel.instant.peak * share
+  const fall = kernel.turnOff.currentFall
+  const turnOffSlope = fall > 0 ? peak / fall : slope * share
+  const overshoot = part.forwardRecoveryPeak * Math.sqrt(turnOffSlope / part.forwardRecoverySlope) - dropAt(kernel, state, peak)
+  return (Math.max(overshoot, 0) * peak * part.forwardRecoveryTime * kernel.frequency) / 2
+}
+
+function bookSwitch(kernel: Kernel, slope: number, weight: number): void {
+  const { rows, instant, frequency } = kernel
+  const { valley, peak, duty, conductionShare } = instant
+  const meanSquare = (valley * valley + valley * peak + peak * peak) / 3
+  rows[row.switchConduction]! += meanSquare * duty * kernel.onResistance * weight
+  rows[row.inductor]! += meanSquare * (duty + conductionShare) * kernel.inductorResistance * weight
+  rows[row.turnOnBase]! += turnOnBase(kernel, slope) * frequency * weight
+  rows[row.turnOff]! += turnOffEnergy(kernel) * frequency * weight
+}
+
+function turnOffEnergy(kernel: Kernel): number {
+  const { turnOff, instant } = kernel
+  if (turnOff.kind === 'energy') return turnOff.energy
+  return (instant.blockingVoltage * Math.max(instant.peak, 0) * (turnOff.voltageRise + turnOff.currentFall)) / 2
+}
+
+/** Turn-on energy with an ideal rectifier; a measured one is carried over by the ratio of the overlap energies. */
+function turnOnBase(kernel: Kernel, slope: number): number {
+  const { instant, turnOn } = kernel
+  const current = Math.max(instant.valley, 0)
+  if (current === 0) return 0
+  base.voltage = instant.blockingVoltage
+  base.current = current
+  base.slope = slope
+  base.voltageFall = kernel.voltageFall
+  const here = baseEnergy(base)
+  if (turnOn.current === 0) return here
+  base.voltage = turnOn.voltage
+  base.current = turnOn.current
+  base.slope = slopeAt(kernel, turnOn.current)
+  return (turnOn.energy * here) / baseEnergy(base)
+}

@@ -1,0 +1,34 @@
+import { referenceTemperature } from '../domain/constants.ts'
+import type { Kernel, PartState } from './kernel.ts'
+
+/**
+ * Moves a part's properties to a junction temperature, in place.
+ * u and y take ln(T/T0), V_F is linear in T, ln I_R in 1/T (CalibratedRectifier names the bases).
+ */
+export function moveToTemperature(kernel: Kernel, state: PartState, junction: number): void {
+  const c = kernel.coefficients
+  const part = kernel.part
+  const rise = junction - referenceTemperature
+  state.constant = c[8]! + rise * c[11]!
+  state.logarithmic = c[9]! + rise * c[12]!
+  state.linear = c[10]! + rise * c[13]!
+  if (part.storesCharge) {
+    const logTemperature = Math.log(junction / referenceTemperature)
+    state.lifetimeLog = c[0]! + c[3]! * logTemperature
+    state.ratioLog = c[4]! + c[7]! * logTemperature
+  }
+  if (part.leaks) {
+    state.leakageLog = c[14]! + c[15]! * (1 / referenceTemperature - 1 / junction)
+    state.leakage = leakageAt(kernel, state, kernel.instant.blockingVoltage)
+  }
+  if (part.synchronous) {
+    state.channelResistance = Math.max(part.channelResistance25 * (1 + part.channelPerKelvin * rise), 0.1 * part.channelResistance25)
+  }
+}
+
+/** Reverse current at a voltage. [A] A reverse current beyond 1 kA only says "runs away"; the bound keeps sums finite. */
+export function leakageAt(kernel: Kernel, state: PartState, voltage: number): number {
+  if (voltage <= 0) return 0
+  const exponent = state.leakageLog + kernel.coefficients[16]! * Math.log(voltage / kernel.part.ratedVoltage)
+  return Math.exp(Math.min(exponent, 7))
+}

@@ -1,0 +1,140 @@
+import { evaluate } from './evaluate.ts'
+import { type Kernel, row, switchPower } from './kernel.ts'
+import { ambientForJunction, lowestSettledJunction } from './ambient-for-junction.ts'
+
+/** Temperatures are solved to this. [K] */
+const tolerance = 1e-6
+const maxRounds = 25
+
+// Scratch of the solver: unknowns are the solved temperatures, at most three.
+const index = new Int32Array(3)
+const residual = new Float64Array(3)
+const previous = new Float64Array(3)
+const step = new Float64Array(3)
+const inverse = new Float64Array(9)
+const change = new Float64Array(3)
+const product = new Float64Array(3)
+const target = new Float64Array(3)
+
+/**
+ * Settles the junction temperatures with the losses (PHYSICS 5): the lowest root of T = T_ref + R_th P(T), from below.
+ * Broyden's method (C. G. Broyden, Math. Comp. 19, 1965, 577-593) started with the plain fixed-point step; a result
+ * that was not approached from below, or no result, is settled by the slow bracketed search.
+ *
+ * @returns True when a stable temperature exists; `kernel` then holds the ledger there. False: none, or no power.
+ */
+export function settle(kernel: Kernel): boolean {
+  const count = startFromReference(kernel)
+  evaluate(kernel)
+  if (!kernel.delivers) return settleSlowly(kernel)
+  computeResidual(kernel, count)
+  identity(count)
+  let sawBelow = residual[0]! > 0
+  for (let round = 0; round < maxRounds; round++) {
+    if (largest(residual, count) <= tolerance) return sawBelow ? true : settleSlowly(kernel)
+    if (!stepForward(kernel, count)) return settleSlowly(kernel)
+    evaluate(kernel)
+    if (!kernel.delivers) return settleSlowly(kernel)
+    computeResidual(kernel, count)
+    updateInverse(count)
+    sawBelow ||= residual[0]! > 0
+  }
+  return settleSlowly(kernel)
+}
+
+function settleSlowly(kernel: Kernel): boolean {
+  const junction = lowestSettledJunction(kernel)
+  if (junction === null) return false
+  // Leaves the ledger of the root in the kernel.
+  ambientForJunction(kernel, junction)
+  return kernel.delivers
+}
+
+/** Where the heat flow through the network would put each solved junction, minus where it is. */
+function computeResidual(kernel: Kernel, count: number): void {
+  heatTargets(kernel, target)
+  for (let k = 0; k < count; k++) residual[k] = target[index[k]!]! - kernel.temperatures[index[k]!]!
+}
+
+/** Junction temperatures that the present losses would cause. [K] */
+export function heatTargets(kernel: Kernel, out: Float64Array): void {
+  const { thermal, rows, parts } = kernel
+  const heat = switchPower(rows)
+  const hot = rows[row.hotPart]!
+  const other = rows[row.otherPart]!
+  const onSink = (thermal.rectifierOnSink ? hot + (parts - 1) * other : 0) + (thermal.switchOnSink ? heat : 0)
+  const sink = thermal.reference + thermal.common * thermal.factor * onSink
+  const base = thermal.rectifierOnSink ? sink : thermal.reference
+  out[0] = base + thermal.junctionSelf * thermal.factor * hot
+  out[1] = sink + thermal.switchSelf * thermal.factor * heat
+  out[2] = base + thermal.junctionSelf * thermal.factor * other
+}
+
+function startFromReference(kernel: Kernel): number {
+  const { thermal, temperatures } = kernel
+  let count = 0
+  index[count++] = 0
+  temperatures[0] = thermal.reference
+  if (thermal.switchSolved) {
+    index[count++] = 1
+    temperatures[1] = thermal.reference
+  }
+  temperatures[2] = thermal.reference
+  if (kernel.parts > 1) index[count++] = 2
+  return count
+}
+
+function identity(count: number): void {
+  inverse.fill(0)
+  for (let k = 0; k < count; k++) inverse[k * 3 + k] = 1
+}
+
+/** Moves along the quasi-Newton direction; false when the step leaves the searched range. */
+function stepForward(kernel: Kernel, count: number): boolean {
+  const { temperatures, thermal } = kernel
+  for (let k = 0; k < count; k++) {
+    let moved = 0
+    for (let j = 0; j < count; j++) moved += inverse[k * 3 + j]! * residual[j]!
+    previous[k] = residual[k]!
+    step[k] = moved
+    const next = temperatures[index[k]!]! + moved
+    // The switch and the other parts may pass the rectifier's ceiling; only absurd values stop the fast route.
+    const highest = index[k] === 0 ? thermal.ceiling : thermal.ceiling + 1000
+    if (!(next <= highest) || next < thermal.reference - 1) return false
+    temperatures[index[k]!] = next
+  }
+  return true
+}
+
+/**
+ * Broyden's rank-one update of the inverse, with the residual's sign turned so that the first step is the
+ * fixed-point step: H += (s − H y) sᵀH / (sᵀ H y), y = r_old − r_new.
+ */
+function updateInverse(count: number): void {
+  let denominator = 0
+  for (let k = 0; k < count; k++) {
+    change[k] = previous[k]! - residual[k]!
+  }
+  for (let k = 0; k < count; k++) {
+    let sum = 0
+    for (let j = 0; j < count; j++) sum += inverse[k * 3 + j]! * change[j]!
+    product[k] = sum
+    denominator += step[k]! * sum
+  }
+  if (!(Math.abs(denominator) > 1e-300)) return
+  for (let j = 0; j < count; j++) {
+    let row = 0
+    for (let k = 0; k < count; k++) row += step[k]! * inverse[k * 3 + j]!
+    target[j] = row
+  }
+  for (let k = 0; k < count; k++) {
+    const scale = (step[k]! - product[k]!) / denominator
+    for (let j = 0; j < count; j++) inverse[k * 3 + j]! += scale * target[j]!
+  }
+}
+
+function largest(values: Float64Array, count: number): number {
+  let most = 0
+  for (let k = 0; k < count; k++) most = Math.max(most, Math.abs(values[k]!))
+  return most
+}
