@@ -1,0 +1,26 @@
+/** Inputs of {@link mainsBoostRectifierRms}. */
+export interface MainsBoostInput {
+  /** Output power. [W] */
+  readonly power: number
+  /** Root-mean-square mains voltage. [V] */
+  readonly mainsVoltage: number
+  /** [V] */
+  readonly outputVoltage: number
+}
+
+/**
+ * Mean rectifier current of a drop-free mains boost.
+ * @example mainsBoostRectifierMean({ power: 1200, mainsVoltage: 85, outputVoltage: 400 }) // 3.00000
+ */
+export function mainsBoostRectifierMean(input: MainsBoostInput): number {
+  return input.power / input.outputVoltage
+}
+
+/**
+ * Root-mean-square rectifier current of a drop-free, ripple-free mains boost.
+ * @example mainsBoostRectifierRms({ power: 1200, mainsVoltage: 85, outputVoltage: 400 }) // 7.13034
+ */
+export function mainsBoostRectifierRms(input: MainsBoostInput): number {
+  const peak = Math.SQRT2 * input.mainsVoltage
+  return (input.power / peak) * Math.sqrt((16 * peak) / (3 * Math.PI * input.outputVoltage))
+}
