@@ -1,0 +1,57 @@
+import type { CandidateResult, RankResult } from '../domain/result.ts'
+import { closingBlocks, drawsFact, listBlock, rejectedBlock, stageFacts, titleOf, withCautions } from './common-view.ts'
+import { significant } from './format.ts'
+import { rankColumns } from './rank-columns.ts'
+import { type ColumnSpec, tableOf, textColumn } from './table-view.ts'
+import type { Block, ReportView } from './view-types.ts'
+import { measureWords } from './words/verdict-words.ts'
+
+/** Everything `rank` shows, in order. */
+export function rankView(result: RankResult): ReportView {
+  const columns = rankColumns(result)
+  const ranked = result.candidates.filter(({ accepted }) => accepted)
+  const blocks: Block[] = [{ kind: 'facts', items: [...stageFacts(result.stage), drawsFact(result)] }]
+  if (ranked.length > 0)
+    blocks.push({ kind: 'table', heading: 'Ranking', table: tableOf(columns, ranked), note: tableNote(ranked) })
+  blocks.push(
+    ...rejectedBlock(result.candidates),
+    { kind: 'text', heading: 'Verdict', text: result.verdict.text },
+    ...doubtBlocks(result),
+    ...closingBlocks(result),
+  )
+  const data = tableOf([...columns, ...dataColumns], result.candidates)
+  return { title: titleOf(result.stage, 'rectifiers ranked'), blocks, data: withCautions(data, result.cautions) }
+}
+
+function tableNote(ranked: readonly CandidateResult[]): string {
+  const level = ranked.find(({ interval_w }) => interval_w !== null)?.interval_w?.level
+  const interval =
+    level === undefined
+      ? ''
+      : ` Low and high hold ${significant(level * 100)} % of the draws; Tj high is the 95th percentile.`
+  return `Ranked by stage loss. Total is the sum of the six loss rows.${interval}`
+}
+
+/** What carries the doubt and what to measure. */
+function doubtBlocks({ verdict }: RankResult): Block[] {
+  const sensitivity = (verdict.sensitivity ?? []).map(({ input, share }) => ({
+    lead: null,
+    text: `${input}: ${significant(share * 100, 2)} %`,
+  }))
+  const measure = (verdict.measure_next ?? []).map((next) => ({ lead: null, text: `${capital(measureWords(next))}.` }))
+  return [
+    ...listBlock('Measure next', 'plain', measure),
+    ...listBlock('Sensitivity: share of the variance of the gap', 'plain', sensitivity),
+  ]
+}
+
+function capital(text: string): string {
+  return `${text.charAt(0).toUpperCase()}${text.slice(1)}`
+}
+
+/** Further columns of the CSV file, for scripts. */
+const dataColumns: readonly ColumnSpec<CandidateResult>[] = [
+  textColumn('accepted', 'data', ({ accepted }) => (accepted ? 'yes' : 'no')),
+  textColumn('reasons', 'data', ({ reasons }) => reasons.map(({ code }) => code).join(' ')),
+  textColumn('thermal', 'data', ({ thermal }) => thermal),
+]

@@ -1,0 +1,46 @@
+/** Safety and handling: raised by the study, never suppressed. Codes of `cautions`, each with its sentences. */
+export const cautionCodes = [
+  'lethal-voltage',
+  'mains-fed',
+  'qualified-persons',
+  'bulk-capacitor',
+  'isolated-probing',
+  'fuse-and-insulation',
+  'estimate-only',
+  'surge-silicon-carbide',
+  'leakage-and-voltage-of-schottky',
+  'faster-edges',
+  'gate-drive-retune',
+] as const
+
+export type CautionCode = (typeof cautionCodes)[number]
+
+export const cautionWords: Readonly<Record<CautionCode, string>> = {
+  'lethal-voltage':
+    'Lethal voltage: this stage carries [{voltage:V}|hazardous voltage], above the limits of 60 V dc and 42.4 V peak taken as hazardous. ' +
+    'Touching live parts can kill.',
+  'mains-fed':
+    'This stage is fed from the mains[ ({mains:V}, up to {peak:V} peak)]: every part of it, ground of the control included, is to be taken as live, ' +
+    'also when it does not switch.',
+  'qualified-persons':
+    'Work on it is for qualified persons who are licensed where the law asks for it, under the local code and with a second person present.',
+  'bulk-capacitor':
+    'The bulk capacitor stays charged after switching off[: {capacitance:F} at {voltage:V} hold {energy:J}|; its capacitance is not given, so neither time nor energy can be stated]' +
+    '[. Its bleeder of {bleeder:ohm} takes {time:s} to bring it down to {until:V}|. Its bleeder of {bleeder:ohm} takes {time:s} to bring it down to 60 V|. No bleeder is given: take it to stay charged for hours]. ' +
+    'Isolate, discharge and measure before touching; a bleeder can have failed.',
+  'isolated-probing':
+    'Probe with differential or isolated probes rated for the voltage. A grounded probe on the switching node or on a mains-fed ground destroys it and endangers people.',
+  'fuse-and-insulation':
+    'Fuse, creepage, clearance and insulation follow the local code and the standard of the product; nothing here has checked them.',
+  'estimate-only':
+    'The figures are estimates from data sheets and models. Confirm losses, temperatures and peak voltage on the bench before release.',
+  'surge-silicon-carbide':
+    'At mains start-up the bulk capacitor charges through the rectifier: silicon-carbide Schottky parts[ ({parts})] bear less surge current than silicon. ' +
+    'Check the surge rating and consider a bypass rectifier or an inrush limit.',
+  'leakage-and-voltage-of-schottky':
+    'A silicon Schottky part leaks much more when hot and has little voltage reserve: check runaway at maximum leakage and the peak reverse voltage with ringing.',
+  'faster-edges':
+    'A part with less recovery makes faster edges and can ring more: check overshoot, ringing and conducted noise on the bench.',
+  'gate-drive-retune':
+    'The gate drive was set for the part in use: after the swap, set the turn-on resistance again and check the slope it really gives.',
+}

@@ -1,0 +1,71 @@
+import type { CandidateResult, MeasureNext, RankResult } from '../../domain/result.ts'
+import { celsius, quantity, significant, withInterval } from '../format.ts'
+
+/** The decision in one to three sentences: which part, by how much, how sure, and what to do next. */
+export function verdictWords(result: RankResult): string {
+  const { verdict } = result
+  const best = result.candidates.find(({ id }) => id === verdict.best)
+  if (best === undefined) return nothingAcceptable(result)
+  const loss = quantity(best.stage_loss_w, 'W')
+  if (verdict.runner_up === null)
+    return `${best.id} is the only acceptable candidate, with ${loss} stage loss. ${rejectedCount(result)}`.trim()
+  if (verdict.decided === null)
+    return `${best.id} is the cheapest by nominal figures: ${loss} stage loss, ${gap(result)}. How sure this is was not computed.`
+  if (verdict.decided)
+    return `${best.id} is the cheapest: ${loss} stage loss, ${gap(result)}; decided${withOdds(best)}.`
+  return `${undecided(result, best, loss)} ${advice(verdict.measure_next)}`.trim()
+}
+
+function undecided(result: RankResult, best: CandidateResult, loss: string): string {
+  const others = result.verdict.tied.filter((id) => id !== best.id)
+  const odds = best.odds_best === null ? '' : ` Its odds of being the cheapest are ${oddsText(best)}.`
+  const rivals = others.length > 0 ? others : [result.verdict.runner_up!]
+  return `Not decided: ${best.id} has the lowest stage loss, ${loss}, but is not distinguishable from ${list(rivals)}; it is ${gap(result)}.${odds}`
+}
+
+function gap(result: RankResult): string {
+  const { gap_w, gap_low_w, gap_high_w, runner_up } = result.verdict
+  if (gap_w === null) return `ahead of ${runner_up}`
+  return `${withInterval(gap_w, gap_low_w, gap_high_w, 'W')} below ${runner_up}`
+}
+
+function withOdds(best: CandidateResult): string {
+  return best.odds_best === null ? '' : ` with odds ${oddsText(best)}`
+}
+
+/** Odds with two digits; never rounded up to certainty. */
+export function oddsText({ odds_best: odds, odds_error: error }: CandidateResult): string {
+  if (odds === null) return 'unknown'
+  const text = odds > 0.995 && odds < 1 ? 'above 0.99' : odds < 0.005 && odds > 0 ? 'below 0.01' : odds.toFixed(2)
+  return error !== null && error >= 0.005 ? `${text} (±${error.toFixed(2)})` : text
+}
+
+function advice(next: readonly MeasureNext[] | null): string {
+  const first = next?.[0]
+  return first === undefined ? '' : `To settle it, ${measureWords(first)}.`
+}
+
+/** One measurement as an order for the bench: "measure recovery of X at 8 A, 350 A/µs and 110 °C: …". */
+export function measureWords(next: MeasureNext): string {
+  const slope = next.slope_a_per_s === null ? '' : `, ${quantity(next.slope_a_per_s, 'A/us')}`
+  const at = `${quantity(next.current_a, 'A')}${slope} and ${celsius(next.junction_c)}`
+  const name = { recovery: 'the recovery', forward: 'the forward voltage', leakage: 'the leakage' }[next.property]
+  return `measure ${name} of ${next.id} at ${at} (should remove ${significant(next.share * 100, 2)} % of the variance of the gap)`
+}
+
+function nothingAcceptable(result: RankResult): string {
+  if (result.candidates.length === 0) return 'No candidate was given.'
+  return `No candidate is acceptable. ${rejectedCount(result)} Change the stage, its cooling or the candidates.`
+}
+
+function rejectedCount(result: RankResult): string {
+  const count = result.candidates.filter(({ accepted }) => !accepted).length
+  if (count === 0) return ''
+  return count === 1 ? 'One is rejected, with its reason.' : `${count} are rejected, each with its reason.`
+}
+
+/** "A", "A and B", "A, B and C". */
+export function list(names: readonly string[]): string {
+  if (names.length < 2) return names.join('')
+  return `${names.slice(0, -1).join(', ')} and ${names[names.length - 1]}`
+}

@@ -1,0 +1,215 @@
+import type { CandidateResult, EventResult, RankResult } from '../../src/domain/result.ts'
+
+/** Result documents as study/ hands them over: texts empty, numbers invented. */
+
+const event: EventResult = {
+  current_a: 10.4,
+  slope_a_per_s: 3.5e8,
+  blocking_v: 120,
+  junction_c: 92.4,
+  tau_s: 63.5e-9,
+  tau_rr_s: 18.6e-9,
+  stored_c: 6.6e-7,
+  peak_reverse_a: 7.62,
+  ta_s: 21.8e-9,
+  trr_s: 56.7e-9,
+  qrr_c: 2.25e-7,
+  softness: 1.6,
+  rectifier_j: 1.4e-5,
+  switch_added_j: 6.5e-5,
+  base_j: 3.8e-5,
+  peak_reverse_v: 131,
+  none: null,
+}
+
+const noEvent: EventResult = {
+  ...event,
+  tau_s: null,
+  tau_rr_s: null,
+  stored_c: 0,
+  peak_reverse_a: 0,
+  ta_s: 0,
+  trr_s: 0,
+  qrr_c: 0,
+  softness: null,
+  rectifier_j: 0,
+  switch_added_j: 0,
+  none: 'no stored charge',
+}
+
+const base: CandidateResult = {
+  id: 'larch-200v-10a-soft',
+  rank: 1,
+  accepted: true,
+  reasons: [],
+  class: 'soft-ultrafast',
+  title: 'Larch 10 A 200 V soft recovery',
+  price: 0.62,
+  evidence: 'B',
+  point: { duty: 0.61, mean_a: 12.8, ripple_a: 1.95, valley_a: 11.8, peak_a: 13.8, mode: 'continuous' },
+  event,
+  event_maximum: null,
+  forward_v: 0.912,
+  losses_w: {
+    conduction: 4.56,
+    recovery_rectifier: 1.4,
+    recovery_switch: 6.49,
+    capacitive: 0.031,
+    leakage: 0.0021,
+    forward_recovery: 0,
+    total: 12.4831,
+  },
+  interval_w: { low: 9.9, high: 16.2, level: 0.9 },
+  odds_best: 0.83,
+  odds_error: 0.012,
+  thermal_lost_share: 0,
+  junction_c: 92.4,
+  junction_high_c: 104.1,
+  junction_limit_c: 125,
+  thermal: 'settled',
+  ambient_margin_k: 31,
+  voltage_margin: 0.345,
+  efficiency: 0.9612,
+  stage_loss_w: 24.22,
+  switch: { conduction_w: 3.9, turn_on_base_w: 3.8, turn_off_w: 2.4, stored_w: 0.4, junction_c: 88 },
+  inductor_w: 5.3,
+  snubber_w: 0,
+  fixed_w: 3,
+  at_mains: null,
+  line: null,
+  weighted_w: null,
+  energy_kwh_per_year: null,
+  provenance: [{ figure: 'event.qrr_c', how: 'extrapolated', from: 'recovery row 1', factor: 1.8 }],
+}
+
+const second: CandidateResult = {
+  ...base,
+  id: 'alder-200v-8a-ultrafast',
+  rank: 2,
+  class: 'ultrafast',
+  evidence: 'C',
+  event: { ...event, qrr_c: 3.1e-7, peak_reverse_a: 9.9, softness: null },
+  losses_w: { ...base.losses_w, recovery_switch: 8.29, total: 14.2831 },
+  interval_w: { low: 10.1, high: 19.8, level: 0.9 },
+  odds_best: 0.17,
+  stage_loss_w: 26.02,
+  efficiency: 0.9584,
+}
+
+const rejected: CandidateResult = {
+  ...base,
+  id: 'hazel-150v-10a-fast',
+  rank: null,
+  accepted: false,
+  reasons: [{ code: 'voltage-margin', text: '', value: 131, limit: 120 }],
+  class: 'fast',
+  evidence: 'C',
+  odds_best: 0,
+  voltage_margin: 0.127,
+  losses_w: { ...base.losses_w, recovery_switch: 18.29, total: 24.2831 },
+  stage_loss_w: 36.02,
+}
+
+const nothing = null
+const lost: CandidateResult = {
+  ...base,
+  id: 'rowan-150v-20a-schottky',
+  rank: null,
+  accepted: false,
+  reasons: [{ code: 'no-stable-temperature', text: '', value: null, limit: null }],
+  class: 'schottky',
+  evidence: 'D',
+  event: nothing,
+  forward_v: nothing,
+  losses_w: {
+    conduction: nothing,
+    recovery_rectifier: nothing,
+    recovery_switch: nothing,
+    capacitive: nothing,
+    leakage: nothing,
+    forward_recovery: nothing,
+    total: nothing,
+  },
+  interval_w: nothing,
+  odds_best: 0,
+  junction_c: nothing,
+  junction_high_c: nothing,
+  thermal: 'none',
+  ambient_margin_k: nothing,
+  voltage_margin: nothing,
+  efficiency: nothing,
+  stage_loss_w: nothing,
+  switch: {
+    conduction_w: nothing,
+    turn_on_base_w: nothing,
+    turn_off_w: nothing,
+    stored_w: nothing,
+    junction_c: nothing,
+  },
+  inductor_w: nothing,
+}
+
+const schottky: CandidateResult = { ...base, id: 'aspen-200v-10a', class: 'schottky', event: noEvent }
+
+/** Boost of three candidates and one without a stable temperature. */
+export function rankSample(): RankResult {
+  return structuredClone({
+    format: 1,
+    tool: { name: 'ebbwatt', version: '0.1.0' },
+    seed: 1,
+    draws: 1000,
+    inputs: [{ path: 'pump.yaml', sha256: '0'.repeat(64) }],
+    stage: {
+      kind: 'boost',
+      title: 'Orchard pump drive, input stage',
+      frequency_hz: 1e5,
+      input_v: 48,
+      output_v: 120,
+      output_w: 600,
+      blocking_v: 120,
+      mode: 'continuous',
+      slope_a_per_s: 3.5e8,
+      loss_model: 'charge control; voltage moves after the peak',
+      assumed: [{ path: 'switch.voltage_fall', value: '20 ns' }],
+    },
+    candidates: [base, second, rejected, lost],
+    verdict: {
+      best: base.id,
+      decided: false,
+      tied: [second.id],
+      runner_up: second.id,
+      gap_w: 1.8,
+      gap_low_w: -0.6,
+      gap_high_w: 3.1,
+      text: '',
+      sensitivity: [
+        { input: 'recovery of alder-200v-8a-ultrafast', share: 0.61 },
+        { input: 'recovery of larch-200v-10a-soft', share: 0.28 },
+      ],
+      measure_next: [
+        { id: second.id, property: 'recovery', current_a: 11.8, slope_a_per_s: 3.5e8, junction_c: 92.4, share: 0.55 },
+      ],
+    },
+    warnings: [
+      { code: 'typical-only', candidate: base.id, text: '', data: {} },
+      { code: 'typical-only', candidate: second.id, text: '', data: {} },
+      { code: 'softness-unknown', candidate: second.id, text: '', data: {} },
+      { code: 'overshoot-not-included', candidate: '', text: '', data: {} },
+    ],
+    cautions: [
+      { code: 'lethal-voltage', text: '', data: { voltage: 120 } },
+      { code: 'qualified-persons', text: '', data: {} },
+      {
+        code: 'bulk-capacitor',
+        text: '',
+        data: { capacitance: 470e-6, voltage: 120, bleeder: 10e3, time: 3.26, energy: 3.384 },
+      },
+      { code: 'isolated-probing', text: '', data: {} },
+      { code: 'fuse-and-insulation', text: '', data: {} },
+      { code: 'estimate-only', text: '', data: {} },
+    ],
+    not_covered: ['loss-feedback', 'electromagnetic-noise'],
+  } satisfies RankResult)
+}
+
+export { base as acceptedCandidate, schottky as schottkyCandidate }
