@@ -1,4 +1,4 @@
-import type { Reason, ThermalOutcome } from '../domain/result.ts'
+import type { ThermalOutcome } from '../domain/result.ts'
 
 /** Why a part is rejected. */
 export type RejectionCode =
@@ -10,7 +10,14 @@ export type RejectionCode =
   | 'runaway-at-maximum-leakage'
   | 'recovery-too-slow'
 
-/** Inputs of {@link acceptanceReasons}: each the worst over all mains voltages looked at. */
+/** One reason with the figure that broke the rule, SI; null where there is no figure. */
+export interface Rejection {
+  readonly code: RejectionCode
+  readonly value: number | null
+  readonly limit: number | null
+}
+
+/** Inputs of {@link judgeCandidate}: each the worst over all mains voltages looked at. */
 export interface AcceptanceInput {
   /** Highest reverse voltage with overshoot. [V] */
   readonly peakReverseVoltage: number
@@ -32,7 +39,7 @@ export interface AcceptanceInput {
   /** A stable temperature exists at maximum leakage; null where it does not apply (body diodes). */
   readonly settledAtMaximumLeakage: boolean | null
   /** Time the recovery takes and the interval it has; null without recovery. [s] */
-  readonly recovery: { readonly needed: number; readonly available: number } | null
+  readonly recovery: { readonly value: number; readonly limit: number } | null
 }
 
 /** A figure equal to its limit passes, also when rounding puts it a hair above. */
@@ -44,36 +51,31 @@ const rounding = 1e-9
  * Peak reverse voltage ≤ use × rating; mean current ≤ rating × parts; a heat path; a stable temperature; junction ≤
  * limit; stable at maximum leakage too; the recovery ends within its interval.
  *
- * @returns Reasons with the figure that broke the rule, SI, null where there is none; their texts are written later.
  * @throws Never.
  */
-export function acceptanceReasons(input: AcceptanceInput): Reason[] {
+export function judgeCandidate(input: AcceptanceInput): Rejection[] {
   const { recovery } = input
   return [
     ...above('voltage-margin', input.peakReverseVoltage, input.voltageUse * input.reverseVoltage),
     ...above('average-current', input.meanCurrent, input.averageCurrent * input.parts),
     ...judgeHeat(input),
-    ...(recovery ? above('recovery-too-slow', recovery.needed, recovery.available) : []),
+    ...(recovery ? above('recovery-too-slow', recovery.value, recovery.limit) : []),
   ]
 }
 
-function judgeHeat(input: AcceptanceInput): Reason[] {
+function judgeHeat(input: AcceptanceInput): Rejection[] {
   const { thermal, junction, junctionLimit: limit } = input
-  if (thermal === 'path-missing') return [reason('thermal-path-missing', null, null)]
+  if (thermal === 'path-missing') return [{ code: 'thermal-path-missing', value: null, limit: null }]
   // Without a temperature at the expected leakage there is none at the maximum either: one reason says it.
-  if (thermal === 'none' || junction === null) return [reason('no-stable-temperature', null, limit)]
-  const over = 'junction-over-limit'
-  const reasons = thermal === 'over-limit' ? [reason(over, junction, limit)] : above(over, junction, limit)
+  if (thermal === 'none' || junction === null) return [{ code: 'no-stable-temperature', value: null, limit }]
+  const over: Rejection = { code: 'junction-over-limit', value: junction, limit }
+  const reasons = thermal === 'over-limit' ? [over] : above(over.code, junction, limit)
   if (input.settledAtMaximumLeakage === false) {
-    reasons.push(reason('runaway-at-maximum-leakage', null, null))
+    reasons.push({ code: 'runaway-at-maximum-leakage', value: null, limit: null })
   }
   return reasons
 }
 
-function above(code: RejectionCode, value: number, limit: number): Reason[] {
-  return value <= limit * (1 + rounding) ? [] : [reason(code, value, limit)]
-}
-
-function reason(code: RejectionCode, value: number | null, limit: number | null): Reason {
-  return { code, text: '', value, limit }
+function above(code: RejectionCode, value: number, limit: number): Rejection[] {
+  return value <= limit * (1 + rounding) ? [] : [{ code, value, limit }]
 }
