@@ -1,13 +1,19 @@
 /** Inputs of the sharing functions. */
 export interface ParallelSharingInput {
-  /** Number of equal parts. */
+  /** n, number of equal parts. */
   readonly parts: number
-  /** How much more than its equal share the hottest part carries. [1] */
+  /** x, how much more than its equal share the hottest part carries. [1] */
   readonly imbalance: number
 }
 
 /**
- * Share of the part that carries most.
+ * Share of current and slope of the part that carries most.
+ *
+ * Equation: (1 + x)/n, at most 1; a single part carries all. Valid for: n ≥ 1, x ≥ 0. Deviations: none.
+ *
+ * @returns Share of the whole. [1]
+ * @throws Never.
+ * @see Own definition of imbalance.
  * @example hottestShare({ parts: 2, imbalance: 0.1 }) // 0.550000
  */
 export function hottestShare(input: ParallelSharingInput): number {
@@ -15,7 +21,13 @@ export function hottestShare(input: ParallelSharingInput): number {
 }
 
 /**
- * Share of each of the others; 0 where there are none.
+ * Share of each of the other parts, which divide the rest equally.
+ *
+ * Equation: (1 − (1 + x)/n)/(n − 1); 0 where there is no other part. Valid for: n ≥ 1, x ≥ 0. Deviations: none.
+ *
+ * @returns Share of the whole. [1]
+ * @throws Never.
+ * @see Own definition of imbalance.
  * @example otherShare({ parts: 3, imbalance: 0.2 }) // 0.300000
  */
 export function otherShare(input: ParallelSharingInput): number {
