@@ -1,0 +1,124 @@
+import { type FigureName, factorOf, type RampReading } from './recovery-figures.ts'
+
+/** The figures of one ramp row; null where it does not state them. */
+export type RampFigures = Readonly<Record<FigureName, number | null>>
+
+/** A point of the recovery model: u = ln tau, y = ln(tau/tau_rr − 1). */
+export interface RecoveryPoint {
+  readonly lifetime: number
+  readonly ratio: number
+}
+
+/**
+ * Lifetime and tail time from two figures of one row.
+ *
+ * The pair gives ta and tau_rr in closed form (by search for an absolute level); tau is then the unique root of
+ * ta = (tau − tau_rr)(1 − exp(−(I/a + ta)/tau)). Null for an impossible pair.
+ */
+export function invertPair(
+  reading: RampReading,
+  figures: RampFigures,
+  first: FigureName,
+  second: FigureName,
+): RecoveryPoint | null {
+  const time = peakTime(reading, figures, first, second)
+  if (time === null || !(time > 0)) return null
+  const tail = tailOf(reading, figures, first, second, time)
+  if (!(tail > 0) || !Number.isFinite(tail)) return null
+  const lifetime = lifetimeOf(reading.current / reading.slope, time, tail)
+  return { lifetime: Math.log(lifetime), ratio: Math.log((lifetime - tail) / tail) }
+}
+
+/** ta from a pair; null where none exists. */
+function peakTime(reading: RampReading, figures: RampFigures, first: FigureName, second: FigureName): number | null {
+  const { peakReverseCurrent, recoveryTime, charge, softness } = figures
+  const has = (name: FigureName) => first === name || second === name
+  if (has('peakReverseCurrent')) return peakReverseCurrent! / reading.slope
+  if (has('recoveryTime') && has('softness') && reading.softnessBy === 'times') return recoveryTime! / (1 + softness!)
+  const area = charge === null ? 0 : charge / reading.slope
+  if (reading.recoveryTimeBy.kind === 'level')
+    return searchPeakTime(reading, figures, has('charge') ? 'charge' : 'recoveryTime', has('softness'))
+  const factor = factorOf(reading, 1)
+  if (has('softness')) {
+    const tailShare = softness! / (reading.softnessBy === 'slopes' ? 1 : factor)
+    return has('charge') ? Math.sqrt(area / (0.5 + tailShare)) : recoveryTime! / (1 + factor * tailShare)
+  }
+  // ta (ta/2 + (trr − ta)/k) = Qrr/a: the root that stays finite where the square term vanishes (k = 2)
+  const square = 0.5 - 1 / factor
+  const straight = recoveryTime! / factor
+  const discriminant = straight * straight + 4 * square * area
+  return discriminant < 0 ? null : (2 * area) / (straight + Math.sqrt(discriminant))
+}
+
+/** tau_rr that goes with ta. */
+function tailOf(
+  reading: RampReading,
+  figures: RampFigures,
+  first: FigureName,
+  second: FigureName,
+  time: number,
+): number {
+  const other = first === 'peakReverseCurrent' ? second : second === 'peakReverseCurrent' ? first : null
+  const name = other ?? (first === 'softness' || second === 'softness' ? 'softness' : 'recoveryTime')
+  return tailBy(reading, figures, name, time)
+}
+
+function tailBy(reading: RampReading, figures: RampFigures, name: FigureName, time: number): number {
+  if (name === 'charge') return figures.charge! / (reading.slope * time) - 0.5 * time
+  if (name === 'recoveryTime') return (figures.recoveryTime! - time) / factorOf(reading, time)
+  return (figures.softness! * time) / (reading.softnessBy === 'slopes' ? 1 : factorOf(reading, time))
+}
+
+/** ta where trr ends at an absolute level: the factor depends on the peak, so the longest fitting ta is searched for. */
+function searchPeakTime(
+  reading: RampReading,
+  figures: RampFigures,
+  target: 'charge' | 'recoveryTime',
+  soft: boolean,
+): number | null {
+  const least = reading.recoveryTimeBy.kind === 'level' ? reading.recoveryTimeBy.until / reading.slope : 0
+  const longest = figures.recoveryTime ?? Math.sqrt((2 * figures.charge!) / reading.slope)
+  const surplus = (time: number) => {
+    const tail = tailBy(reading, figures, soft ? 'softness' : 'recoveryTime', time)
+    if (target === 'charge') return reading.slope * time * (0.5 * time + tail) - figures.charge!
+    return time + factorOf(reading, time) * tail - figures.recoveryTime!
+  }
+  if (!(least < longest)) return null
+  return lastCrossing(surplus, least, longest)
+}
+
+/** The highest zero at which a function rises through 0, on a logarithmic grid refined by halving. */
+function lastCrossing(surplus: (time: number) => number, least: number, longest: number): number | null {
+  const steps = 96
+  const at = (index: number) => longest * ((Math.max(least, longest * 1e-9) * (1 + 1e-9)) / longest) ** (index / steps)
+  for (let index = 0; index < steps; index++) {
+    let high = at(index)
+    let low = at(index + 1)
+    if (!(surplus(high) >= 0 && surplus(low) < 0)) continue
+    for (let halving = 0; halving < 60; halving++) {
+      const middle = 0.5 * (low + high)
+      if (surplus(middle) < 0) low = middle
+      else high = middle
+    }
+    return 0.5 * (low + high)
+  }
+  return null
+}
+
+/**
+ * tau from ta and tau_rr. The right-hand side is concave and rising in tau, so Newton's steps from tau_rr + ta, which is
+ * too short, approach the root from one side and cannot overshoot.
+ */
+export function lifetimeOf(crossing: number, time: number, tail: number): number {
+  const end = crossing + time
+  let lifetime = tail + time
+  for (let iteration = 0; iteration < 80; iteration++) {
+    const x = end / lifetime
+    const gone = -Math.expm1(-x)
+    const rise = gone - ((lifetime - tail) * (1 - gone) * x) / lifetime
+    const step = (time - (lifetime - tail) * gone) / rise
+    lifetime += step
+    if (!(Math.abs(step) > 4e-16 * lifetime)) break
+  }
+  return lifetime
+}
