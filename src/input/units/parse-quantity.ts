@@ -1,0 +1,124 @@
+import { didYouMean } from '../../problems/nearest.ts'
+import type { ProblemCode } from '../../problems/problem.ts'
+import { foldSigns } from './fold-signs.ts'
+import { type QuantityKindName, type QuantityRule, quantityKinds, wantedQuantity } from './quantity-kinds.ts'
+import { convertUnit, dimensionOf, type UnitConversion } from './unit-class.ts'
+
+/** Why a text is not the quantity that is wanted. */
+export interface QuantityRefusal {
+  readonly refused: true
+  readonly code: ProblemCode
+  readonly expected: string
+  readonly hint: string
+}
+
+/** Sign, digits with at most one point, exponent. Each character is looked at once. */
+const number = /^[+-]?(?:\d+(?:\.\d*)?|\.\d+)(?:[eE][+-]?\d+)?/
+const longestText = 80
+/** Beyond these magnitudes a product of a few quantities would leave the range of doubles. */
+const largest = 1e40
+const smallest = 1e-40
+
+/**
+ * Reads "35 ns", "100 A/µs", "25 °C", "80 %" into the unit of the kind: SI, kelvin, hours for `hours`, 1 for `share`.
+ * A number is never guessed at: without a unit, with a decimal comma or in another dimension it is refused.
+ */
+export function parseQuantity(text: string, rule: QuantityRule): number | QuantityRefusal {
+  const { kind, sign } = rule
+  const folded = foldSigns(text).trim()
+  const digits = folded.length > longestText ? undefined : number.exec(folded)?.[0]
+  if (digits === undefined) return refuse('number-malformed', kind, folded.startsWith(',') ? commaHint : '')
+  const unitText = folded.slice(digits.length).trim()
+  const malformed = malformedRest(folded.slice(digits.length), kind)
+  if (malformed !== null) return malformed
+  const conversion = conversionOf(unitText, kind)
+  if ('refused' in conversion) return conversion
+  return checked(Number(digits), scaled(Number(digits), conversion), kind, sign)
+}
+
+const commaHint = 'write the decimals after a point and leave out thousands separators'
+
+function malformedRest(rest: string, kind: QuantityKindName): QuantityRefusal | null {
+  if (/^\s*$/.test(rest)) return refuse('unit-missing', kind, '')
+  if (/^\s*,\s*\d/.test(rest)) return { refused: true, code: 'number-decimal-comma', expected: wantedQuantity(kind), hint: commaHint }
+  if (/^\s+\d(?!\s*\/)/.test(rest) && !/^\s+1\s*\//.test(rest)) return refuse('number-malformed', kind, 'one number without spaces in it')
+  if (/^\s*[.,\d]/.test(rest) && !/^\s+1\s*\//.test(rest)) return refuse('number-malformed', kind, '')
+  return null
+}
+
+function refuse(code: ProblemCode, kind: QuantityKindName, hint: string): QuantityRefusal {
+  return { refused: true, code, expected: wantedQuantity(kind), hint }
+}
+
+interface Scale extends UnitConversion {
+  /** Set for units that are a whole power of ten smaller: dividing by it rounds once, so "90 nC" is 9e-8. */
+  readonly divisor: number
+}
+
+function scaled(value: number, { factor, offset, divisor }: Scale): number {
+  return (divisor === 1 ? value * factor : value / divisor) + offset
+}
+
+function checked(typed: number, value: number, kind: QuantityKindName, sign: QuantityRule['sign']): number | QuantityRefusal {
+  if (!Number.isFinite(value)) return refuse('number-not-finite', kind, '')
+  if (kind === 'temperature' && value <= 0) {
+    return { refused: true, code: 'number-out-of-range', expected: 'a temperature above absolute zero, -273.15 degC', hint: '' }
+  }
+  const magnitude = Math.abs(value)
+  if (magnitude > largest || (magnitude < smallest && (magnitude > 0 || typed !== 0))) {
+    return { refused: true, code: 'number-out-of-range', expected: 'magnitudes from 1e-40 to 1e40', hint: 'check the unit' }
+  }
+  if (value < 0 && sign !== 'any') return refuse('number-negative', kind, '')
+  if (value === 0 && sign === 'positive') return refuse('number-zero', kind, '')
+  return value === 0 ? 0 : value
+}
+
+/** mathjs is asked once for each distinct text of a unit; the bound keeps hostile files from filling the memory. */
+const known = new Map<string, Scale | QuantityRefusal>()
+const mostKnown = 4096
+
+function conversionOf(unitText: string, kind: QuantityKindName): Scale | QuantityRefusal {
+  const key = `${kind} ${unitText}`
+  const remembered = known.get(key)
+  if (remembered !== undefined) return remembered
+  if (known.size >= mostKnown) known.clear()
+  const conversion = findConversion(unitText, kind)
+  known.set(key, conversion)
+  return conversion
+}
+
+function findConversion(unitText: string, kind: QuantityKindName): Scale | QuantityRefusal {
+  const { target } = quantityKinds[kind]
+  const percent = unitText.startsWith('%')
+  const rest = (percent ? unitText.slice(1) : unitText).trim().replace(/^1\s*\//, '/')
+  if (rest === '') return target === '' ? asScale(0.01, 0) : otherDimension(unitText, 'a plain ratio', kind)
+  if (target === '') {
+    const conversion = convertUnit(rest, 'V')
+    return 'refused' in conversion && conversion.refused === 'unknown'
+      ? unknownUnit(unitText, kind)
+      : otherDimension(unitText, nameOfDimension(dimensionOf(rest)), kind)
+  }
+  const conversion = convertUnit(rest, target)
+  if (!('refused' in conversion)) return asScale(conversion.factor * (percent ? 0.01 : 1), conversion.offset)
+  if (conversion.refused === 'unknown') return unknownUnit(unitText, kind)
+  return otherDimension(unitText, nameOfDimension(conversion.dimension), kind)
+}
+
+function asScale(factor: number, offset: number): Scale {
+  const inverse = Math.round(1 / factor)
+  const powerOfTen = factor < 1 && 10 ** Math.round(Math.log10(inverse)) === inverse && Math.abs(inverse * factor - 1) < 1e-12
+  return { factor, offset, divisor: powerOfTen ? inverse : 1 }
+}
+
+function unknownUnit(unitText: string, kind: QuantityKindName): QuantityRefusal {
+  return refuse('unit-unknown', kind, didYouMean(unitText, quantityKinds[kind].units))
+}
+
+function otherDimension(unitText: string, found: string, kind: QuantityKindName): QuantityRefusal {
+  return refuse('unit-dimension', kind, `"${unitText}" makes it ${found}`)
+}
+
+function nameOfDimension(dimension: string): string {
+  const kind = Object.values(quantityKinds).find(({ target }) => target !== '' && dimensionOf(target) === dimension)
+  return kind?.name ?? 'a quantity of another kind'
+}

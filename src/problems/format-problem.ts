@@ -1,0 +1,40 @@
+import type { Problem } from './problem.ts'
+import { problemSentence } from './words.ts'
+
+/**
+ * A problem as a person reads it: `file:line:column  code  path: sentence`, then the source line with a caret
+ * under what was found, when the text is at hand.
+ */
+export function formatProblem(problem: Problem, sourceText: string | null = null): string {
+  const head = `${place(problem)}  ${problem.code}  ${problem.path === '' ? '' : `${problem.path}: `}${problemSentence(problem)}`
+  const line = sourceText === null ? undefined : sourceLine(sourceText, problem.line)
+  return line === undefined || line.trim() === '' ? head : `${head}\n${pointed(line, problem)}`
+}
+
+function place({ file, line, column }: Problem): string {
+  return line === 0 ? file : `${file}:${line}:${column}`
+}
+
+function sourceLine(text: string, line: number): string | undefined {
+  let start = 0
+  for (let skipped = 1; skipped < line; skipped++) {
+    start = text.indexOf('\n', start) + 1
+    if (start === 0) return undefined
+  }
+  if (line < 1) return undefined
+  const end = text.indexOf('\n', start)
+  return text.slice(start, end === -1 ? undefined : end).replace(/\r$/, '')
+}
+
+const widest = 120
+
+/** The line and the caret line; a long line is cut to a window around the column. */
+function pointed(line: string, { column, found }: Problem): string {
+  const start = Math.max(0, column - 1)
+  const from = start > widest - 30 ? start - 30 : 0
+  const shown = line.slice(from, from + widest).replace(/[\p{Cc}\p{Cf}\p{Cs}]/gu, ' ')
+  const rest = line.slice(start)
+  const length = [found, `"${found}"`, `'${found}'`].find((text) => text !== '' && rest.startsWith(text))?.length ?? 1
+  const room = Math.max(1, shown.length - (start - from))
+  return `    ${shown}\n    ${' '.repeat(Math.min(start - from, shown.length))}${'^'.repeat(Math.min(length, room))}`
+}
