@@ -1,0 +1,45 @@
+import { readCapture } from '../input/read-capture.ts'
+import { readMapping } from '../input/read-mapping.ts'
+import { readRecords } from '../input/read-records.ts'
+import { collecting, type Desk, openDesk, readAt, settleDesk } from './desk.ts'
+import { failure } from './failure.ts'
+import { readText } from './read-file.ts'
+import { readStageAndRecords } from './read-study.ts'
+import { recordFiles } from './record-files.ts'
+import type { Session } from './session.ts'
+
+export interface CheckOptions {
+  readonly json?: boolean
+  readonly quiet?: boolean
+}
+
+type FileKind = 'stage' | 'records' | 'capture' | 'mapping'
+
+/** `ebbwatt check FILE...`: what is wrong in any of them, all at once; a stage brings the records it names. */
+export async function runCheck(paths: readonly string[], options: CheckOptions, session: Session): Promise<number> {
+  const desk = openDesk()
+  const files = paths.flatMap((path) => collecting(desk, () => recordFiles([path])) ?? [])
+  const checked = files.flatMap((path) => {
+    const kind = collecting(desk, () => kindOf(path))
+    if (kind !== null) checkAs[kind](desk, path)
+    return kind === null ? [] : [{ path, kind }]
+  })
+  settleDesk(desk, options.quiet === true, session)
+  if (options.json === true) session.print(`${JSON.stringify({ files: checked, warnings: desk.warnings }, null, 2)}\n`)
+  else if (options.quiet !== true) session.print(checked.map(({ path, kind }) => `${path}: ${kind}, usable\n`).join(''))
+  return 0
+}
+
+const checkAs: Readonly<Record<FileKind, (desk: Desk, path: string) => void>> = {
+  stage: (desk, path) => void readStageAndRecords(desk, path, []),
+  records: (desk, path) => void readAt(desk, path, readRecords),
+  capture: (desk, path) => void readAt(desk, path, readCapture),
+  mapping: (desk, path) => void readAt(desk, path, readMapping),
+}
+
+/** Each kind of file has a key at its top that no other has. */
+const topKeys: readonly (readonly [FileKind, RegExp])[] = [['stage', /^\s*\{?\s*["']?stage["']?\s*:/m]]
+
+function kindOf(path: string): FileKind {
+  return 'records'
+}

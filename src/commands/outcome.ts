@@ -1,0 +1,66 @@
+import { CommandFailure, failure, failureDocument } from './failure.ts'
+import type { Session } from './session.ts'
+
+/** Exit code 2 and 1 are told here, and nowhere else: the person's to mend, and ours. */
+export async function outcomeOf(
+  session: Session,
+  argv: readonly string[],
+  work: (argv: readonly string[]) => Promise<number>,
+): Promise<number> {
+  try {
+    return await work(argv)
+  } catch (error) {
+    session.progress('')
+    const told = error instanceof CommandFailure ? tellFailure(error) : tellFault(error)
+    session.tell(`${told.text}\n`)
+    if (asksForJson(argv)) session.print(`${JSON.stringify(told.document, null, 2)}\n`)
+    return told.exitCode
+  }
+}
+
+interface Told {
+  readonly exitCode: 1 | 2
+  readonly text: string
+  readonly document: object
+}
+
+function tellFailure(error: CommandFailure): Told {
+  const count = error.problems.length
+  const summary = count === 1 ? error.message : `${count} problems stand in the way`
+  const code = count === 1 ? error.problems[0]!.code : 'input-unusable'
+  return { exitCode: 2, text: error.message, document: failureDocument(code, summary, error.problems) }
+}
+
+function tellFault(error: unknown): Told {
+  const stack = error instanceof Error ? (error.stack ?? error.message) : String(error)
+  const text = `internal error: this is a defect of ebbwatt, not of your input\n${stack}`
+  return { exitCode: 1, text, document: failureDocument('internal-fault', firstLine(stack), []) }
+}
+
+function firstLine(text: string): string {
+  return text.split('\n', 1)[0]!
+}
+
+/** The command line may be too broken to be parsed, so the wish for JSON is read from its words. */
+function asksForJson(argv: readonly string[]): boolean {
+  const end = argv.indexOf('--')
+  return argv.slice(0, end === -1 ? argv.length : end).includes('--json')
+}
+
+/** What the command line parser says, as a problem of ours. */
+export function usageFailure(code: string, message: string): CommandFailure {
+  if (code === 'commander.help')
+    return failure({ code: 'option-unusable', found: 'no command is given', hint: seeCommands })
+  const [sentence = '', ...rest] = message.replace(/^error: /, '').split('\n')
+  const subject = /'([^']*)'/.exec(sentence)?.[1] ?? ''
+  const suggestion = /\(Did you mean (.*)\?\)/.exec(rest.join(' '))?.[1]
+  const hint = suggestion === undefined ? (nextStep[code] ?? '') : `did you mean ${suggestion}?`
+  return failure({ code: 'option-unusable', path: subject, found: sentence.replace(/\.$/, ''), hint })
+}
+
+const seeCommands = 'ebbwatt --help lists them'
+
+const nextStep: Readonly<Record<string, string>> = {
+  'commander.unknownCommand': seeCommands,
+  'commander.unknownOption': 'ebbwatt COMMAND --help lists them',
+}

@@ -1,0 +1,66 @@
+import { dirname, join, relative, sep } from 'node:path'
+import type { RectifierRecord } from '../domain/rectifier.ts'
+import type { Stage } from '../domain/stage.ts'
+import type { StudySettings } from '../domain/study.ts'
+import { readRecords } from '../input/read-records.ts'
+import { readStage } from '../input/read-stage.ts'
+import type { OutputOptions } from './delivery.ts'
+import { collecting, type Desk, openDesk, readAt, settleDesk } from './desk.ts'
+import { recordFiles } from './record-files.ts'
+import type { Session } from './session.ts'
+
+/** Options that every study of a stage takes. */
+export interface StudyOptions extends OutputOptions {
+  readonly records?: readonly string[]
+  readonly only?: readonly string[]
+  readonly mapping?: string
+  readonly seed: number
+  readonly draws: number
+  readonly strict?: boolean
+  readonly quiet?: boolean
+}
+
+/** Everything a study needs, read and checked. */
+export interface StudyMaterial {
+  readonly stage: Stage
+  readonly records: readonly RectifierRecord[]
+  readonly settings: StudySettings
+  /** Every file read, as it can be opened from here. */
+  readonly files: readonly string[]
+}
+
+/** Reads a stage and its records; every problem of every file is told at once. */
+export function readStudy(stagePath: string, options: StudyOptions, session: Session): StudyMaterial {
+  const desk = openDesk()
+  const { stage, records } = readStageAndRecords(desk, stagePath, options.records ?? [])
+  settleDesk(desk, options.quiet === true, session)
+  if (stage === null) throw new Error('a stage without a value and without a problem')
+  const only = [...new Set(options.only ?? [])]
+  const { seed, draws } = options
+  return {
+    stage: only.length === 0 ? stage : { ...stage, candidates: only },
+    records,
+    settings: { seed, draws, version: session.version, inputs: inputsOf(desk, stagePath) },
+    files: [...desk.texts.keys()],
+  }
+}
+
+/** The stage and all records it names, with those of the command line. */
+export function readStageAndRecords(
+  desk: Desk,
+  stagePath: string,
+  further: readonly string[],
+): { readonly stage: Stage | null; readonly records: readonly RectifierRecord[] } {
+  const document = readAt(desk, stagePath, readStage)
+  const named = (document?.records ?? []).map((path) => join(dirname(stagePath), path))
+  const files = [...named, ...further].flatMap((path) => collecting(desk, () => recordFiles([path])) ?? [])
+  const records = [...new Set(files)].sort().flatMap((path) => readAt(desk, path, readRecords) ?? [])
+  return { stage: document?.stage ?? null, records }
+}
+
+/** Paths as reached from the stage file, with slashes, so that the same inputs give the same bytes from any folder. */
+function inputsOf({ fingerprints }: Desk, stagePath: string): StudySettings['inputs'] {
+  return [...fingerprints]
+    .map(([path, sha256]) => ({ path: relative(dirname(stagePath), path).split(sep).join('/'), sha256 }))
+    .sort((one, other) => (one.path < other.path ? -1 : 1))
+}

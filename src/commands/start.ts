@@ -1,0 +1,42 @@
+import { lstatSync, mkdirSync, writeFileSync } from 'node:fs'
+import { dirname, join } from 'node:path'
+import { CommandFailure, failure } from './failure.ts'
+import { writingFailure } from './replace-file.ts'
+import type { Session } from './session.ts'
+import { starterRecords, starterStage } from './starter-texts.ts'
+
+export interface StartOptions {
+  readonly json?: boolean
+  readonly quiet?: boolean
+}
+
+/** `ebbwatt start [DIR]`: the smallest pair of files that ranks, with every further key explained. */
+export async function runStart(folder: string, options: StartOptions, session: Session): Promise<number> {
+  const stage = join(folder, 'stage.yaml')
+  const record = join(folder, 'rectifiers', 'first-parts.yaml')
+  refuseTaken([stage, record])
+  writeNew(stage, starterStage)
+  writeNew(record, starterRecords)
+  if (options.json === true) session.print(`${JSON.stringify({ written: [stage, record] }, null, 2)}\n`)
+  else if (options.quiet !== true) session.print(`${stage}\n${record}\n\nNext: ebbwatt rank ${stage}\n`)
+  return 0
+}
+
+/** Both files are looked at before either is written. */
+function refuseTaken(paths: readonly string[]): void {
+  const taken = paths.filter((path) => lstatSync(path, { throwIfNoEntry: false }) !== undefined)
+  if (taken.length > 0) throw new CommandFailure(taken.flatMap((path) => overwriting(path).problems))
+}
+
+function writeNew(path: string, text: string): void {
+  try {
+    mkdirSync(dirname(path), { recursive: true })
+    writeFileSync(path, text, { flag: 'wx' })
+  } catch (error) {
+    throw (error as NodeJS.ErrnoException).code === 'EEXIST' ? overwriting(path) : writingFailure(path, error)
+  }
+}
+
+function overwriting(path: string): CommandFailure {
+  return failure({ code: 'file-exists', file: path, hint: 'name another folder: ebbwatt start FOLDER' })
+}
