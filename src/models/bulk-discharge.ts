@@ -20,7 +20,7 @@ export interface BulkDischargeInput {
  * @returns Time. [s]
  * @throws RangeError when the end voltage is not positive: it is never reached.
  * @see Exponential discharge.
- * @example bulkDischargeTime({ resistance: 10e3, capacitance: 470e-6, from: 400, to: 60 }) // 8.91636
+ * @example bulkDischargeTime({ resistance: 10e3, capacitance: 470e-6, from: 400, to: 60 }) // 8.91646
  */
 export function bulkDischargeTime(input: BulkDischargeInput): number {
   if (!(input.to > 0)) throw meaningless('bulkDischargeTime', 'to', input.to)

@@ -58,7 +58,7 @@ export interface ForwardRangeInput extends ForwardCurve {
  * @returns Mean power over the conduction interval; its share of the period is the caller's. [W]
  * @throws Never.
  * @see Own integration; checked against quadrature.
- * @example trapezoidConductionPower({ constant: 1, logarithmic: 0.045, linear: 0.3, ratedCurrent: 8, line: false, valley: 4, peak: 8 }) // 7.65911
+ * @example trapezoidConductionPower({ constant: 1, logarithmic: 0.045, linear: 0.3, ratedCurrent: 8, line: false, valley: 4, peak: 8 }) // 7.32738
  */
 export function trapezoidConductionPower(input: ForwardRangeInput): number {
   const rated = input.ratedCurrent
@@ -105,7 +105,7 @@ export function forwardDropUsable(input: ForwardRangeInput): boolean {
  * @returns Mean power over the conduction interval. [W]
  * @throws Never.
  * @see Own rule.
- * @example chordConductionPower({ constant: 1, logarithmic: 0.045, linear: 0.3, ratedCurrent: 8, line: false, valley: 4, peak: 8 }) // 7.31270
+ * @example chordConductionPower({ constant: 1, logarithmic: 0.045, linear: 0.3, ratedCurrent: 8, line: false, valley: 4, peak: 8 }) // 7.31682
  */
 export function chordConductionPower(input: ForwardRangeInput): number {
   const { valley, peak, ratedCurrent } = input

@@ -24,7 +24,7 @@ const assumedGrading = 0.5
  * @returns C0 [F], Vj [V], m [1].
  * @throws Never.
  * @see Abrupt-junction law, common practice.
- * @example capacitanceLaw({ kind: 'charge', charge: 20e-9, voltage: 400 }, 1).zeroBias // 5.84803e-10
+ * @example capacitanceLaw({ kind: 'charge', charge: 20e-9, voltage: 400 }, 1).zeroBias // 5.84576e-10
  */
 export function capacitanceLaw(capacitance: JunctionCapacitance, parts: number): CapacitanceLaw {
   if (capacitance.kind === 'law') return { ...capacitance, zeroBias: capacitance.zeroBias * parts }
@@ -43,7 +43,7 @@ export function capacitanceLaw(capacitance: JunctionCapacitance, parts: number):
  * @returns C. [F]
  * @throws Never.
  * @see Depletion-layer law, common practice.
- * @example capacitanceAt({ capacitance: { kind: 'law', zeroBias: 400e-12, builtIn: 1.2, grading: 0.46 }, voltage: 400 }) // 2.75608e-11
+ * @example capacitanceAt({ capacitance: { kind: 'law', zeroBias: 400e-12, builtIn: 1.2, grading: 0.46 }, voltage: 400 }) // 2.76018e-11
  */
 export function capacitanceAt(input: JunctionCapacitanceInput): number {
   const { zeroBias, builtIn, grading } = capacitanceLaw(input.capacitance, 1)

@@ -26,7 +26,7 @@ export interface LeakageCurrentInput {
  * @returns I_R. [A]
  * @throws Never.
  * @see Arrhenius form of thermionic and generation current, common practice.
- * @example leakageCurrent({ logarithm: Math.log(50e-6), activation: 0.7 / 8.617333e-5, exponent: 1, voltage: 50, ratedVoltage: 100, temperature: 398.15, referenceTemperature: 298.15 }) // 0.0234735
+ * @example leakageCurrent({ logarithm: Math.log(50e-6), activation: 0.7 / 8.617333e-5, exponent: 1, voltage: 50, ratedVoltage: 100, temperature: 398.15, referenceTemperature: 298.15 }) // 0.0234313
  */
 export function leakageCurrent(input: LeakageCurrentInput): number {
   if (!(input.voltage > 0)) return 0
@@ -111,7 +111,7 @@ export interface LeakageCriticalInput {
  * @returns Critical junction temperature. [K]
  * @throws Never.
  * @see A note on Schottky runaway, 2008.
- * @example leakageCriticalTemperature({ voltage: 11, current: 1e-4, referenceTemperature: 298.15, coefficient: Math.log(100) / 60, thermalResistance: 25 }) // 378.416
+ * @example leakageCriticalTemperature({ voltage: 11, current: 1e-4, referenceTemperature: 298.15, coefficient: Math.log(100) / 60, thermalResistance: 25 }) // 378.417
  */
 export function leakageCriticalTemperature(input: LeakageCriticalInput): number {
   const { voltage, current, referenceTemperature, coefficient, thermalResistance } = input

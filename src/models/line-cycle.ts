@@ -30,7 +30,7 @@ export function mainsBoostRectifierMean(input: MainsBoostInput): number {
  * @returns Root mean square over the line cycle, switching included. [A]
  * @throws Never.
  * @see R. W. Erickson & D. Maksimovic, Fundamentals of Power Electronics, table 18.3, from memory; equal to integration.
- * @example mainsBoostRectifierRms({ power: 1200, mainsVoltage: 85, outputVoltage: 400 }) // 7.13034
+ * @example mainsBoostRectifierRms({ power: 1200, mainsVoltage: 85, outputVoltage: 400 }) // 7.13031
  */
 export function mainsBoostRectifierRms(input: MainsBoostInput): number {
   const peak = Math.SQRT2 * input.mainsVoltage

@@ -15,7 +15,16 @@ export interface FoundRoot {
   readonly residual: number
 }
 
-/** Root between two ends of opposite sign by Brent's method; null without a change of sign. */
+/**
+ * Root between two ends of opposite sign: inverse quadratic interpolation or a secant step where they help, else bisection.
+ *
+ * Valid for: continuous f. Longer than a model because the three points are kept in plain variables.
+ *
+ * @returns Root, iterations and residual; null without a change of sign. At the limit of iterations the best point so far.
+ * @throws Never.
+ * @see R. P. Brent, Algorithms for Minimization without Derivatives, 1973, chapter 4.
+ * @example findRoot({ f: (x) => x * x - 2, low: 0, high: 2, tolerance: 1e-12, maxIterations: 50 })?.root // 1.41421
+ */
 export function findRoot({ f, low, high, tolerance, maxIterations }: FindRootInput): FoundRoot | null {
   let a = low
   let b = high
