@@ -1,11 +1,17 @@
-import type { CandidateResult, RankResult } from '../domain/result.ts'
+import type { CandidateResult } from '../domain/result.ts'
 import { significant } from './format.ts'
 import { type ColumnSpec, numberColumn, textColumn } from './table-view.ts'
 
 type Spec = ColumnSpec<CandidateResult>
 
+/** What the columns need of a result. */
+export interface Ranked {
+  readonly candidates: readonly CandidateResult[]
+  readonly verdict: { readonly best: string | null }
+}
+
 /** Columns of the ranked table, in groups that stay together where the table is divided. */
-export function rankColumns(result: Pick<RankResult, 'candidates' | 'verdict'>): readonly Spec[] {
+export function rankColumns(result: Ranked): readonly Spec[] {
   return [
     ...keyColumns,
     ...rankingColumns(result),
@@ -25,7 +31,7 @@ const keyColumns: readonly Spec[] = [
   textColumn('part', 'key', ({ id }) => id, true),
 ]
 
-function rankingColumns({ candidates, verdict }: Pick<RankResult, 'candidates' | 'verdict'>): readonly Spec[] {
+function rankingColumns({ candidates, verdict }: Ranked): readonly Spec[] {
   const best = candidates.find(({ id }) => id === verdict.best)?.stage_loss_w ?? null
   const gap = ({ stage_loss_w: loss }: CandidateResult) => (loss === null || best === null ? null : loss - best)
   const group = 'Ranking'

@@ -15,6 +15,8 @@ function blockParts(block: Block): string[] {
       return [
         block.items.map(({ label, text }) => `- **${escapeMarkdown(label)}:** ${escapeMarkdown(text)}`).join('\n'),
       ]
+    case 'chart':
+      return []
     case 'text':
       return [...headingParts(block.heading), escapeMarkdown(block.text)]
     case 'list':

@@ -1,5 +1,6 @@
 import CliTable from 'cli-table3'
 import type { AnyResult } from '../domain/study.ts'
+import { terminalChart } from './charts/terminal-chart.ts'
 import { gutter, headerLines, layTable, type Piece } from './table-layout.ts'
 import { wrapText } from './text-width.ts'
 import { viewOf } from './view.ts'
@@ -16,9 +17,10 @@ export function renderTable(result: AnyResult, options: TerminalOptions): string
   const { title, blocks } = viewOf(result)
   const width = Math.max(20, Math.floor(options.width))
   const paint = painter(options.colour)
+  const chart = 'points' in result ? terminalChart(result, width, options.colour).trimEnd().split('\n') : []
   const lines = [
     ...wrapText(title, width).map((line) => paint(line, 'bold')),
-    ...blocks.flatMap((block) => ['', ...blockLines(block, width, paint)]),
+    ...blocks.flatMap((block) => ['', ...blockLines(block, width, paint, chart)]),
   ]
   return `${lines.map((line) => line.trimEnd()).join('\n')}\n`
 }
@@ -31,10 +33,12 @@ function painter(colour: boolean): Paint {
   return (text, style) => (colour ? `\u001B[${codes[style]}m${text}\u001B[0m` : text)
 }
 
-function blockLines(block: Block, width: number, paint: Paint): string[] {
+function blockLines(block: Block, width: number, paint: Paint, chart: string[]): string[] {
   switch (block.kind) {
     case 'facts':
       return block.items.flatMap(({ label, text }) => hanging(`${label}: `, text, width))
+    case 'chart':
+      return chart
     case 'text':
       return [...heading(block.heading, 'plain', width, paint), ...wrapText(block.text, width)]
     case 'list':

@@ -27,7 +27,7 @@ export function layTable(table: Table, width: number): Piece[] {
     taken = []
   }
   for (const group of groups) {
-    if (taken.length > 0 && fit(piece([...taken, group]), width, null) === null) close()
+    if (taken.length > 0 && fittingWidths(piece([...taken, group]), width, null) === null) close()
     taken.push(group)
   }
   close()
@@ -45,7 +45,7 @@ function divide(table: Table, width: number, heading: string): Piece[] {
     pickColumns(table, (index) => table.columns[index]!.key || indices.includes(index))
   table.columns.forEach(({ key }, index) => {
     if (key) return
-    if (taken.length > 0 && fit(piece([...taken, index]), width, narrowestText) === null) {
+    if (taken.length > 0 && fittingWidths(piece([...taken, index]), width, narrowestText) === null) {
       pieces.push(squeezed(piece(taken), width, heading))
       taken = []
     }
@@ -56,7 +56,7 @@ function divide(table: Table, width: number, heading: string): Piece[] {
 
 /** A single column that does not fit even so: its cells wrap. */
 function squeezed(table: Table, width: number, heading: string): Piece {
-  const fitted = fit(table, width, narrowestText)
+  const fitted = fittingWidths(table, width, narrowestText)
   if (fitted !== null) return { heading, table, widths: fitted }
   const widths = naturalWidths(table, true)
   while (total(widths) > width) {
@@ -71,7 +71,7 @@ function squeezed(table: Table, width: number, heading: string): Piece {
  * Widths that fit, first with whole header words, then with broken ones, then with text columns narrowed to
  * `narrowest` (null: not at all); null where they do not.
  */
-function fit(table: Table, width: number, narrowest: number | null): number[] | null {
+function fittingWidths(table: Table, width: number, narrowest: number | null): number[] | null {
   const whole = naturalWidths(table, false)
   if (total(whole) <= width) return whole
   const widths = naturalWidths(table, true)

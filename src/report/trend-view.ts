@@ -1,5 +1,126 @@
-import type { TrendResult } from '../domain/study.ts'
-import type { ReportView } from './view-types.ts'
-export function trendView(_: TrendResult): ReportView {
-  throw new Error('later')
+import type { Crossing, SlopeStudy, TrendCandidate, TrendKey, TrendResult } from '../domain/study.ts'
+import { closingBlocks, drawsFact, listBlock, stageFacts, titleOf, withCautions } from './common-view.ts'
+import { quantity } from './format.ts'
+import { type ColumnSpec, numberColumn, tableOf, textColumn } from './table-view.ts'
+import type { Block, ReportView } from './view-types.ts'
+import { edgeWords, limitWords, positionWords, trendAxes } from './words/trend-words.ts'
+
+/** Everything `trend` shows; the chart is drawn beside it by each renderer that can. */
+export function trendView(trend: TrendResult): ReportView {
+  const blocks: Block[] = [
+    { kind: 'facts', items: [...stageFacts(trend.stage), drawsFact(trend)] },
+    { kind: 'chart' },
+    {
+      kind: 'table',
+      heading: 'Cheapest along the trend',
+      table: tableOf(cheapestColumns(trend.over), trend.points),
+      note: null,
+    },
+    ...listBlock('Crossings', 'plain', crossingItems(trend)),
+    ...listBlock('Limits', 'plain', limitItems(trend)),
+    ...listBlock('Slope', 'plain', (trend.slope ?? []).map(slopeItem)),
+    ...closingBlocks(trend),
+  ]
+  const points = trend.points.flatMap(({ at, candidates }) => candidates.map((candidate) => ({ at, candidate })))
+  const data = withCautions(tableOf(pointColumns(trend.over), points), trend.cautions)
+  return { title: titleOf(trend.stage, `trend over ${trendAxes[trend.over].name}`), blocks, data }
+}
+
+type Point = TrendResult['points'][number]
+
+function axisColumn<Row extends { readonly at: number }>(over: TrendKey): ColumnSpec<Row> {
+  const { name, unit, scale } = trendAxes[over]
+  return numberColumn(name, unit, 'axis', ({ at }: Row) => at, { scale, key: true })
+}
+
+/** One row a point: who is cheapest there and by how much. */
+function cheapestColumns(over: TrendKey): readonly ColumnSpec<Point>[] {
+  const group = 'Cheapest along the trend'
+  const best = (point: Point) => ranked(point)[0] ?? null
+  const second = (point: Point) => ranked(point)[1] ?? null
+  return [
+    axisColumn(over),
+    textColumn('cheapest', group, (point) => best(point)?.id ?? null),
+    numberColumn('stage loss', 'W', group, (point) => best(point)?.stage_loss_w ?? null, { family: 'stage' }),
+    numberColumn('total', 'W', group, (point) => best(point)?.total_w ?? null, { family: 'stage' }),
+    numberColumn('Tj', '°C', group, (point) => best(point)?.junction_c ?? null, { decimals: 0 }),
+    textColumn('next', group, (point) => second(point)?.id ?? null),
+    numberColumn('gap', 'W', group, (point) => gapOf(point), { family: 'stage' }),
+    numberColumn('accept\u00ADed', '', group, (point) => ranked(point).length, { decimals: 0 }),
+  ]
+}
+
+function ranked({ candidates }: Point): TrendCandidate[] {
+  const usable = candidates.filter(({ accepted, stage_loss_w }) => accepted && stage_loss_w !== null)
+  return usable.toSorted((a, b) => a.stage_loss_w! - b.stage_loss_w! || (a.id < b.id ? -1 : 1))
+}
+
+function gapOf(point: Point): number | null {
+  const [best, second] = ranked(point)
+  return best === undefined || second === undefined ? null : second.stage_loss_w! - best.stage_loss_w!
+}
+
+function crossingItems({ over, crossings }: TrendResult) {
+  const interval = ({ low, high }: Crossing) =>
+    low === null || high === null ? '' : ` (${positionWords(over, low)} to ${positionWords(over, high)})`
+  return crossings.map((crossing) => ({
+    lead: positionWords(over, crossing.at),
+    text: `${crossing.from} is cheaper below, ${crossing.to} above${interval(crossing)}.`,
+  }))
+}
+
+function limitItems({ over, limits }: TrendResult) {
+  return limits.map(({ id, at, why }) => ({ lead: positionWords(over, at), text: `${id} ${limitWords(why)}.` }))
+}
+
+function slopeItem(study: SlopeStudy) {
+  const slope = (value: number) => quantity(value, 'A/us')
+  const sentences = [
+    study.largest_a_per_s === null
+      ? 'No slope is admissible.'
+      : `Largest admissible slope ${slope(study.largest_a_per_s)}, set by ${edgeWords(study.largest_because)}.`,
+    study.knee_a_per_s === null ? '' : `Knee at ${slope(study.knee_a_per_s)}: above it at most 5 % is left to gain.`,
+    study.gain_w === null ? '' : `Going from the slope of the stage to the largest ${gainWords(study.gain_w)}.`,
+    study.optimum_a_per_s === null
+      ? ''
+      : `Least loss at ${slope(study.optimum_a_per_s)}, because of ${edgeWords(study.optimum_because ?? '')}.`,
+  ]
+  return { lead: study.id, text: sentences.filter(Boolean).join(' ') }
+}
+
+function gainWords(gain: number): string {
+  return gain >= 0 ? `saves ${quantity(gain, 'W')}` : `costs ${quantity(-gain, 'W')}`
+}
+
+/** One row a point and part, for the file. */
+function pointColumns(
+  over: TrendKey,
+): readonly ColumnSpec<{ readonly at: number; readonly candidate: TrendCandidate }>[] {
+  type Row = { readonly at: number; readonly candidate: TrendCandidate }
+  const group = 'data'
+  const watts = (title: string, value: (candidate: TrendCandidate) => number | null) =>
+    numberColumn(title, 'W', group, ({ candidate }: Row) => value(candidate))
+  const { name, unit, scale } = trendAxes[over]
+  return [
+    numberColumn(name, unit, group, ({ at }: Row) => at, { scale }),
+    textColumn('part', group, ({ candidate }: Row) => candidate.id),
+    watts('stage loss', ({ stage_loss_w }) => stage_loss_w),
+    watts('conduction', ({ losses_w }) => losses_w.conduction),
+    watts('recovery, rectifier', ({ losses_w }) => losses_w.recovery_rectifier),
+    watts('recovery, switch', ({ losses_w }) => losses_w.recovery_switch),
+    watts('capacitive', ({ losses_w }) => losses_w.capacitive),
+    watts('leakage', ({ losses_w }) => losses_w.leakage),
+    watts('forward recovery', ({ losses_w }) => losses_w.forward_recovery),
+    watts('total', ({ total_w }) => total_w),
+    watts('overlap, switch', ({ turn_on_base_w }) => turn_on_base_w),
+    numberColumn('Tj', '°C', group, ({ candidate }: Row) => candidate.junction_c),
+    numberColumn('Tj switch', '°C', group, ({ candidate }: Row) => candidate.switch_junction_c),
+    numberColumn('efficiency', '%', group, ({ candidate }: Row) => candidate.efficiency, { scale: 100 }),
+    numberColumn('voltage margin', '%', group, ({ candidate }: Row) => candidate.voltage_margin, { scale: 100 }),
+    numberColumn('peak reverse voltage', 'V', group, ({ candidate }: Row) => candidate.peak_reverse_v),
+    textColumn('mode', group, ({ candidate }: Row) => candidate.mode),
+    textColumn('thermal', group, ({ candidate }: Row) => candidate.thermal),
+    textColumn('accepted', group, ({ candidate }: Row) => (candidate.accepted ? 'yes' : 'no')),
+    textColumn('extrapolated', group, ({ candidate }: Row) => (candidate.extrapolated ? 'yes' : 'no')),
+  ]
 }

@@ -9,6 +9,8 @@ export interface ReportView {
 export type Block =
   | { readonly kind: 'facts'; readonly items: readonly Fact[] }
   | { readonly kind: 'table'; readonly heading: string; readonly table: Table; readonly note: string | null }
+  /** Where a drawing stands, in forms that can draw. */
+  | { readonly kind: 'chart' }
   | { readonly kind: 'text'; readonly heading: string | null; readonly text: string }
   | { readonly kind: 'list'; readonly heading: string; readonly tone: Tone; readonly items: readonly Item[] }
 

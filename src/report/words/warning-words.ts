@@ -126,4 +126,6 @@ export const warningWords: Readonly<Record<CaveatCode, string>> = {
     'The order is different at [{load:%}|another] load[ ({order})]. Compare the yearly energy before deciding by full load.',
   'thermal-lost':
     'In [{share:%}|some] of the draws the part has no stable temperature. Improve its cooling or treat it as unsafe at this point.',
+  'profile-unsettled':
+    'At a load of the duty profile the part has no stable temperature, so no yearly energy is stated. Improve its cooling or take another part.',
 }

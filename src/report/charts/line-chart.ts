@@ -1,0 +1,206 @@
+import { line } from 'd3-shape'
+import { type Axis, type AxisSpec, type Box, makeAxis } from './axis.ts'
+import { colourOf, marker } from './palette.ts'
+import { placeLabels } from './place-labels.ts'
+import { drawing, element, ink, label, labelWidth, pixels } from './svg.ts'
+
+export interface LinePoint {
+  readonly x: number
+  /** Null interrupts the line. */
+  readonly y: number | null
+  /** Beyond the data: drawn dashed. */
+  readonly dashed?: boolean
+}
+
+export interface LineSeries {
+  readonly name: string
+  readonly points: readonly LinePoint[]
+  /** Colour and marker; the position in the list when left out. */
+  readonly style?: number
+}
+
+/** A vertical mark: a crossing (with its interval) or a limit. */
+export interface LineMark {
+  readonly x: number
+  readonly low?: number | null
+  readonly high?: number | null
+  readonly text: string
+}
+
+export interface LineChartData {
+  readonly title: string
+  readonly x: AxisSpec
+  readonly y: AxisSpec
+  readonly series: readonly LineSeries[]
+  readonly marks?: readonly LineMark[]
+  /** Points given by a source, drawn as open rings apart from what was computed. */
+  readonly given?: readonly { readonly x: number; readonly y: number; readonly text: string }[]
+  readonly width?: number
+  readonly height?: number
+}
+
+/** Lines over a linear or logarithmic axis, each named at its end; marks stand in numbered columns above. */
+export function lineChart(data: LineChartData): string {
+  const width = data.width ?? 760
+  const names = Math.min(width * 0.35, Math.max(30, ...data.series.map(({ name }) => labelWidth(name, 11) + 14)))
+  const marks = data.marks ?? []
+  const box: Box = {
+    left: 64,
+    top: 40 + 15 * marks.length,
+    right: width - names - 14,
+    bottom: (data.height ?? 420) - 50,
+  }
+  const x = makeAxis('x', data.x, allX(data), box)
+  const y = makeAxis('y', data.y, allY(data), box)
+  const ends = data.series.map((series, index) => endOf(series, index, x, y))
+  const bodies = data.series.map((series, index) => seriesMarkup(series, index, x, y))
+  const rings = (data.given ?? []).map((point) => ring(x.place(point.x), y.place(point.y), point.text))
+  return drawing(
+    width,
+    data.height ?? 420,
+    data.title,
+    `${data.y.title} against ${data.x.title} for ${data.series.map(({ name }) => name).join(', ')}`,
+    label(12, 22, data.title, { bold: true, size: 14 }),
+    x.markup,
+    y.markup,
+    ...marks.map((mark, row) => markMarkup(mark, row, x, box)),
+    ...bodies,
+    ...rings,
+    ...nameLabels(data.series, ends, box),
+  )
+}
+
+function allX({ series, marks = [] }: LineChartData): number[] {
+  return [
+    ...series.flatMap(({ points }) => points.map(({ x }) => x)),
+    ...(series.length === 0 ? marks.map(({ x }) => x) : []),
+  ]
+}
+
+function allY({ series, given = [] }: LineChartData): number[] {
+  const lines = series.flatMap(({ points }) => points.flatMap(({ y }) => (y === null ? [] : [y])))
+  return [...lines, ...given.map(({ y }) => y)]
+}
+
+function seriesMarkup(series: LineSeries, index: number, x: Axis, y: Axis): string {
+  const style = series.style ?? index
+  const colour = colourOf(style)
+  const path = (dashed: boolean) => {
+    const draw = line<LinePoint>(
+      (point) => x.place(point.x),
+      (point) => y.place(point.y ?? 0),
+    )
+    draw.digits(2).defined((point) => point.y !== null && Number.isFinite(point.y))
+    return strokes(series.points, dashed)
+      .map((points) => draw(points))
+      .filter((d): d is string => d !== null && d !== '')
+      .map((d) =>
+        element('path', {
+          d,
+          fill: 'none',
+          stroke: colour,
+          'stroke-width': 2,
+          'stroke-dasharray': dashed ? '5 4' : undefined,
+        }),
+      )
+      .join('')
+  }
+  return path(false) + path(true) + sparseMarkers(series, style, colour, x, y)
+}
+
+/** Runs of points whose stretch to the next is dashed or not; neighbouring runs share their point. */
+function strokes(points: readonly LinePoint[], dashed: boolean): LinePoint[][] {
+  const runs: LinePoint[][] = []
+  let run: LinePoint[] = []
+  for (let index = 0; index + 1 < points.length; index++) {
+    const [from, to] = [points[index]!, points[index + 1]!]
+    if ((from.dashed === true || to.dashed === true) !== dashed) {
+      if (run.length > 0) runs.push(run)
+      run = []
+      continue
+    }
+    if (run.length === 0) run.push(from)
+    run.push(to)
+  }
+  return run.length > 0 ? [...runs, run] : runs
+}
+
+/** A marker every few points, shifted by series so that coinciding lines stay apart. */
+function sparseMarkers({ points }: LineSeries, style: number, colour: string, x: Axis, y: Axis): string {
+  const drawn = points.filter((point) => point.y !== null)
+  const every = Math.max(1, Math.floor(drawn.length / 6))
+  return drawn
+    .filter((_, index) => (index + style) % every === 0)
+    .map((point) => marker(style, x.place(point.x), y.place(point.y!), colour))
+    .join('')
+}
+
+function endOf({ points, style }: LineSeries, index: number, x: Axis, y: Axis) {
+  const last = points.findLast((point) => point.y !== null)
+  return last === undefined ? null : { x: x.place(last.x), y: y.place(last.y!), style: style ?? index }
+}
+
+function nameLabels(series: readonly LineSeries[], ends: readonly ReturnType<typeof endOf>[], box: Box): string[] {
+  const places = placeLabels(
+    ends.map((end) => (end === null ? null : end.y)),
+    13,
+    box.top,
+    box.bottom,
+  )
+  return series.flatMap(({ name }, index) => {
+    const end = ends[index]!
+    if (end === null) return []
+    const place = places[index]!
+    const colour = colourOf(end.style)
+    const leader = `M${pixels(end.x)} ${pixels(end.y)}L${pixels(box.right + 6)} ${pixels(place)}`
+    return [
+      element('path', { d: leader, stroke: colour, 'stroke-width': 0.7, fill: 'none' }),
+      marker(end.style, box.right + 10, place, colour, 28),
+      label(box.right + 18, place + 4, name, { size: 11, fill: colour, rim: true }),
+    ]
+  })
+}
+
+function markMarkup(mark: LineMark, row: number, x: Axis, box: Box): string {
+  const at = x.place(mark.x)
+  const y = 38 + 15 * row
+  const clamp = (value: number) => Math.min(box.right, Math.max(box.left, x.place(value)))
+  const interval =
+    mark.low == null || mark.high == null
+      ? ''
+      : element('path', {
+          d: `M${pixels(clamp(mark.low))} ${y}H${pixels(clamp(mark.high))}`,
+          class: 'chart-ink',
+          stroke: ink,
+          'stroke-width': 3,
+          'stroke-opacity': 0.45,
+        })
+  const right = at + 8 + labelWidth(mark.text, 11) > box.right + 90
+  return [
+    element('line', {
+      x1: at,
+      x2: at,
+      y1: y,
+      y2: box.bottom,
+      class: 'chart-ink',
+      stroke: ink,
+      'stroke-dasharray': '1 3',
+    }),
+    interval,
+    element('circle', { cx: at, cy: y, r: 3, class: 'chart-ink-fill', fill: ink }),
+    label(right ? at - 7 : at + 7, y + 4, mark.text, { size: 11, anchor: right ? 'end' : 'start', rim: true }),
+  ].join('')
+}
+
+function ring(x: number, y: number, text: string): string {
+  const circle = element('circle', {
+    cx: x,
+    cy: y,
+    r: 5,
+    class: 'chart-ink',
+    fill: 'none',
+    stroke: ink,
+    'stroke-width': 1.6,
+  })
+  return circle + label(x + 8, y - 6, text, { size: 11, rim: true })
+}

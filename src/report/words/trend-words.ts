@@ -1,0 +1,70 @@
+import type { TrendKey } from '../../domain/study.ts'
+import { celsius, quantity, significant } from '../format.ts'
+import { spokenCode } from './sentence.ts'
+
+/** Name, unit and scale of each quantity a trend can run over. */
+export const trendAxes: Readonly<
+  Record<TrendKey, { readonly name: string; readonly unit: string; readonly scale: number }>
+> = {
+  frequency_hz: { name: 'switching frequency', unit: 'kHz', scale: 1e-3 },
+  load: { name: 'load', unit: '%', scale: 100 },
+  slope_a_per_s: { name: 'current slope', unit: 'A/µs', scale: 1e-6 },
+  ambient_c: { name: 'ambient', unit: '°C', scale: 1 },
+  input_v: { name: 'input', unit: 'V', scale: 1 },
+  inductance_h: { name: 'inductance', unit: 'µH', scale: 1e6 },
+}
+
+export function axisTitle(over: TrendKey): string {
+  return `${trendAxes[over].name} (${trendAxes[over].unit})`
+}
+
+/** A position on the axis as text with its unit. */
+export function positionWords(over: TrendKey, at: number): string {
+  switch (over) {
+    case 'frequency_hz':
+      return quantity(at, 'Hz')
+    case 'load':
+      return quantity(at, '%')
+    case 'slope_a_per_s':
+      return quantity(at, 'A/us')
+    case 'ambient_c':
+      return Math.abs(at - Math.round(at)) < 1e-9 ? celsius(at) : `${significant(at)} °C`
+    case 'input_v':
+      return quantity(at, 'V')
+    case 'inductance_h':
+      return quantity(at, 'H')
+  }
+}
+
+const limits: Readonly<Record<string, string>> = {
+  'junction-over-limit': 'reaches its junction limit',
+  'no-stable-temperature': 'loses its stable temperature',
+  'runaway-at-maximum-leakage': 'runs away at maximum leakage',
+  'voltage-margin': 'leaves its voltage margin',
+  'average-current': 'exceeds its mean current',
+  'recovery-too-slow': 'recovers too slowly for its interval',
+  'mode-change': 'changes its conduction mode',
+}
+
+/** Why a part ends at a limit, in a few words that follow its name. */
+export function limitWords(why: string): string {
+  return Object.hasOwn(limits, why) ? limits[why]! : lower(spokenCode(why))
+}
+
+const edges: Readonly<Record<string, string>> = {
+  voltage: 'the voltage rule, with overshoot',
+  loop: 'voltage over loop inductance',
+  saturation: 'the saturation of the switch',
+  temperature: 'a temperature limit',
+  range: 'the range looked at; no limit was met',
+  evidence: 'the evidence, whose rows make charge grow faster with the slope than the model alone',
+}
+
+/** What sets the largest admissible slope, or an optimum. */
+export function edgeWords(because: string): string {
+  return Object.hasOwn(edges, because) ? edges[because]! : lower(spokenCode(because))
+}
+
+function lower(text: string): string {
+  return text.charAt(0).toLowerCase() + text.slice(1).replace(/\.$/, '')
+}
