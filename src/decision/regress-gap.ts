@@ -39,8 +39,9 @@ const constant = 1e-12
 /**
  * Regresses the gap on its inputs: gap = mean + Σ f_g, each f_g a polynomial of degree two in the standardised columns
  * of input g (for normal inputs: the Hermite polynomials of degree one and two). For independent inputs the variance
- * of f_g is the first-order part of input g. Each variance is lowered by what chance alone would fit: σ² k/n for k
- * terms, n draws and residual variance σ². With fewer than 4 draws for each term only the straight terms are fitted.
+ * of f_g is the first-order part of input g. Each variance is lowered by what chance alone would fit: σ² k/f for k
+ * terms, residual variance σ² and its degrees of freedom f. With fewer than 4 draws for each term only the straight
+ * terms are fitted.
  *
  * The linear coefficient of a normal input is the mean derivative (Stein's lemma), which is the gradient given.
  *
@@ -63,12 +64,13 @@ export function regressGap(gap: Float64Array, inputs: readonly GapInput[]): GapR
   if (!terms) return null
 
   const fit = leastSquares(terms.flat(), target)
-  const residual = fit.residualSquares / (draws - 1 - fit.rank)
+  const freedom = draws - 1 - fit.rank
+  const residual = fit.residualSquares / freedom
   let next = 0
   const parts = groups.map((group, index): GapPart => {
     const own = fit.coefficients.subarray(next, next + terms[index]!.length)
     next += own.length
-    const chance = (residual * own.length) / draws
+    const chance = (residual * own.length) / freedom
     return {
       name: group.name,
       variance: Math.max(0, meanSquare(addUp(terms[index]!, own, draws)) - chance),

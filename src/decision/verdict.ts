@@ -5,6 +5,8 @@ import { drawInterval } from './summarise-draws.ts'
 
 /** Odds from which a best part counts as decided. */
 export const decidedOdds = 0.9
+/** Share of draws from above which a part cheaper than the best counts as tied with it. */
+const tiedShare = 0.1
 
 /** Who is best and how sure that is. */
 export interface Decision {
@@ -68,7 +70,7 @@ export function pairedGap(one: Float64Array, other: Float64Array): Float64Array 
 
 function nameTied(best: CandidateDraws, others: readonly CandidateDraws[]): string[] {
   const rivals = others.map((rival) => ({ id: rival.id, share: shareCheaper(rival.stageLoss, best.stageLoss) }))
-  const tied = rivals.filter((rival) => rival.share > 1 - decidedOdds)
+  const tied = rivals.filter((rival) => rival.share > tiedShare)
   if (tied.length > 0) return tied.map((rival) => rival.id).sort(compareIds)
   const nearest = rivals.sort((a, b) => b.share - a.share || compareIds(a.id, b.id))[0]!
   return nearest.share > 0 ? [nearest.id] : []
