@@ -1,8 +1,5 @@
-import { readCapture } from '../input/read-capture.ts'
-import { readMapping } from '../input/read-mapping.ts'
 import { readRecords } from '../input/read-records.ts'
 import { collecting, type Desk, openDesk, readAt, settleDesk } from './desk.ts'
-import { failure } from './failure.ts'
 import { readText } from './read-file.ts'
 import { readStageAndRecords } from './read-study.ts'
 import { recordFiles } from './record-files.ts'
@@ -13,14 +10,14 @@ export interface CheckOptions {
   readonly quiet?: boolean
 }
 
-type FileKind = 'stage' | 'records' | 'capture' | 'mapping'
+type FileKind = 'stage' | 'records'
 
 /** `ebbwatt check FILE...`: what is wrong in any of them, all at once; a stage brings the records it names. */
 export async function runCheck(paths: readonly string[], options: CheckOptions, session: Session): Promise<number> {
   const desk = openDesk()
   const files = paths.flatMap((path) => collecting(desk, () => recordFiles([path])) ?? [])
   const checked = files.flatMap((path) => {
-    const kind = collecting(desk, () => kindOf(path))
+    const kind = collecting(desk, () => kindOf(readText(path).text))
     if (kind !== null) checkAs[kind](desk, path)
     return kind === null ? [] : [{ path, kind }]
   })
@@ -31,15 +28,11 @@ export async function runCheck(paths: readonly string[], options: CheckOptions, 
 }
 
 const checkAs: Readonly<Record<FileKind, (desk: Desk, path: string) => void>> = {
-  stage: (desk, path) => void readStageAndRecords(desk, path, []),
+  stage: (desk, path) => void readStageAndRecords(desk, path, {}),
   records: (desk, path) => void readAt(desk, path, readRecords),
-  capture: (desk, path) => void readAt(desk, path, readCapture),
-  mapping: (desk, path) => void readAt(desk, path, readMapping),
 }
 
-/** Each kind of file has a key at its top that no other has. */
-const topKeys: readonly (readonly [FileKind, RegExp])[] = [['stage', /^\s*\{?\s*["']?stage["']?\s*:/m]]
-
-function kindOf(path: string): FileKind {
-  return 'records'
+/** Each kind of file has a key at its top that no other has; what has none of them is read as records. */
+function kindOf(text: string): FileKind {
+  return /^(?:\{\s*)?["']?stage["']?\s*:/m.test(text) ? 'stage' : 'records'
 }

@@ -16,9 +16,12 @@ export class CommandFailure extends Error {
 
 /** A failure with one problem; what is not said stays empty. */
 export function failure(problem: Partial<Problem> & { readonly code: ProblemCode }): CommandFailure {
-  return new CommandFailure([
-    { file: 'command line', line: 0, column: 0, path: '', found: '', expected: '', hint: '', ...problem },
-  ])
+  return new CommandFailure([{ ...onCommandLine(''), ...problem }])
+}
+
+/** A problem's place where it stands in no file. */
+export function onCommandLine(option: string): Omit<Problem, 'code'> {
+  return { file: 'command line', line: 0, column: 0, path: option, found: '', expected: '', hint: '' }
 }
 
 /** The document that stands on stdout when `--json` was asked for and there is no result. */

@@ -2,10 +2,14 @@ import { dirname, join, relative, sep } from 'node:path'
 import type { RectifierRecord } from '../domain/rectifier.ts'
 import type { Stage } from '../domain/stage.ts'
 import type { StudySettings } from '../domain/study.ts'
+import { checkReferences } from '../input/check-references.ts'
 import { readRecords } from '../input/read-records.ts'
 import { readStage } from '../input/read-stage.ts'
+import { didYouMean } from '../problems/nearest.ts'
+import type { Problem } from '../problems/problem.ts'
 import type { OutputOptions } from './delivery.ts'
 import { collecting, type Desk, openDesk, readAt, settleDesk } from './desk.ts'
+import { onCommandLine } from './failure.ts'
 import { recordFiles } from './record-files.ts'
 import type { Session } from './session.ts'
 
@@ -32,7 +36,7 @@ export interface StudyMaterial {
 /** Reads a stage and its records; every problem of every file is told at once. */
 export function readStudy(stagePath: string, options: StudyOptions, session: Session): StudyMaterial {
   const desk = openDesk()
-  const { stage, records } = readStageAndRecords(desk, stagePath, options.records ?? [])
+  const { stage, records } = readStageAndRecords(desk, stagePath, options)
   settleDesk(desk, options.quiet === true, session)
   if (stage === null) throw new Error('a stage without a value and without a problem')
   const only = [...new Set(options.only ?? [])]
@@ -45,17 +49,28 @@ export function readStudy(stagePath: string, options: StudyOptions, session: Ses
   }
 }
 
-/** The stage and all records it names, with those of the command line. */
+/** The stage and all records it names, with those of the command line; what they say of each other is checked. */
 export function readStageAndRecords(
   desk: Desk,
   stagePath: string,
-  further: readonly string[],
+  { records: further = [], only = [] }: Pick<StudyOptions, 'records' | 'only'>,
 ): { readonly stage: Stage | null; readonly records: readonly RectifierRecord[] } {
   const document = readAt(desk, stagePath, readStage)
   const named = (document?.records ?? []).map((path) => join(dirname(stagePath), path))
   const files = [...named, ...further].flatMap((path) => collecting(desk, () => recordFiles([path])) ?? [])
   const records = [...new Set(files)].sort().flatMap((path) => readAt(desk, path, readRecords) ?? [])
+  // A file that could not be read hides its ids: calling them unknown would only add noise.
+  const complete = desk.problems.length === 0
+  desk.problems.push(...checkReferences(complete ? document : null, records))
+  if (complete) desk.problems.push(...unknownOnly(only, records))
   return { stage: document?.stage ?? null, records }
+}
+
+function unknownOnly(only: readonly string[], records: readonly RectifierRecord[]): readonly Problem[] {
+  const ids = records.map(({ id }) => id)
+  return only
+    .filter((id) => !ids.includes(id))
+    .map((id) => ({ ...onCommandLine('--only'), code: 'id-unknown', found: id, hint: didYouMean(id, ids) }))
 }
 
 /** Paths as reached from the stage file, with slashes, so that the same inputs give the same bytes from any folder. */
