@@ -7,6 +7,13 @@ export function boundProblems(problems: readonly Problem[]): readonly Problem[] 
   const sorted = sortProblems(problems)
   const last = sorted[most - 1]
   if (sorted.length <= most || last === undefined) return sorted
-  const more: Problem = { ...last, code: 'more-problems', path: '', found: String(sorted.length - most), expected: '', hint: '' }
+  const more: Problem = {
+    ...last,
+    code: 'more-problems',
+    path: '',
+    found: String(sorted.length - most),
+    expected: '',
+    hint: '',
+  }
   return [...sorted.slice(0, most), more]
 }

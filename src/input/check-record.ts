@@ -10,7 +10,8 @@ export function checkRecord(section: Section, record: RectifierRecord): void {
     ...rows(section, 'recovery').map((row, index) => ({ row, reading: record.recovery[index]?.junction ?? null })),
   ]
   for (const { row, reading } of named) {
-    if (reading !== null && reading > hottest) warn(row, 'junction', `the rating is ${text(group(section, 'ratings'), 'junction')}`)
+    if (reading !== null && reading > hottest)
+      warn(row, 'junction', `the rating is ${text(group(section, 'ratings'), 'junction')}`)
   }
   for (const [index, row] of rows(section, 'recovery').entries()) {
     const reading = record.recovery[index]

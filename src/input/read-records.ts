@@ -1,7 +1,7 @@
 import { validateRectifier } from '#validators'
 import type { RectifierRecord } from '../domain/rectifier.ts'
-import { boundProblems } from './bound-problems.ts'
 import type { Reading } from '../problems/problem.ts'
+import { boundProblems } from './bound-problems.ts'
 import { recordFrom } from './record.ts'
 import { type Reader, type Section, startReader } from './section.ts'
 import { checkShape } from './shape.ts'

@@ -96,7 +96,9 @@ function capacitanceFrom(capacitance: Section): CapacitanceData | null {
   if (has(capacitance, 'charge')) {
     const charge = required(capacitance, 'charge', 'charge', 'not-negative')
     const voltage = required(capacitance, 'voltage', 'voltage', 'not-negative')
-    return voltage === 0 ? unused(capacitance, 'voltage', 'a charge at 0 V tells nothing') : { kind: 'charge', charge, voltage }
+    return voltage === 0
+      ? unused(capacitance, 'voltage', 'a charge at 0 V tells nothing')
+      : { kind: 'charge', charge, voltage }
   }
   const zeroBias = required(capacitance, 'zero_bias', 'capacitance', 'not-negative')
   const builtIn = required(capacitance, 'built_in', 'voltage', 'not-negative')
@@ -123,7 +125,11 @@ function unused(section: Section, key: string, why: string): null {
 }
 
 function extrasFrom(section: Section): Pick<RectifierRecord, 'forwardRecovery' | 'deadTime' | 'channel'> {
-  const [recovery, dead, channel] = [group(section, 'forward_recovery'), group(section, 'dead_time'), group(section, 'channel')]
+  const [recovery, dead, channel] = [
+    group(section, 'forward_recovery'),
+    group(section, 'dead_time'),
+    group(section, 'channel'),
+  ]
   return {
     forwardRecovery: has(section, 'forward_recovery')
       ? {
@@ -132,14 +138,27 @@ function extrasFrom(section: Section): Pick<RectifierRecord, 'forwardRecovery' |
           slope: required(recovery, 'slope', 'slope', 'positive'),
         }
       : null,
-    deadTime: has(section, 'dead_time')
-      ? { before: required(dead, 'before', 'time', 'not-negative'), after: required(dead, 'after', 'time', 'not-negative') }
+    deadTime: isUsed(section, 'dead_time')
+      ? {
+          before: required(dead, 'before', 'time', 'not-negative'),
+          after: required(dead, 'after', 'time', 'not-negative'),
+        }
       : null,
-    channel: has(section, 'channel')
+    channel: isUsed(section, 'channel')
       ? {
           onResistance: required(channel, 'on_resistance', 'resistance', 'not-negative'),
           perKelvin: required(channel, 'per_kelvin', 'per_kelvin', 'any'),
         }
       : null,
   }
+}
+
+/** Dead time and channel belong to a body diode; elsewhere they are said to be left out. */
+function isUsed(section: Section, key: 'dead_time' | 'channel'): boolean {
+  if (!has(section, key)) return false
+  const rectifierClass = text(section, 'class')
+  if (rectifierClass === 'body-diode') return true
+  const complaint = { code: 'value-unused', path: [...section.path, key], found: key, hint: '' } as const
+  addWarning(section.reader, { ...complaint, expected: `only class body-diode has it, not ${rectifierClass}` }, 'key')
+  return false
 }

@@ -47,7 +47,11 @@ function stepRow(row: Section, basics: RowBasics): StepRow {
   const reverse = required(row, 'reverse', 'current', 'positive')
   const until = quantity(row, 'until', 'current', 'positive')
   if (until !== null && until >= reverse) {
-    const complaint = { code: 'values-contradict', path: [...row.path, 'until'], found: text(row, 'until') ?? '' } as const
+    const complaint = {
+      code: 'values-contradict',
+      path: [...row.path, 'until'],
+      found: text(row, 'until') ?? '',
+    } as const
     const hint = 'the current of the fixture, which trr waits to fall, is "reverse"'
     addProblem(row.reader, { ...complaint, expected: `it must be below reverse, ${text(row, 'reverse')}`, hint })
   }

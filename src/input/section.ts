@@ -63,7 +63,9 @@ export function plainNumber(section: Section, key: string): number | null {
 export function texts(section: Section, key: string): readonly { readonly text: string; readonly path: Path }[] {
   const list = own(section, key)
   if (!Array.isArray(list)) return []
-  return list.flatMap((item, index) => (typeof item === 'string' ? [{ text: item, path: [...section.path, key, index] }] : []))
+  return list.flatMap((item, index) =>
+    typeof item === 'string' ? [{ text: item, path: [...section.path, key, index] }] : [],
+  )
 }
 
 /** A quantity in SI, or null where the key is absent; a refusal is told and reads as null too. */
@@ -74,7 +76,13 @@ export function quantity(section: Section, key: string, kind: QuantityKindName, 
   if (typeof parsed === 'number') {
     const unusual = unusualBecause(section.path, key, parsed)
     if (unusual !== null) {
-      const complaint = { code: 'value-implausible', path: [...section.path, key], found: value, expected: unusual, hint: 'check the unit' } as const
+      const complaint = {
+        code: 'value-implausible',
+        path: [...section.path, key],
+        found: value,
+        expected: unusual,
+        hint: 'check the unit',
+      } as const
       addWarning(section.reader, complaint)
     }
     return parsed
@@ -137,5 +145,7 @@ function own({ data }: Section, key: string): unknown {
 }
 
 function asGroup(value: unknown): Readonly<Record<string, unknown>> | null {
-  return typeof value === 'object' && value !== null && !Array.isArray(value) ? (value as Readonly<Record<string, unknown>>) : null
+  return typeof value === 'object' && value !== null && !Array.isArray(value)
+    ? (value as Readonly<Record<string, unknown>>)
+    : null
 }

@@ -12,4 +12,3 @@ export interface ShapeFault {
   readonly expected: string
   readonly hint: string
 }
-

@@ -18,7 +18,13 @@ export function valueProblem(path: Path, value: unknown, error: SchemaError): Sh
     }
     case 'minItems':
     case 'maxItems':
-      return { ...at, code: 'list-length', found: `${(value as readonly unknown[]).length} entries`, expected: bound(error), hint: '' }
+      return {
+        ...at,
+        code: 'list-length',
+        found: `${(value as readonly unknown[]).length} entries`,
+        expected: bound(error),
+        hint: '',
+      }
     case 'minimum':
     case 'maximum':
     case 'exclusiveMinimum':
@@ -29,9 +35,13 @@ export function valueProblem(path: Path, value: unknown, error: SchemaError): Sh
   }
 }
 
-function wrongType(value: unknown, error: SchemaError): Pick<ShapeFault, 'code' | 'expected' | 'hint'> & { found?: string } {
+function wrongType(
+  value: unknown,
+  error: SchemaError,
+): Pick<ShapeFault, 'code' | 'expected' | 'hint'> & { found?: string } {
   const kind = kindOfReference(error.schemaPath)
-  if (kind !== null && typeof value === 'number') return { code: 'unit-missing', expected: wantedQuantity(kind), hint: '' }
+  if (kind !== null && typeof value === 'number')
+    return { code: 'unit-missing', expected: wantedQuantity(kind), hint: '' }
   const expected = kind === null ? wordsOfTypes(error.params.type) : wantedQuantity(kind)
   const found = typeof value === 'object' ? shown(value) : `"${shown(value)}"`
   return { code: 'value-kind', found, expected, hint: typeHint(value, error.params.type) }
@@ -39,7 +49,8 @@ function wrongType(value: unknown, error: SchemaError): Pick<ShapeFault, 'code' 
 
 function typeHint(value: unknown, type: unknown): string {
   if (type === 'array' && typeof value === 'string') return 'write [one, two]'
-  if ((type === 'number' || type === 'integer') && typeof value === 'string' && /^[\d.]+$/.test(value)) return 'leave the quotes out'
+  if ((type === 'number' || type === 'integer') && typeof value === 'string' && /^[\d.]+$/.test(value))
+    return 'leave the quotes out'
   return ''
 }
 

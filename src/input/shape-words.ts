@@ -8,7 +8,11 @@ export function kindOfReference(reference: string): QuantityKindName | null {
 
 /** What a part of a schema asks for, in words. */
 export function expectedBySchema(schema: unknown): string {
-  const { $ref, enum: words, description } = (schema ?? {}) as {
+  const {
+    $ref,
+    enum: words,
+    description,
+  } = (schema ?? {}) as {
     readonly $ref?: string
     readonly enum?: readonly unknown[]
     readonly description?: string

@@ -49,7 +49,9 @@ function missingKey(path: Path, error: SchemaError): ShapeFault {
 }
 
 function missingOneOf(path: Path, error: SchemaError): ShapeFault {
-  const alternatives = (error.schema as readonly { readonly required: readonly string[] }[]).flatMap((one) => one.required)
+  const alternatives = (error.schema as readonly { readonly required: readonly string[] }[]).flatMap(
+    (one) => one.required,
+  )
   const expected = `one of ${alternatives.join(', ')}`
   return { code: 'key-missing', path: [...path, alternatives[0]!], at: path, of: 'key', found: '', expected, hint: '' }
 }
@@ -57,8 +59,17 @@ function missingOneOf(path: Path, error: SchemaError): ShapeFault {
 function unknownKey(path: Path, error: SchemaError): ShapeFault {
   const key = String(error.params.additionalProperty)
   const known = Object.keys((error.parentSchema?.properties as object | undefined) ?? {})
-  const at = [...path, key]
-  return { code: 'key-unknown', path, at, of: 'key', found: shown(key), expected: known.join(', '), hint: didYouMean(key, known) }
+  // "{resistance: 0,5 ohm}" reads as a second key "5 ohm".
+  const hint = /^\d/.test(key) ? 'if a decimal comma stands before it, write a point' : didYouMean(key, known)
+  return {
+    code: 'key-unknown',
+    path,
+    at: [...path, key],
+    of: 'key',
+    found: shown(key),
+    expected: known.join(', '),
+    hint,
+  }
 }
 
 function keyNotHere(path: Path, error: SchemaError): ShapeFault {

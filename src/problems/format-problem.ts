@@ -34,7 +34,8 @@ function pointed(line: string, { column, found }: Problem): string {
   const from = start > widest - 30 ? start - 30 : 0
   const shown = line.slice(from, from + widest).replace(/[\p{Cc}\p{Cf}\p{Cs}]/gu, ' ')
   const rest = line.slice(start)
-  const length = [found, `"${found}"`, `'${found}'`].find((text) => text !== '' && rest.startsWith(text))?.length ?? 1
+  const bare = found.replace(/^"(.*)"$/, '$1')
+  const length = [`"${bare}"`, `'${bare}'`, bare].find((text) => bare !== '' && rest.startsWith(text))?.length ?? 1
   const room = Math.max(1, shown.length - (start - from))
   return `    ${shown}\n    ${' '.repeat(Math.min(start - from, shown.length))}${'^'.repeat(Math.min(length, room))}`
 }

@@ -84,7 +84,11 @@ export interface Reading<T> {
 export function sortProblems(problems: readonly Problem[]): readonly Problem[] {
   return [...problems].sort(
     (a, b) =>
-      compare(a.file, b.file) || a.line - b.line || a.column - b.column || compare(a.code, b.code) || compare(a.path, b.path),
+      compare(a.file, b.file) ||
+      a.line - b.line ||
+      a.column - b.column ||
+      compare(a.code, b.code) ||
+      compare(a.path, b.path),
   )
 }
 

@@ -53,7 +53,8 @@ const words: Readonly<Record<ProblemCode, (problem: Problem) => string>> = {
   'cannot-deliver': (p) => `the stage cannot deliver this power: ${p.found}${next(p.hint)}`,
   'no-candidate': (p) => `there is no rectifier to rank${because(p.found)}${next(p.hint)}`,
   'quantity-not-applicable': (p) => `${quoted(p.found)} does not apply to this stage: ${p.expected}${next(p.hint)}`,
-  'range-reversed': (p) => `the range runs from ${p.found} to ${p.expected}; its start must be the smaller${next(p.hint)}`,
+  'range-reversed': (p) =>
+    `the range runs from ${p.found} to ${p.expected}; its start must be the smaller${next(p.hint)}`,
   'range-outside': (p) => `${p.found} is outside the range that can be studied: ${p.expected}${next(p.hint)}`,
 
   'value-implausible': (p) => `${quoted(p.found)} is unusual; ${p.expected}${aside(p.hint)}`,

@@ -40,8 +40,10 @@ const commaHint = 'write the decimals after a point and leave out thousands sepa
 
 function malformedRest(rest: string, kind: QuantityKindName): QuantityRefusal | null {
   if (/^\s*$/.test(rest)) return refuse('unit-missing', kind, '')
-  if (/^\s*,\s*\d/.test(rest)) return { refused: true, code: 'number-decimal-comma', expected: wantedQuantity(kind), hint: commaHint }
-  if (/^\s+\d(?!\s*\/)/.test(rest) && !/^\s+1\s*\//.test(rest)) return refuse('number-malformed', kind, 'one number without spaces in it')
+  if (/^\s*,\s*\d/.test(rest))
+    return { refused: true, code: 'number-decimal-comma', expected: wantedQuantity(kind), hint: commaHint }
+  if (/^\s+\d(?!\s*\/)/.test(rest) && !/^\s+1\s*\//.test(rest))
+    return refuse('number-malformed', kind, 'one number without spaces in it')
   if (/^\s*[.,\d]/.test(rest) && !/^\s+1\s*\//.test(rest)) return refuse('number-malformed', kind, '')
   return null
 }
@@ -59,14 +61,29 @@ function scaled(value: number, { factor, offset, divisor }: Scale): number {
   return (divisor === 1 ? value * factor : value / divisor) + offset
 }
 
-function checked(typed: number, value: number, kind: QuantityKindName, sign: QuantityRule['sign']): number | QuantityRefusal {
+function checked(
+  typed: number,
+  value: number,
+  kind: QuantityKindName,
+  sign: QuantityRule['sign'],
+): number | QuantityRefusal {
   if (!Number.isFinite(value)) return refuse('number-not-finite', kind, '')
   if (kind === 'temperature' && value <= 0) {
-    return { refused: true, code: 'number-out-of-range', expected: 'a temperature above absolute zero, -273.15 degC', hint: '' }
+    return {
+      refused: true,
+      code: 'number-out-of-range',
+      expected: 'a temperature above absolute zero, -273.15 degC',
+      hint: '',
+    }
   }
   const magnitude = Math.abs(value)
   if (magnitude > largest || (magnitude < smallest && (magnitude > 0 || typed !== 0))) {
-    return { refused: true, code: 'number-out-of-range', expected: 'magnitudes from 1e-40 to 1e40', hint: 'check the unit' }
+    return {
+      refused: true,
+      code: 'number-out-of-range',
+      expected: 'magnitudes from 1e-40 to 1e40',
+      hint: 'check the unit',
+    }
   }
   if (value < 0 && sign !== 'any') return refuse('number-negative', kind, '')
   if (value === 0 && sign === 'positive') return refuse('number-zero', kind, '')
@@ -106,7 +123,8 @@ function findConversion(unitText: string, kind: QuantityKindName): Scale | Quant
 
 function asScale(factor: number, offset: number): Scale {
   const inverse = Math.round(1 / factor)
-  const powerOfTen = factor < 1 && 10 ** Math.round(Math.log10(inverse)) === inverse && Math.abs(inverse * factor - 1) < 1e-12
+  const powerOfTen =
+    factor < 1 && 10 ** Math.round(Math.log10(inverse)) === inverse && Math.abs(inverse * factor - 1) < 1e-12
   return { factor, offset, divisor: powerOfTen ? inverse : 1 }
 }
 

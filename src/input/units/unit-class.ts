@@ -48,7 +48,9 @@ export interface UnitConversion {
 }
 
 /** Why a text cannot be turned into the wanted unit. */
-export type UnitRefusal = { readonly refused: 'unknown' } | { readonly refused: 'dimension'; readonly dimension: string }
+export type UnitRefusal =
+  | { readonly refused: 'unknown' }
+  | { readonly refused: 'dimension'; readonly dimension: string }
 
 /**
  * Units that mathjs knows and this tool does not take: other temperature scales, and volt-amperes, which are no watts.

@@ -6,13 +6,14 @@ export function locateIn(contents: Node | null, path: Path, of: 'key' | 'value')
   let node: unknown = contents
   let offset = startOf(contents, 0)
   for (const [index, step] of path.entries()) {
-    const pair = isMap(node) ? node.items.find(({ key }) => isScalar(key) && String(key.value) === String(step)) : undefined
+    const pair = isMap(node)
+      ? node.items.find(({ key }) => isScalar(key) && String(key.value) === String(step))
+      : undefined
     const child = isSeq(node) && typeof step === 'number' ? node.items[step] : pair?.value
     if (pair === undefined && child === undefined) return offset
-    const keyOffset = startOf(pair?.key, offset)
+    const keyOffset = pair === undefined ? startOf(child, offset) : startOf(pair.key, offset)
     const last = index === path.length - 1
-    // A missing key is told at its parent's key, a value at the value itself.
-    offset = of === 'key' && last ? keyOffset : last ? startOf(child, keyOffset) : pair === undefined ? startOf(child, offset) : keyOffset
+    offset = last && of === 'value' ? startOf(child, keyOffset) : keyOffset
     node = child
   }
   return offset

@@ -67,7 +67,14 @@ function convertScalar(node: Scalar, path: Path, faults: YamlFault[]): unknown {
   if (typeof value === 'number' && !Number.isFinite(value)) {
     const found = shown(source ?? String(value))
     const expected = 'a number that can be computed with'
-    faults.push({ code: 'number-not-finite', offset: node.range?.[0] ?? 0, path: pathText(path), found, expected, hint: '' })
+    faults.push({
+      code: 'number-not-finite',
+      offset: node.range?.[0] ?? 0,
+      path: pathText(path),
+      found,
+      expected,
+      hint: '',
+    })
     return 0
   }
   return value

@@ -1,10 +1,10 @@
-import { Composer, type Document, LineCounter, Parser, type ParsedNode } from 'yaml'
+import { Composer, type Document, LineCounter, type ParsedNode, Parser } from 'yaml'
 import type { Problem } from '../../problems/problem.ts'
 import { shown } from '../../problems/shown.ts'
 import { checkText } from './check-text.ts'
 import { forbidden, type YamlFault } from './fault.ts'
-import { isNestedTooDeep, mostLevels } from './nesting.ts'
 import { locateIn } from './locate.ts'
+import { isNestedTooDeep, mostLevels } from './nesting.ts'
 import { nodeToData } from './node-to-data.ts'
 import type { Path } from './path.ts'
 
@@ -99,8 +99,10 @@ function syntaxFaults(documents: readonly Document.Parsed<ParsedNode>[]): readon
   const [first, second] = documents
   const faults = (first === undefined ? [] : [...first.errors, ...first.warnings]).map((error): YamlFault => {
     const [expected, hint] = syntaxWords[error.code] ?? [lowerFirst(error.message), '']
-    if (error.code === 'TAG_RESOLVE_FAILED') return forbidden(error.pos[0], 'a tag', 'write plain text, numbers and lists')
-    if (error.code === 'BAD_DIRECTIVE') return forbidden(error.pos[0], 'a directive', 'leave lines that begin with % out')
+    if (error.code === 'TAG_RESOLVE_FAILED')
+      return forbidden(error.pos[0], 'a tag', 'write plain text, numbers and lists')
+    if (error.code === 'BAD_DIRECTIVE')
+      return forbidden(error.pos[0], 'a directive', 'leave lines that begin with % out')
     return { code: 'yaml-syntax', offset: error.pos[0], path: '', found: '', expected, hint }
   })
   if (second !== undefined && second.range !== undefined) {
