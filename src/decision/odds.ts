@@ -28,17 +28,16 @@ export interface Odds {
 export function countOdds(candidates: readonly CandidateDraws[]): Odds[] {
   const draws = candidates[0]?.stageLoss.length ?? 0
   const rivals = candidates.filter((candidate) => candidate.accepted)
-  const wins = new Map(rivals.map((rival) => [rival.id, 0]))
-  for (let draw = 0; draw < draws; draw++) {
-    const cheapest = cheapestIn(rivals, draw)
-    for (const rival of cheapest) wins.set(rival.id, wins.get(rival.id)! + 1 / cheapest.length)
-  }
-  return candidates.map(({ id, accepted, stageLoss }) => ({
-    id,
-    best: accepted && draws > 0 ? wins.get(id)! / draws : 0,
-    error: accepted ? standardError(wins.get(id)!, draws) : 0,
-    lostShare: lostShare(stageLoss),
-  }))
+  const wins = countWins(rivals, draws)
+  return candidates.map(({ id, accepted, stageLoss }) => {
+    const won = accepted ? wins.get(id)! : 0
+    return {
+      id,
+      best: draws > 0 ? won / draws : 0,
+      error: accepted ? standardError(won, draws) : 0,
+      lostShare: lostShare(stageLoss),
+    }
+  })
 }
 
 /** Share of draws without a stable temperature. [1] */
@@ -48,10 +47,23 @@ export function lostShare(stageLoss: Float64Array): number {
   return stageLoss.length > 0 ? lost / stageLoss.length : 0
 }
 
-function cheapestIn(rivals: readonly CandidateDraws[], draw: number): CandidateDraws[] {
-  let lowest = Infinity
-  for (const rival of rivals) lowest = Math.min(lowest, rival.stageLoss[draw]!)
-  return isSettled(lowest) ? rivals.filter((rival) => rival.stageLoss[draw] === lowest) : []
+/** Draws won by each rival, shared where they tie. */
+function countWins(rivals: readonly CandidateDraws[], draws: number): Map<string, number> {
+  const wins = new Float64Array(rivals.length)
+  for (let draw = 0; draw < draws; draw++) {
+    let lowest = Infinity
+    let holders = 0
+    for (const { stageLoss } of rivals) {
+      const loss = stageLoss[draw]!
+      holders = loss < lowest ? 1 : holders + (loss === lowest ? 1 : 0)
+      lowest = Math.min(lowest, loss)
+    }
+    if (!isSettled(lowest)) continue
+    for (let rival = 0; rival < rivals.length; rival++) {
+      if (rivals[rival]!.stageLoss[draw] === lowest) wins[rival] = wins[rival]! + 1 / holders
+    }
+  }
+  return new Map(rivals.map(({ id }, rival) => [id, wins[rival]!]))
 }
 
 function standardError(wins: number, draws: number): number {
