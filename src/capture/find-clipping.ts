@@ -1,0 +1,75 @@
+import type { Waveform } from '../domain/capture.ts'
+import type { LocatedEvent } from './locate-event.ts'
+
+/** What one channel's limits did to its samples. */
+export interface FoundClipping {
+  /** Reading that is never exceeded, in the channel's own sense. */
+  readonly at: number
+  readonly samples: number
+}
+
+/**
+ * Clipping shows as a run of equal extreme samples that is longer than the signal can be: on a peak, where the current
+ * would have moved by several steps of the converter in that time; on a plateau, where noise would have shown.
+ * `drift` is what the signal must have moved in one sample near the extreme. [A]
+ */
+export function clippedPeak(
+  current: Float64Array,
+  event: LocatedEvent,
+  drift: number,
+  noise: number,
+): FoundClipping | null {
+  const sign = event.inverted ? -1 : 1
+  const lowest = sign * event.lowest
+  let run = 0
+  let longest = 0
+  for (let k = event.crossing; k < Math.min(event.last, event.quarter + 1); k++) {
+    run = current[k] === lowest ? run + 1 : 0
+    longest = Math.max(longest, run)
+  }
+  const moved = drift * (longest - 1)
+  return longest >= 4 && moved > 6 * Math.max(noise, quantum(current, event.edge, event.quarter))
+    ? { at: lowest, samples: longest }
+    : null
+}
+
+/** A flat stretch without any noise, at the record's extreme, in a channel that is noisy elsewhere. */
+export function clippedPlateau(
+  values: Float64Array,
+  from: number,
+  to: number,
+  noise: number,
+  step: number,
+): FoundClipping | null {
+  if (to - from < 12 || !(noise > 0.4 * step) || !(noise > 0)) return null
+  const level = values[from + Math.floor((to - from) / 2)]!
+  let equal = 0
+  for (let k = from; k < to; k++) if (values[k] === level) equal += 1
+  if (equal < 0.95 * (to - from)) return null
+  for (let k = 0; k < values.length; k++)
+    if (Math.abs(values[k]!) > Math.abs(level) && values[k]! * level > 0) return null
+  return { at: level, samples: equal }
+}
+
+/** Step of the converter: the smallest difference between neighbouring samples that are not equal. */
+export function quantum(values: Float64Array, from: number, to: number): number {
+  let smallest = Number.POSITIVE_INFINITY
+  for (let k = Math.max(1, from); k < to; k++) {
+    const difference = Math.abs(values[k]! - values[k - 1]!)
+    if (difference > 0 && difference < smallest) smallest = difference
+  }
+  return Number.isFinite(smallest) ? smallest : 0
+}
+
+/** Step of the converter from a whole capture. */
+export function channelQuantum(waveform: Waveform): number {
+  return quantum(waveform.current, 1, Math.min(waveform.current.length, 20_000))
+}
+
+/** Standard deviation of one raw sample from the differences of neighbours over a stretch that is quiet otherwise. */
+export function sampleNoise(values: Float64Array, from: number, to: number): number {
+  let sum = 0
+  const count = to - from - 1
+  for (let k = from + 1; k < to; k++) sum += (values[k]! - values[k - 1]!) ** 2
+  return count > 0 ? Math.sqrt(sum / count / 2) : 0
+}

@@ -1,0 +1,150 @@
+/** Where the first reversal stands in a capture: sample numbers, and levels good to some percent. */
+export interface LocatedEvent {
+  /** The channel showed reverse current as positive. */
+  readonly inverted: boolean
+  /** Reversals in the record. */
+  readonly events: number
+  /** First sample of the forward conduction. */
+  readonly first: number
+  /** The start of the conduction is in the record, not before it. */
+  readonly startVisible: boolean
+  /** Last sample of the fall above half the forward current. */
+  readonly edge: number
+  /** First sample below the baseline. */
+  readonly crossing: number
+  /** Lowest sample. */
+  readonly peak: number
+  /** Last sample below half the reverse peak. */
+  readonly half: number
+  /** First sample above a quarter of the reverse peak after `half`. */
+  readonly quarter: number
+  /** End of the record, or of what belongs to this event. */
+  readonly last: number
+  readonly forward: number
+  readonly base: number
+  /** Lowest reading. */
+  readonly lowest: number
+}
+
+/**
+ * Finds the first fall from forward conduction to reverse current by the record's largest swing.
+ * Null where nothing falls: a record without an event.
+ */
+export function locateEvent(current: Float64Array): LocatedEvent | null {
+  const down = largestFall(current, 1)
+  const up = largestFall(current, -1)
+  if (!(Math.max(down.size, up.size) > 0)) return null
+  const inverted = up.size > 1.05 * down.size || (up.size > 0.97 * down.size && up.length < 0.3 * down.length)
+  const sign = inverted ? -1 : 1
+  const fall = inverted ? up : down
+  const levels = roughLevels(current, sign, fall)
+  return findFirst(current, sign, levels, inverted)
+}
+
+interface Fall {
+  readonly size: number
+  readonly length: number
+  readonly high: number
+  readonly low: number
+}
+
+/** Largest drop from a maximum to a later minimum of sign × current. */
+function largestFall(current: Float64Array, sign: 1 | -1): Fall {
+  let high = Number.NEGATIVE_INFINITY
+  let highIndex = 0
+  let best: Fall = { size: 0, length: 0, high: 0, low: 0 }
+  for (let k = 0; k < current.length; k++) {
+    const value = sign * current[k]!
+    if (value >= high) {
+      high = value
+      highIndex = k
+    } else if (high - value > best.size) {
+      best = { size: high - value, length: k - highIndex, high, low: value }
+    }
+  }
+  return best
+}
+
+interface Levels {
+  readonly base: number
+  readonly high: number
+  readonly low: number
+  readonly quarter: number
+}
+
+/** The quiet end gives the baseline, as far as an oscilloscope's zero may be believed to be off. */
+function roughLevels(current: Float64Array, sign: number, fall: Fall): Levels {
+  const from = Math.floor(0.95 * current.length)
+  let sum = 0
+  for (let k = from; k < current.length; k++) sum += sign * current[k]!
+  const limit = 0.15 * fall.size
+  const base = Math.min(limit, Math.max(-limit, sum / Math.max(1, current.length - from)))
+  const reverse = Math.max(base - fall.low, 0.02 * fall.size)
+  return {
+    base,
+    high: base + 0.5 * (fall.high - base),
+    low: base - 0.5 * reverse,
+    quarter: base - 0.25 * reverse,
+  }
+}
+
+function findFirst(current: Float64Array, sign: number, levels: Levels, inverted: boolean): LocatedEvent | null {
+  const count = current.length
+  let events = 0
+  let lastHigh = -1
+  let armed = false
+  let edge = -1
+  let below = -1
+  let last = count
+  for (let k = 0; k < count; k++) {
+    const value = sign * current[k]!
+    if (value >= levels.high) {
+      if (events > 0 && last === count) last = k
+      lastHigh = k
+      armed = true
+    } else if (value <= levels.low && armed) {
+      armed = false
+      events += 1
+      if (events > 1) continue
+      edge = lastHigh
+      below = k
+    }
+  }
+  if (edge < 0) return null
+  const quiet = 0.1 * (levels.high - levels.base)
+  if (last < count) while (last > below + 1 && Math.abs(sign * current[last - 1]! - levels.base) > quiet) last -= 1
+  return { inverted, events, edge, last, ...around(current, sign, levels, edge, below, last) }
+}
+
+function around(current: Float64Array, sign: number, levels: Levels, edge: number, below: number, last: number) {
+  let first = edge
+  const off = levels.base + 0.5 * (levels.high - levels.base)
+  while (first > 0 && sign * current[first - 1]! >= off) first -= 1
+  let crossing = edge + 1
+  while (crossing < below && sign * current[crossing]! > levels.base) crossing += 1
+  let peak = below
+  let half = below
+  let k = below
+  for (; k < last; k++) {
+    const value = sign * current[k]!
+    if (value < sign * current[peak]!) peak = k
+    if (value <= levels.low) half = k
+    if (value > levels.quarter && k - half > 0.1 * (half - crossing) + 3) break
+  }
+  let quarter = half + 1
+  while (quarter < last && sign * current[quarter]! <= levels.quarter) quarter += 1
+  let sum = 0
+  const from = Math.max(first, edge - 50)
+  for (let j = from; j <= edge; j++) sum = Math.max(sum, sign * current[j]!)
+  return {
+    first,
+    startVisible: first > 0,
+    crossing,
+    peak,
+    half,
+    quarter,
+    forward: sum - levels.base,
+    base: levels.base,
+    lowest: sign * current[peak]!,
+  }
+}

@@ -1,0 +1,167 @@
+import type { CaptureCaveat, CaptureTrace, NothingMeasurable, ReducedCapture } from '../domain/capture.ts'
+import { type CaptureContext, instrumentTime, resolution } from './capture-context.ts'
+import { correctSkew } from './correct-skew.ts'
+import { type EventWindow, eventWindow } from './event-window.ts'
+import { lineAt } from './fit-line.ts'
+import { type FittedRamp, fitRamp, type WindowMarks } from './fit-ramp.ts'
+import { rampDefects } from './ramp-defects.ts'
+import { type RampFigures, rampFigures } from './ramp-figures.ts'
+import { reverseCurrentAt } from './recovery-curve.ts'
+import { type RecoveryEnergy, recoveryEnergy } from './recovery-energy.ts'
+import { resampleRamp } from './resample-ramp.ts'
+import { rowSpread } from './row-spread.ts'
+
+/** Reduces a commutation at a set slope (PHYSICS: measured captures). */
+export function reduceRamp(given: CaptureContext): ReducedCapture {
+  const voltageSign = signOfVoltage(given)
+  const context = { ...given, waveform: correctSkew(given.waveform, given.settings.currentDelay) }
+  const { settings } = context
+  const window = eventWindow(context.waveform, context.event, 'ramp', voltageSign)
+  const marks = marksIn(window, context)
+  const conditions = { instrument: instrumentTime(settings) }
+  const ramp = fitRamp(window, marks, conditions)
+  const figures = rampFigures(window, ramp, settings.recoveryTimeBy, settings.chargeUntil)
+  const energy = recoveryEnergy(window, ramp)
+  const shared = { offset: ramp.fitted.base, noise: ramp.fitted.noise, trace: traceOf(window, ramp) }
+  const nothing = nothingMeasurable(context, ramp, figures)
+  if (nothing !== null)
+    return { figures: nothing, spread: {}, rowSpread: 0, caveats: general(context, voltageSign), ...shared }
+  const { endDoubt: _, ...plain } = figures
+  const spread = rampSpread(context, window, marks, ramp, figures, energy)
+  return {
+    figures: { kind: 'ramp', ...plain, voltage: energy?.voltage ?? null, energy: energy?.energy ?? null },
+    spread,
+    rowSpread: rowSpread([spread.recoveryTime!, spread.charge!, spread.peakReverseCurrent!]),
+    caveats: [...general(context, voltageSign), ...rampDefects(context, window, ramp, figures, energy)],
+    ...shared,
+  }
+}
+
+/** Caveats that need no fit. */
+export function general(context: CaptureContext, voltageSign: 1 | -1): readonly CaptureCaveat[] {
+  const { event, settings, fixture } = context
+  const found: CaptureCaveat[] = []
+  if (event.inverted) found.push({ code: 'wrong-sign', data: { channel: 'current' } })
+  if (voltageSign < 0) found.push({ code: 'wrong-sign', data: { channel: 'voltage' } })
+  if (event.events > 1) found.push({ code: 'several-events', data: { events: event.events } })
+  if (fixture !== null && !fixture.subtracted && settings.fixture === 'ramp')
+    found.push({ code: 'reference-not-subtracted', data: {} })
+  if (settings.device.junction === null) found.push({ code: 'junction-assumed', data: {} })
+  return found
+}
+
+/** A reverse voltage is higher after the event than before it; the other way round the channel is turned. */
+export function signOfVoltage({ waveform, event }: CaptureContext): 1 | -1 {
+  const { voltage } = waveform
+  if (voltage === null) return 1
+  const mean = (from: number, to: number) => {
+    let sum = 0
+    for (let k = from; k < to; k++) sum += voltage[k]!
+    return sum / Math.max(1, to - from)
+  }
+  return mean(event.quarter, event.last) < mean(event.first, event.edge) ? -1 : 1
+}
+
+/** The first look's sample numbers in the averaged window. */
+export function marksIn(window: EventWindow, { waveform, event }: CaptureContext): WindowMarks {
+  const at = (k: number) =>
+    Math.min(
+      window.time.length - 1,
+      Math.max(0, Math.floor((waveform.start + k * waveform.interval - window.time[0]!) / window.interval + 0.5)),
+    )
+  return {
+    edge: at(event.edge),
+    crossing: at(event.crossing),
+    peak: Math.max(at(event.peak), at(event.crossing) + 1),
+    half: at(event.half),
+    quarter: Math.max(at(event.quarter), at(event.half) + 1),
+    forward: event.forward,
+    base: event.base,
+    lowest: event.lowest,
+  }
+}
+
+/** Reverse peaks below this share of the forward current are the fixture's. */
+const leastPeak = 0.02
+
+function nothingMeasurable(context: CaptureContext, ramp: FittedRamp, figures: RampFigures): NothingMeasurable | null {
+  const seen = figures.peakReverseCurrent > Math.max(5 * ramp.fitted.noise, leastPeak * figures.current)
+  const lasts = figures.timeToPeak + ramp.fitted.curve.tailTime > 1.5 * resolution(context)
+  if (seen && lasts) return null
+  const peak = Math.max(figures.peakReverseCurrent, 5 * ramp.fitted.noise)
+  const time = Math.max(resolution(context), figures.timeToPeak + 2 * ramp.fitted.curve.tailTime)
+  return {
+    kind: 'none-measurable',
+    fixture: 'ramp',
+    current: figures.current,
+    peakReverseCurrent: peak,
+    chargeUpperBound: Math.max(0.5 * peak * time, figures.chargeByEnd.at(-1)!.charge),
+    timeUpperBound: time,
+  }
+}
+
+/** Noise by resampling, then bandwidth and end rule, as independent parts. */
+function rampSpread(
+  context: CaptureContext,
+  window: EventWindow,
+  marks: WindowMarks,
+  ramp: FittedRamp,
+  figures: RampFigures,
+  energy: RecoveryEnergy | null,
+): Readonly<Record<string, number>> {
+  const { settings } = context
+  const conditions = { instrument: instrumentTime(settings) }
+  const noise = resampleRamp({
+    window,
+    marks,
+    conditions,
+    ramp,
+    figures,
+    definition: settings.recoveryTimeBy,
+    chargeUntil: settings.chargeUntil,
+    uniform: context.uniform,
+  })
+  // the same event with nothing, or everything, of the rounding taken out
+  const other = settings.bandwidth === null ? { ...ramp.curve, rounding: 0 } : ramp.fitted.curve
+  const crossing = ramp.crossing + ramp.curve.rounding - other.rounding
+  const without = rampFigures(
+    window,
+    { ...ramp, curve: other, crossing },
+    settings.recoveryTimeBy,
+    settings.chargeUntil,
+  )
+  const ends = figures.chargeByEnd.map((row) => row.charge)
+  const spread: Record<string, number> = {}
+  for (const [name, value] of Object.entries(noise)) {
+    const key = name as keyof typeof noise
+    const bandwidth = 0.5 * (without[key] / figures[key] - 1)
+    const end = key === 'charge' ? 0.5 * (1 - figures.charge / ends.at(-1)!) : timesEnd[key] ? figures.endDoubt : 0
+    spread[name] = Math.hypot(value, bandwidth, end)
+  }
+  if (energy !== null) spread.energy = Math.hypot(spread.charge!, 0.01)
+  if (energy !== null) spread.voltage = 0.01
+  return spread
+}
+
+/** Figures that move with the end of the recovery time. */
+const timesEnd: Readonly<Record<string, boolean>> = { recoveryTime: true, fallTime: true, softness: true }
+
+/** The event for plots: from one ramp time before the ramp to eight tail times after the peak. */
+function traceOf(window: EventWindow, ramp: FittedRamp): CaptureTrace {
+  const { curve, base } = ramp.fitted
+  const lead = 0.6 * (ramp.crossing - ramp.onset)
+  const kept: number[] = []
+  for (let k = 0; k < window.time.length; k++) {
+    if (window.time[k]! > ramp.onset - lead && window.time[k]! < curve.corner + 6 * curve.tailTime) kept.push(k)
+  }
+  return {
+    time: Float64Array.from(kept, (k) => window.time[k]! - ramp.crossing),
+    current: Float64Array.from(kept, (k) => window.current[k]! - base),
+    fitted: Float64Array.from(kept, (k) => {
+      const t = window.time[k]!
+      if (t < ramp.onset) return lineAt(ramp.plateau, t) - base
+      return t < curve.corner ? lineAt(ramp.line, t) - base : -reverseCurrentAt(curve, t)
+    }),
+    voltage: window.voltage === null ? null : Float64Array.from(kept, (k) => window.voltage![k]!),
+  }
+}
