@@ -36,13 +36,21 @@ function tableNote(ranked: readonly CandidateResult[]): string {
 function doubtBlocks({ verdict }: RankResult): Block[] {
   const sensitivity = (verdict.sensitivity ?? []).map(({ input, share }) => ({
     lead: null,
-    text: `${input}: ${significant(share * 100, 2)} %`,
+    text: `${sharedInputs[input] ?? input}: ${significant(share * 100, 2)} %`,
   }))
   const measure = (verdict.measure_next ?? []).map((next) => ({ lead: null, text: `${capital(measureWords(next))}.` }))
   return [
     ...listBlock('Measure next', 'plain', measure),
     ...listBlock('Sensitivity: share of the variance of the gap', 'plain', sensitivity),
   ]
+}
+
+/** Inputs that all candidates share, as an engineer calls them; those of a part already name it. */
+const sharedInputs: Readonly<Record<string, string>> = {
+  slope: 'current slope of the stage',
+  voltage_fall: 'voltage fall time of the switch',
+  thermal: 'thermal resistances',
+  turn_on: 'what the measured turn-on energy contains',
 }
 
 function capital(text: string): string {

@@ -76,18 +76,21 @@ function fittingWidths(table: Table, width: number, narrowest: number | null): n
   if (total(whole) <= width) return whole
   const widths = naturalWidths(table, true)
   if (total(widths) <= width) return widths
-  if (narrowest === null) return null
-  for (const index of textColumns(table, widths)) {
-    const least = Math.max(narrowest, headerWidth(table.columns[index]!, true))
-    widths[index]! -= Math.max(0, Math.min(total(widths) - width, widths[index]! - least))
-  }
-  return total(widths) <= width ? widths : null
+  return narrowest === null ? null : narrowed(table, widths, width, narrowest)
 }
 
-/** Text columns, widest first. */
-function textColumns(table: Table, widths: readonly number[]): number[] {
-  const indices = table.columns.flatMap(({ numeric }, index) => (numeric ? [] : [index]))
-  return indices.sort((a, b) => widths[b]! - widths[a]!)
+/** Takes from the widest text column, one character at a time, until the table fits. */
+function narrowed(table: Table, widths: number[], width: number, narrowest: number): number[] | null {
+  const least = table.columns.map((column, index) =>
+    column.numeric ? widths[index]! : Math.max(narrowest, headerWidth(column, true)),
+  )
+  while (total(widths) > width) {
+    const spare = widths.map((size, index) => (size > least[index]! ? size : 0))
+    const widest = spare.indexOf(Math.max(...spare))
+    if (spare[widest] === 0) return null
+    widths[widest]! -= 1
+  }
+  return widths
 }
 
 function naturalWidths(table: Table, broken: boolean): number[] {
@@ -106,7 +109,7 @@ export function headerLines({ title, unit }: Column, width: number): string[] {
     const whole = word.replaceAll('\u00AD', '')
     if (textWidth(whole) <= width) return [whole]
     const parts = word.split('\u00AD')
-    return parts.map((part, index) => (index < parts.length - 1 ? `${part}-` : part))
+    return parts.map((part, index) => (index < parts.length - 1 && !part.endsWith('-') ? `${part}-` : part))
   })
   return unit === null ? lines : [...lines, unit]
 }

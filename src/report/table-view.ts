@@ -98,7 +98,10 @@ export function plainTitle(title: string): string {
 
 /** A table in which a column that stands in two groups (the total) stands once. */
 export function distinctColumns(table: Table): Table {
-  const first = (index: number) => table.columns.findIndex(({ title }) => title === table.columns[index]!.title)
+  const first = (index: number) =>
+    table.columns.findIndex(
+      ({ title, unit }) => title === table.columns[index]!.title && unit === table.columns[index]!.unit,
+    )
   return pickColumns(table, (index) => first(index) === index)
 }
 

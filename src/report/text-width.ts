@@ -27,6 +27,13 @@ const wideRanges: readonly (readonly [number, number])[] = [
 
 /** Lines no wider than `width`, broken at spaces, and inside a word only where it would not fit a line by itself. */
 export function wrapText(text: string, width: number): string[] {
+  return wrapWords(text.replace(unitGap, '$1\u00A0'), width).map((line) => line.replaceAll('\u00A0', ' '))
+}
+
+/** A number is not torn from its unit. */
+const unitGap = /(\d) (?=(?:[GMkmµnp]?(?:V|A|W|s|C|F|J|H|Hz|Ω|K)|%|°C|A\/µs|K\/W|kWh)(?![\p{L}\d]))/gu
+
+function wrapWords(text: string, width: number): string[] {
   const lines: string[] = []
   let line = ''
   for (const word of text.split(' ')) {

@@ -1,6 +1,6 @@
 import type { Crossing, SlopeStudy, TrendCandidate, TrendKey, TrendResult } from '../domain/study.ts'
 import { closingBlocks, drawsFact, listBlock, stageFacts, titleOf, withCautions } from './common-view.ts'
-import { quantity } from './format.ts'
+import { decimalsFor, fixed, quantity } from './format.ts'
 import { type ColumnSpec, numberColumn, tableOf, textColumn } from './table-view.ts'
 import type { Block, ReportView } from './view-types.ts'
 import { edgeWords, limitWords, positionWords, trendAxes } from './words/trend-words.ts'
@@ -16,6 +16,7 @@ export function trendView(trend: TrendResult): ReportView {
       table: tableOf(cheapestColumns(trend.over), trend.points),
       note: null,
     },
+    { kind: 'table', heading: 'Part by part', table: tableOf(partColumns(trend), trend.points), note: partNote },
     ...listBlock('Crossings', 'plain', crossingItems(trend)),
     ...listBlock('Limits', 'plain', limitItems(trend)),
     ...listBlock('Slope', 'plain', (trend.slope ?? []).map(slopeItem)),
@@ -25,6 +26,8 @@ export function trendView(trend: TrendResult): ReportView {
   const data = withCautions(tableOf(pointColumns(trend.over), points), trend.cautions)
   return { title: titleOf(trend.stage, `trend over ${trendAxes[trend.over].name}`), blocks, data }
 }
+
+const partNote = 'In parentheses: the part is not acceptable there. None: it has no stable temperature.'
 
 type Point = TrendResult['points'][number]
 
@@ -48,6 +51,41 @@ function cheapestColumns(over: TrendKey): readonly ColumnSpec<Point>[] {
     numberColumn('gap', 'W', group, (point) => gapOf(point), { family: 'stage' }),
     numberColumn('accept\u00ADed', '', group, (point) => ranked(point).length, { decimals: 0 }),
   ]
+}
+
+/** Stage loss and junction of every part, a column each. */
+function partColumns({ over, points }: TrendResult): readonly ColumnSpec<Point>[] {
+  const names = points[0]?.candidates.map(({ id }) => id) ?? []
+  const column = (
+    id: string,
+    unit: string,
+    group: string,
+    value: (part: TrendCandidate) => number | null,
+    decimals?: number,
+  ) => {
+    const find = (point: Point) => point.candidates.find((candidate) => candidate.id === id)
+    const read = (point: Point) => {
+      const part = find(point)
+      return part === undefined ? null : value(part)
+    }
+    const digits = decimals ?? decimalsFor(points.map(read))
+    // the soft hyphen lets a narrow table break a long id after its hyphens
+    const title = id.replaceAll('-', '-\u00AD')
+    return numberColumn(title, unit, group, read, {
+      decimals: digits,
+      words: (point) => bracketed(find(point), read(point), digits),
+    })
+  }
+  return [
+    axisColumn(over),
+    ...names.map((id) => column(id, 'W', 'Stage loss', ({ stage_loss_w }) => stage_loss_w)),
+    ...names.map((id) => column(id, '°C', 'Junction', ({ junction_c }) => junction_c, 0)),
+  ]
+}
+
+function bracketed(part: TrendCandidate | undefined, value: number | null, decimals: number): string | null {
+  if (part === undefined || part.thermal === 'none') return 'none'
+  return part.accepted || value === null ? null : `(${fixed(value, decimals)})`
 }
 
 function ranked({ candidates }: Point): TrendCandidate[] {

@@ -63,7 +63,7 @@ export function lineChart(data: LineChartData): string {
     label(12, 22, data.title, { bold: true, size: 14 }),
     x.markup,
     y.markup,
-    ...marks.map((mark, row) => markMarkup(mark, row, x, box)),
+    ...marks.map((mark, row) => markMarkup(mark, row, x, box, width)),
     ...bodies,
     ...rings,
     ...nameLabels(data.series, ends, box),
@@ -154,14 +154,14 @@ function nameLabels(series: readonly LineSeries[], ends: readonly ReturnType<typ
     const colour = colourOf(end.style)
     const leader = `M${pixels(end.x)} ${pixels(end.y)}L${pixels(box.right + 6)} ${pixels(place)}`
     return [
-      element('path', { d: leader, stroke: colour, 'stroke-width': 0.7, fill: 'none' }),
+      element('path', { d: leader, stroke: colour, 'stroke-width': 0.9, 'stroke-dasharray': '1 3', fill: 'none' }),
       marker(end.style, box.right + 10, place, colour, 28),
       label(box.right + 18, place + 4, name, { size: 11, fill: colour, rim: true }),
     ]
   })
 }
 
-function markMarkup(mark: LineMark, row: number, x: Axis, box: Box): string {
+function markMarkup(mark: LineMark, row: number, x: Axis, box: Box, width: number): string {
   const at = x.place(mark.x)
   const y = 38 + 15 * row
   const clamp = (value: number) => Math.min(box.right, Math.max(box.left, x.place(value)))
@@ -175,7 +175,9 @@ function markMarkup(mark: LineMark, row: number, x: Axis, box: Box): string {
           'stroke-width': 3,
           'stroke-opacity': 0.45,
         })
-  const right = at + 8 + labelWidth(mark.text, 11) > box.right + 90
+  // on the right of its line, else on the left, else wherever it fits: each mark has a row of its own
+  const wide = labelWidth(mark.text, 11)
+  const start = at + 7 + wide < width ? at + 7 : at - 7 - wide > 4 ? at - 7 - wide : Math.max(4, width - wide - 4)
   return [
     element('line', {
       x1: at,
@@ -188,7 +190,7 @@ function markMarkup(mark: LineMark, row: number, x: Axis, box: Box): string {
     }),
     interval,
     element('circle', { cx: at, cy: y, r: 3, class: 'chart-ink-fill', fill: ink }),
-    label(right ? at - 7 : at + 7, y + 4, mark.text, { size: 11, anchor: right ? 'end' : 'start', rim: true }),
+    label(start, y + 4, mark.text, { size: 11, rim: true }),
   ].join('')
 }
 

@@ -101,7 +101,7 @@ export function trendMarks(trend: TrendResult): LineMark[] {
       x: at * scale,
       low: scaled(low),
       high: scaled(high),
-      text: `${positionWords(trend.over, at)}: from here ${to} is cheaper than ${from}`,
+      text: `${positionWords(trend.over, at)}: above it ${to} is cheaper than ${from}`,
     })),
     ...trend.limits.map(({ id, at, why }) => ({
       x: at * scale,

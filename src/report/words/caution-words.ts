@@ -26,7 +26,7 @@ export const cautionWords: Readonly<Record<CautionCode, string>> = {
     'Work on it is for qualified persons who are licensed where the law asks for it, under the local code and with a second person present.',
   'bulk-capacitor':
     'The bulk capacitor stays charged after switching off[: {capacitance:F} at {voltage:V} hold {energy:J}|; its capacitance is not given, so neither time nor energy can be stated]' +
-    '[. Its bleeder of {bleeder:ohm} takes {time:s} to bring it down to {until:V}|. Its bleeder of {bleeder:ohm} takes {time:s} to bring it down to 60 V|. No bleeder is given: take it to stay charged for hours]. ' +
+    '[. Its voltage stays below {below:V}, yet a short circuit burns and welds|. Its bleeder of {bleeder:ohm} takes {time:s} to bring it down to {until:V}|. No bleeder is given: take it to stay charged for hours]. ' +
     'Isolate, discharge and measure before touching; a bleeder can have failed.',
   'isolated-probing':
     'Probe with differential or isolated probes rated for the voltage. A grounded probe on the switching node or on a mains-fed ground destroys it and endangers people.',

@@ -7,7 +7,7 @@ import type { CaveatCode } from '../../domain/caveat.ts'
 export const warningWords: Readonly<Record<CaveatCode, string>> = {
   // evidence: the record against itself
   'row-impossible':
-    'The figures of [{row}|a recovery row] cannot belong to one event[: {found} against a bound of {bound}]. ' +
+    'The figures of [{row}|a row] cannot all be right[: {found} against a bound of {bound}]. ' +
     'The row is used without the culprit; look it up again in its source.',
   'row-inconsistent':
     'In [{row}|a recovery row] the third figure is off by [{difference:%}|more than 15 %] from what the other two give. ' +
@@ -102,10 +102,10 @@ export const warningWords: Readonly<Record<CaveatCode, string>> = {
     'The measured turn-on energy holds the recovery of a rectifier that is not recorded: nothing is added to the switch, so all candidates ' +
     'look alike there. Name the rectifier of that measurement (turn_on.rectifier).',
   'turn-on-unknown':
-    'It is not known whether the measured turn-on energy holds a recovery: the higher reading is used and both are drawn. ' +
+    'It is not known whether the measured turn-on energy holds a recovery: the reading with the higher loss is used and both are drawn. ' +
     'Find out from the test circuit and set includes_rectifier.',
   'turn-on-floor':
-    'Taking the test rectifier out of the measured turn-on energy leaves less than nothing[ ({given:J} less {subtracted:J})]; 0 is used. ' +
+    'Taking the test rectifier out of the measured turn-on energy leaves less than nothing[ ({given:J} less {contained:J})]; 0 is used. ' +
     "Check the energy, its condition and the test rectifier's record.",
   'turn-on-rectifier-missing':
     'The rectifier of the measured turn-on energy[ ({rectifier})] is not among the records, so its recovery stays inside. Add its record.',

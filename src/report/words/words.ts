@@ -36,7 +36,19 @@ export function isSwap(result: AnyResult): result is SwapResult {
 }
 
 export function warningText({ code, data }: Pick<Warning, 'code' | 'data'>): string {
-  return worded(isCaveat(code) ? warningWords : {}, code, data)
+  const named = typeof data.figure === 'string' ? { ...data, figure: figureNames[data.figure] ?? data.figure } : data
+  return worded(isCaveat(code) ? warningWords : {}, code, named)
+}
+
+/** Keys of the document as an engineer calls them. */
+const figureNames: Readonly<Record<string, string>> = {
+  'event.qrr_c': 'Qrr',
+  event: 'The recovery',
+  'event.peak_reverse_a': 'I_RM',
+  'losses_w.conduction': 'The forward voltage',
+  forward_v: 'The forward voltage',
+  'losses_w.leakage': 'The leakage',
+  'losses_w.capacitive': 'The capacitance',
 }
 
 function isCaveat(code: string): code is CaveatCode {
@@ -44,7 +56,9 @@ function isCaveat(code: string): code is CaveatCode {
 }
 
 export function cautionText({ code, data }: Pick<Caution, 'code' | 'data'>): string {
-  return worded(cautionWords, code, data)
+  // a capacitor that never exceeds the limit has nothing to discharge to
+  const never = code === 'bulk-capacitor' && data.time === 0
+  return worded(cautionWords, code, { until: 60, ...data, ...(never ? { below: data.until ?? 60 } : {}) })
 }
 
 export function notCoveredText(entry: string): string {
