@@ -1,7 +1,7 @@
 import type { ThermalOutcome } from '../domain/result.ts'
 
 /** Why a part is rejected. */
-export type RejectionCode =
+type RejectionCode =
   | 'voltage-margin'
   | 'average-current'
   | 'thermal-path-missing'

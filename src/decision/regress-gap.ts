@@ -11,7 +11,7 @@ export interface GapInput {
 }
 
 /** What one input does to the gap. */
-export interface GapPart {
+interface GapPart {
   readonly name: string
   /** Variance of the gap's component that depends on this input alone. [W²] */
   readonly variance: number

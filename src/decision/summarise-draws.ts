@@ -5,7 +5,7 @@ import { lostShare } from './odds.ts'
 /** Share of draws between `low` and `high` of every interval. */
 export const intervalLevel = 0.9
 /** The ends of the interval as quantiles. */
-export const intervalEnds = { low: (1 - intervalLevel) / 2, high: (1 + intervalLevel) / 2 } as const
+const intervalEnds = { low: (1 - intervalLevel) / 2, high: (1 + intervalLevel) / 2 } as const
 
 /** What the draws of one candidate say about it. */
 export interface DrawSummary {
