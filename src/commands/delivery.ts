@@ -2,7 +2,9 @@ import { extname } from 'node:path'
 import { didYouMean } from '../problems/nearest.ts'
 import { failure } from './failure.ts'
 
-export type OutputFormat = 'table' | 'json' | 'csv' | 'markdown' | 'html' | 'svg'
+/** The forms of a study's result. */
+export const resultForms = ['table', 'json', 'csv', 'markdown', 'html', 'svg'] as const
+export type OutputFormat = (typeof resultForms)[number]
 
 /** The options that say in which form a result goes where. */
 export interface OutputOptions {
@@ -60,9 +62,8 @@ function formatOfTarget(target: string, asked: OutputFormat | undefined): Output
 
 function notOffered(format: OutputFormat, target: string | null, offered: readonly OutputFormat[]) {
   const extensions = Object.entries(formatOfExtension).filter(([, value]) => offered.includes(value))
-  const hint = format === 'html' ? 'ebbwatt review writes the document' : ''
   const wanted = `one of ${extensions.map(([extension]) => extension).join(' ')}`
-  return unusable(target === null ? `--${format}` : '-o', `this command does not write ${format}`, wanted, hint)
+  return unusable(target === null ? `--${format}` : '-o', `this command does not write ${format}`, wanted)
 }
 
 function unusable(path: string, found: string, expected: string, hint = '') {

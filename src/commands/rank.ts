@@ -1,7 +1,7 @@
 import { words } from '../report/words/words.ts'
 import { rank } from '../study/rank.ts'
 import { deliverResult } from './deliver.ts'
-import { chooseDelivery } from './delivery.ts'
+import { chooseDelivery, resultForms } from './delivery.ts'
 import { exitCodeOf } from './exit-code.ts'
 import { readStudy, type StudyOptions } from './read-study.ts'
 import { checkTarget } from './replace-file.ts'
@@ -10,7 +10,7 @@ import { studyStage } from './study-stage.ts'
 
 /** `ebbwatt rank STAGE` */
 export async function runRank(stagePath: string, options: StudyOptions, session: Session): Promise<number> {
-  const delivery = chooseDelivery(options, ['table', 'json', 'csv', 'markdown', 'svg'])
+  const delivery = chooseDelivery(options, resultForms)
   const { stage, records, settings, files } = readStudy(stagePath, options, session)
   if (delivery.target !== null) checkTarget(delivery.target, files)
   const result = words(await studyStage(stagePath, session, () => rank(stage, records, settings)))

@@ -15,10 +15,11 @@ export async function renderResult(
       return (await import('../report/render-csv.ts')).renderCsv(result)
     case 'markdown':
       return (await import('../report/render-markdown.ts')).renderMarkdown(result)
+    case 'html':
+      return (await import('../report/render-html.ts')).renderHtml(result)
+    case 'svg':
+      return (await import('../report/charts/render-chart.ts')).renderChart(result)
     case 'table':
       return (await import('../report/render-table.ts')).renderTable(result, look)
-    case 'svg':
-    case 'html':
-      throw new Error('the review document is not a form of a result')
   }
 }

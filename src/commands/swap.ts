@@ -1,7 +1,7 @@
 import { words } from '../report/words/words.ts'
 import { swap } from '../study/swap.ts'
 import { deliverResult } from './deliver.ts'
-import { chooseDelivery } from './delivery.ts'
+import { chooseDelivery, resultForms } from './delivery.ts'
 import { exitCodeOf } from './exit-code.ts'
 import { failure } from './failure.ts'
 import { readStudy, type StudyOptions } from './read-study.ts'
@@ -16,7 +16,7 @@ export interface SwapOptions extends StudyOptions {
 
 /** `ebbwatt swap STAGE --from ID --to ID` */
 export async function runSwap(stagePath: string, options: SwapOptions, session: Session): Promise<number> {
-  const delivery = chooseDelivery(options, ['table', 'json', 'csv', 'markdown'])
+  const delivery = chooseDelivery(options, resultForms)
   const { stage, records, settings, files } = readStudy(stagePath, options, session)
   if (delivery.target !== null) checkTarget(delivery.target, files)
   const from = options.from ?? stage.incumbent

@@ -5,7 +5,7 @@ import { didYouMean } from '../problems/nearest.ts'
 import { words } from '../report/words/words.ts'
 import { trend } from '../study/trend.ts'
 import { deliverResult } from './deliver.ts'
-import { chooseDelivery } from './delivery.ts'
+import { chooseDelivery, resultForms } from './delivery.ts'
 import { failure } from './failure.ts'
 import { readStudy, type StudyOptions } from './read-study.ts'
 import { checkTarget } from './replace-file.ts'
@@ -22,7 +22,7 @@ export interface TrendOptions extends StudyOptions {
 
 /** `ebbwatt trend STAGE --over QUANTITY --from X --to Y` */
 export async function runTrend(stagePath: string, options: TrendOptions, session: Session): Promise<number> {
-  const delivery = chooseDelivery(options, ['table', 'json', 'csv', 'markdown', 'svg'])
+  const delivery = chooseDelivery(options, resultForms)
   const request = readRequest(options)
   const { stage, records, settings, files } = readStudy(stagePath, options, session)
   if (delivery.target !== null) checkTarget(delivery.target, files)
