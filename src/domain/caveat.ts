@@ -52,6 +52,7 @@ export const caveatCodes = [
   'order-differs-at-mains',
   'order-differs-at-load',
   'thermal-lost',
+  'profile-unsettled',
 ] as const
 
 export type CaveatCode = (typeof caveatCodes)[number]

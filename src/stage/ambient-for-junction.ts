@@ -81,7 +81,10 @@ export function lowestSettledJunction(kernel: Kernel): number | null {
     const highValue = excess(high)
     if (!Number.isFinite(highValue)) return null
     if (highValue >= 0) return refine(excess, low, high)
-    const peak = highValue < lowValue ? highestBetween(excess, reference + span * (Math.max(k - 2, 0) / scanPoints) ** 2, high) : null
+    const peak =
+      highValue < lowValue
+        ? highestBetween(excess, reference + span * (Math.max(k - 2, 0) / scanPoints) ** 2, high)
+        : null
     if (peak !== null && peak.value >= 0) return refine(excess, reference, peak.at)
     if (peak !== null) return null
     low = high

@@ -1,5 +1,10 @@
 import { baseEnergy } from '../models/commutation-energy.ts'
-import { chordConductionPower, forwardDrop, forwardDropUsable, trapezoidConductionPower } from '../models/forward-drop.ts'
+import {
+  chordConductionPower,
+  forwardDrop,
+  forwardDropUsable,
+  trapezoidConductionPower,
+} from '../models/forward-drop.ts'
 import { gateDrivenSlope } from '../models/gate-slope.ts'
 import { type Kernel, type PartState, type RecoveryEvent, row } from './kernel.ts'
 import { leakageAt } from './part-at-temperature.ts'
@@ -21,6 +26,12 @@ const gate = {
 
 /** Turn-on di/dt at a current: given or from the gate drive, times the draw's factor, at most V/L_loop. [A/s] */
 export function slopeAt(kernel: Kernel, current: number): number {
+  const slope = statedSlopeAt(kernel, current) * kernel.slopeFactor
+  return kernel.loopInductance > 0 ? Math.min(slope, kernel.instant.blockingVoltage / kernel.loopInductance) : slope
+}
+
+/** Turn-on di/dt as stated or as the gate drive sets it, before draw and loop. [A/s] */
+export function statedSlopeAt(kernel: Kernel, current: number): number {
   let slope = kernel.slope
   if (kernel.gate !== null) {
     gate.drive = kernel.gate.drive
@@ -33,8 +44,6 @@ export function slopeAt(kernel: Kernel, current: number): number {
     gate.current = current
     slope = gateDrivenSlope(gate)
   }
-  slope *= kernel.slopeFactor
-  if (kernel.loopInductance > 0) slope = Math.min(slope, kernel.instant.blockingVoltage / kernel.loopInductance)
   return slope
 }
 
@@ -68,7 +77,9 @@ function bookPart(
   const forward = forwardRecoveryPower(kernel, state, share, slope)
   const inRectifier = event.rectifierEnergy * frequency
   const cost =
-    part.capacitiveCharge > 0 ? part.chargingCost * Math.max(0, 1 - event.charge / part.capacitiveCharge) * frequency : 0
+    part.capacitiveCharge > 0
+      ? part.chargingCost * Math.max(0, 1 - event.charge / part.capacitiveCharge) * frequency
+      : 0
   const scale = weight * count
   rows[row.conduction]! += conducted * scale
   rows[row.leakage]! += leaked * scale
@@ -133,7 +144,8 @@ function forwardRecoveryPower(kernel: Kernel, state: PartState, share: number, s
   const peak = kernel.instant.peak * share
   const fall = kernel.turnOff.currentFall
   const turnOffSlope = fall > 0 ? peak / fall : slope * share
-  const overshoot = part.forwardRecoveryPeak * Math.sqrt(turnOffSlope / part.forwardRecoverySlope) - dropAt(kernel, state, peak)
+  const overshoot =
+    part.forwardRecoveryPeak * Math.sqrt(turnOffSlope / part.forwardRecoverySlope) - dropAt(kernel, state, peak)
   return (Math.max(overshoot, 0) * peak * part.forwardRecoveryTime * kernel.frequency) / 2
 }
 
@@ -154,7 +166,7 @@ function turnOffEnergy(kernel: Kernel): number {
 }
 
 /** Turn-on energy with an ideal rectifier; a measured one is carried over by the ratio of the overlap energies. */
-function turnOnBase(kernel: Kernel, slope: number): number {
+export function turnOnBase(kernel: Kernel, slope: number): number {
   const { instant, turnOn } = kernel
   const current = Math.max(instant.valley, 0)
   if (current === 0) return 0

@@ -162,4 +162,3 @@ function emptyEvent(): RecoveryEvent {
     outcome: 'no-stored-charge',
   }
 }
-

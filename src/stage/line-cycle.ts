@@ -47,7 +47,12 @@ function lossFreeCrest(kernel: Kernel): number {
   return (Math.SQRT2 * kernel.outputVoltage * kernel.outputCurrent) / kernel.inputVoltage
 }
 
-function addPanel(grid: LineGrid, rule: { nodes: Float64Array; weights: Float64Array }, from: number, to: number): void {
+function addPanel(
+  grid: LineGrid,
+  rule: { nodes: Float64Array; weights: Float64Array },
+  from: number,
+  to: number,
+): void {
   const half = (to - from) / 2
   const middle = (to + from) / 2
   for (let k = 0; k < rule.nodes.length; k++) {

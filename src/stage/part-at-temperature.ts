@@ -22,7 +22,10 @@ export function moveToTemperature(kernel: Kernel, state: PartState, junction: nu
     state.leakage = leakageAt(kernel, state, kernel.instant.blockingVoltage)
   }
   if (part.synchronous) {
-    state.channelResistance = Math.max(part.channelResistance25 * (1 + part.channelPerKelvin * rise), 0.1 * part.channelResistance25)
+    state.channelResistance = Math.max(
+      part.channelResistance25 * (1 + part.channelPerKelvin * rise),
+      0.1 * part.channelResistance25,
+    )
   }
 }
 

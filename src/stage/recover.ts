@@ -23,9 +23,15 @@ export function recover(kernel: Kernel, state: PartState, share: number, slope: 
   const instant = kernel.instant
   event.slope = slope * share
   event.current = Math.max(instant.valley, 0) * share
-  if (!kernel.part.storesCharge) return clear(event, 'no-stored-charge')
+  if (!kernel.part.storesCharge) {
+    clear(event, 'no-stored-charge')
+    return
+  }
   placeLifetimes(kernel, state, event)
-  if (instant.valley < 0) return clear(event, 'negative-valley')
+  if (instant.valley < 0) {
+    clear(event, 'negative-valley')
+    return
+  }
   tail.voltageFall = kernel.voltageFall
   tail.tailTime = event.tailTime
   event.tailShare = tailShare(tail)
@@ -87,7 +93,10 @@ function recoverResidue(kernel: Kernel, share: number, event: RecoveryEvent): vo
   residual.tailTime = event.tailTime
   residual.storedChargeAtZero = event.storedCharge
   residualRecovery(residual, left)
-  if (!(left.charge > 0)) return clear(event, 'residual-gone')
+  if (!(left.charge > 0)) {
+    clear(event, 'residual-gone')
+    return
+  }
   event.peakReverseCurrent = left.peakReverseCurrent
   event.timeToPeak = left.timeToPeak
   event.charge = left.charge

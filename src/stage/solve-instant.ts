@@ -14,7 +14,10 @@ function rectifierDrop(kernel: Kernel, totalCurrent: number): number {
   drop.current = Math.abs(totalCurrent) * kernel.hotShare
   const diode = Math.max(forwardDrop(drop), 0)
   if (!kernel.part.synchronous) return diode
-  const diodeShare = Math.min(1, ((kernel.part.deadBefore + kernel.part.deadAfter) * kernel.frequency) / lossFreeConductionShare(kernel))
+  const diodeShare = Math.min(
+    1,
+    ((kernel.part.deadBefore + kernel.part.deadAfter) * kernel.frequency) / lossFreeConductionShare(kernel),
+  )
   return diodeShare * diode + (1 - diodeShare) * totalCurrent * kernel.hotShare * state.channelResistance
 }
 

@@ -1,6 +1,6 @@
+import { ambientForJunction, lowestSettledJunction } from './ambient-for-junction.ts'
 import { evaluate } from './evaluate.ts'
 import { type Kernel, row, switchPower } from './kernel.ts'
-import { ambientForJunction, lowestSettledJunction } from './ambient-for-junction.ts'
 
 /** Temperatures are solved to this. [K] */
 const tolerance = 1e-6

@@ -20,7 +20,10 @@ export function hasThermalPath(stage: Stage, record: RectifierRecord): boolean {
 }
 
 /** Which thermal resistances had to be assumed. */
-export function assumedResistances(stage: Stage, record: RectifierRecord): readonly ('junction_to_case' | 'case_to_sink')[] {
+export function assumedResistances(
+  stage: Stage,
+  record: RectifierRecord,
+): readonly ('junction_to_case' | 'case_to_sink')[] {
   if (record.thermal?.kind === 'ambient' || stage.cooling.kind === 'ambient') return []
   const missing: ('junction_to_case' | 'case_to_sink')[] = []
   if ((record.thermal?.junctionToCase ?? null) === null) missing.push('junction_to_case')
@@ -36,9 +39,12 @@ export function thermalNetwork(stage: Stage, record: RectifierRecord): ThermalNe
   const { cooling } = stage
   const switchThermal = stage.switch.thermal
   const ambientMounted = record.thermal?.kind === 'ambient'
-  const junctionToCase = record.thermal?.kind === 'case' ? (record.thermal.junctionToCase ?? assumedJunctionToCase) : assumedJunctionToCase
-  const caseToSink = record.thermal?.kind === 'case' ? (record.thermal.caseToSink ?? assumedCaseToSink) : assumedCaseToSink
-  const switchSolved = switchThermal !== null && (cooling.kind === 'case' || (cooling.kind === 'sink' && cooling.shared))
+  const junctionToCase =
+    record.thermal?.kind === 'case' ? (record.thermal.junctionToCase ?? assumedJunctionToCase) : assumedJunctionToCase
+  const caseToSink =
+    record.thermal?.kind === 'case' ? (record.thermal.caseToSink ?? assumedCaseToSink) : assumedCaseToSink
+  const switchSolved =
+    switchThermal !== null && (cooling.kind === 'case' || (cooling.kind === 'sink' && cooling.shared))
   const direct = record.thermal?.kind === 'ambient' ? record.thermal.junctionToAmbient : 0
   return {
     reference: cooling.kind === 'case' ? cooling.caseTemperature : cooling.ambientTemperature,

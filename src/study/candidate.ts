@@ -1,0 +1,54 @@
+import type { CalibratedRectifier } from '../domain/calibrated-rectifier.ts'
+import type { Caveat } from '../domain/caveat.ts'
+import type { RectifierRecord } from '../domain/rectifier.ts'
+import type { Stage } from '../domain/stage.ts'
+import { calibrate } from '../evidence/calibrate.ts'
+import { slopeAt } from '../stage/book-instant.ts'
+import { blockingVoltageOf, createKernel } from '../stage/create-kernel.ts'
+import type { Kernel } from '../stage/kernel.ts'
+import { type TurnOnMeaning, type TurnOnReading, turnOnMeaning } from '../stage/measured-turn-on.ts'
+
+/** One part in one stage, ready to be solved. */
+export interface Candidate {
+  readonly stage: Stage
+  readonly record: RectifierRecord
+  readonly rectifier: CalibratedRectifier
+  readonly kernel: Kernel
+  readonly turnOn: TurnOnMeaning | null
+  readonly caveats: readonly Caveat[]
+}
+
+/** Calibrates a record for the stage's blocking voltage and allocates its working store. `records` holds the test rectifier of a measured turn-on. */
+export function prepareCandidate(
+  stage: Stage,
+  record: RectifierRecord,
+  records: readonly RectifierRecord[],
+): Candidate {
+  const { rectifier, caveats } = calibrate({ record, blockingVoltage: blockingVoltageOf(stage) })
+  const kernel = createKernel({ stage, record, rectifier })
+  const turnOn = turnOnOf(stage, records, kernel)
+  if (turnOn !== null) placeTurnOn(kernel, stage, turnOn.nominal)
+  return { stage, record, rectifier, kernel, turnOn, caveats }
+}
+
+/** Puts one reading of the measured turn-on into a kernel. */
+export function placeTurnOn(kernel: Kernel, stage: Stage, reading: TurnOnReading): void {
+  const given = stage.switch.turnOn!
+  kernel.turnOn.current = given.current
+  kernel.turnOn.voltage = given.voltage
+  kernel.turnOn.energy = reading.energy
+  kernel.turnOn.addedShare = reading.addedShare
+}
+
+function turnOnOf(stage: Stage, records: readonly RectifierRecord[], kernel: Kernel): TurnOnMeaning | null {
+  const given = stage.switch.turnOn
+  if (given === null) return null
+  const record = records.find(({ id }) => id === given.rectifier)
+  const testRectifier = record === undefined ? null : calibrate({ record, blockingVoltage: given.voltage }).rectifier
+  return turnOnMeaning({
+    given,
+    testRectifier,
+    slope: slopeAt(kernel, given.current),
+    voltageFall: stage.switch.voltageFall,
+  })
+}

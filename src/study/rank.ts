@@ -1,0 +1,172 @@
+import { compareIds, orderCandidates } from '../decision/order-candidates.ts'
+import type { Caveat } from '../domain/caveat.ts'
+import type { RectifierRecord } from '../domain/rectifier.ts'
+import type { CandidateResult, RankResult, StageResult, Verdict, Warning } from '../domain/result.ts'
+import type { Stage } from '../domain/stage.ts'
+import type { StudySettings } from '../domain/study.ts'
+import { StudyRefusal } from '../domain/study-refusal.ts'
+import { blockingVoltageOf } from '../stage/create-kernel.ts'
+import { type Assessment, assessCandidate } from './assess-candidate.ts'
+import { prepareCandidate } from './candidate.ts'
+import { stageCautions } from './cautions.ts'
+import { type ProfileResult, runProfile } from './duty-profile.ts'
+import { deliversCold } from './nominal-point.ts'
+import { notCovered } from './not-covered.ts'
+import { orderCaveats } from './order-caveats.ts'
+import { pointCaveats, sortCaveats, stageCaveats } from './point-caveats.ts'
+import { drawAll, verdictOf, withDraws } from './uncertainty.ts'
+
+/** Named in every result: which event the energies belong to. */
+export const lossModel = 'charge control; voltage moves after the peak'
+
+/**
+ * The main job: every candidate's losses, temperature, efficiency and margins at the stage's operating point, judged,
+ * ranked by what the choice costs the stage, with the doubt of the order.
+ *
+ * @param records All records at hand; `stage.candidates` (or all) are ranked, the others serve a measured turn-on.
+ * @throws StudyRefusal When there is no candidate, or the stage cannot deliver its power.
+ */
+export function rank(stage: Stage, records: readonly RectifierRecord[], settings: StudySettings): RankResult {
+  const parts = chooseCandidates(stage, records)
+  const assessments = assessAll(stage, parts, records)
+  const profiles = profileAll(stage, assessments, records)
+  const drawn = settings.draws > 0 ? drawAll(stage, assessments, settings.seed, settings.draws) : null
+  const verdict = drawn === null ? nominalVerdict(assessments) : verdictOf(stage, assessments, drawn)
+  const results = assessments.map(({ result }) => ({
+    ...(drawn === null ? result : withDraws(result, drawn)),
+    ...profileFields(profiles.get(result.id)),
+  }))
+  const candidates = placeRanks(results)
+  return {
+    ...documentHead(settings),
+    stage: stageResult(stage, assessments, candidates),
+    candidates,
+    verdict,
+    warnings: warningsOf([
+      ...assessments.flatMap((each) => candidateCaveats(each)),
+      ...stageCaveats(assessments),
+      ...incumbentCaveats(stage, parts),
+      ...orderCaveats(stage, candidates, profiles),
+    ]),
+    cautions: stageCautions(stage, parts),
+    not_covered: notCovered(stage),
+  }
+}
+
+/** Records that compete, by id so that their order in files does not matter. */
+export function chooseCandidates(stage: Stage, records: readonly RectifierRecord[]): readonly RectifierRecord[] {
+  const wanted = stage.candidates
+  const chosen = wanted === null ? records : records.filter(({ id }) => wanted.includes(id))
+  if (chosen.length === 0) throw new StudyRefusal('no-candidate', {})
+  return chosen.toSorted((a, b) => compareIds(a.id, b.id))
+}
+
+/** Prepares and solves all candidates. */
+export function assessAll(
+  stage: Stage,
+  parts: readonly RectifierRecord[],
+  records: readonly RectifierRecord[],
+): Assessment[] {
+  const candidates = parts.map((record) => prepareCandidate(stage, record, records))
+  if (!candidates.some(({ kernel }) => deliversCold(kernel))) {
+    throw new StudyRefusal('cannot-deliver', {
+      power: stage.output.voltage * stage.output.current,
+      voltage: stage.input.voltage,
+    })
+  }
+  return candidates.map(assessCandidate)
+}
+
+export function documentHead({
+  seed,
+  draws,
+  version,
+  inputs,
+}: StudySettings): Pick<RankResult, 'format' | 'tool' | 'seed' | 'draws' | 'inputs'> {
+  return { format: 1, tool: { name: 'ebbwatt', version }, seed, draws, inputs }
+}
+
+export function stageResult(
+  stage: Stage,
+  assessments: readonly Assessment[],
+  candidates: readonly CandidateResult[],
+): StageResult {
+  const leader = candidates.find(({ point }) => point !== null)
+  const assessment = assessments.find(({ result }) => result.id === leader?.id)
+  const given = stage.switch.slope.kind === 'given' ? stage.switch.slope.slope : 0
+  return {
+    kind: stage.kind,
+    title: stage.title ?? '',
+    frequency_hz: stage.frequency,
+    input_v: stage.input.voltage,
+    output_v: stage.output.voltage,
+    output_w: stage.output.voltage * stage.output.current,
+    blocking_v: blockingVoltageOf(stage),
+    mode: leader?.point?.mode ?? null,
+    slope_a_per_s: assessment?.point?.event.slope ?? given,
+    loss_model: lossModel,
+    assumed: stage.assumed,
+  }
+}
+
+/** Everything to be said about one candidate: its record against itself, its fit, its point. */
+function candidateCaveats(assessment: Assessment): Caveat[] {
+  return [...assessment.candidate.caveats, ...assessment.caveats, ...pointCaveats(assessment)]
+}
+
+export function warningsOf(caveats: readonly Caveat[]): Warning[] {
+  return sortCaveats(caveats).map(({ code, candidate, data }) => ({ code, candidate, text: '', data }))
+}
+
+function incumbentCaveats(stage: Stage, parts: readonly RectifierRecord[]): Caveat[] {
+  const { incumbent } = stage
+  if (incumbent === null || parts.some(({ id }) => id === incumbent)) return []
+  return [{ code: 'incumbent-missing', candidate: '', data: { incumbent } }]
+}
+
+/** Accepted by stage loss with their ranks, then rejected by id. */
+export function placeRanks(results: readonly CandidateResult[]): CandidateResult[] {
+  const ordered = orderCandidates(
+    results.map((result) => ({
+      id: result.id,
+      accepted: result.accepted,
+      nominalStageLoss: result.stage_loss_w,
+      result,
+    })),
+  )
+  return ordered.map(({ result, accepted }, index) => ({ ...result, rank: accepted ? index + 1 : null }))
+}
+
+function nominalVerdict(assessments: readonly Assessment[]): Verdict {
+  const ranked = placeRanks(assessments.map(({ result }) => result)).filter(({ accepted }) => accepted)
+  const [best, next] = ranked
+  return {
+    best: best?.id ?? null,
+    decided: null,
+    tied: [],
+    runner_up: next?.id ?? null,
+    gap_w: best !== undefined && next !== undefined ? next.stage_loss_w! - best.stage_loss_w! : null,
+    gap_low_w: null,
+    gap_high_w: null,
+    text: '',
+    sensitivity: null,
+    measure_next: null,
+  }
+}
+
+function profileAll(
+  stage: Stage,
+  assessments: readonly Assessment[],
+  records: readonly RectifierRecord[],
+): Map<string, ProfileResult> {
+  const profile = stage.dutyProfile
+  if (profile === null) return new Map()
+  const settled = assessments.filter(({ point }) => point !== null)
+  return new Map(settled.map(({ candidate, result }) => [result.id, runProfile(candidate, profile, records)]))
+}
+
+function profileFields(
+  profile: ProfileResult | undefined,
+): Pick<CandidateResult, 'weighted_w' | 'energy_kwh_per_year'> {
+  return { weighted_w: profile?.weightedLoss ?? null, energy_kwh_per_year: profile?.energy ?? null }
+}
