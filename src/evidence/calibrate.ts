@@ -2,6 +2,7 @@ import type { CalibratedRectifier } from '../domain/calibrated-rectifier.ts'
 import type { Caveat } from '../domain/caveat.ts'
 import { type RectifierRecord, storesCharge } from '../domain/rectifier.ts'
 import { capacitanceEvidence } from './capacitance-evidence.ts'
+import { checkRecord } from './check-record.ts'
 import { forwardEvidence } from './forward-evidence.ts'
 import { leakageEvidence } from './leakage-evidence.ts'
 import { recoveryEvidence } from './recovery-evidence.ts'
@@ -42,5 +43,6 @@ export function calibrate({ record, blockingVoltage }: CalibrateInput): Calibrat
     maximumRecoveryShift: recovery.maximumRecoveryShift,
     softnessKnown: recovery.softnessKnown,
   }
-  return { rectifier, caveats: [...recovery.caveats, ...forward.caveats, ...leakage.caveats] }
+  const reading = [...recovery.caveats, ...forward.caveats, ...leakage.caveats]
+  return { rectifier, caveats: [...reading, ...checkRecord(record, rectifier, recovery.readings)] }
 }

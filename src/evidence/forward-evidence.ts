@@ -6,6 +6,7 @@ import { conditioned, type Observation } from './bayesian-update.ts'
 import { classPriors, resistivePerKelvin } from './class-priors.ts'
 import { forwardDesign } from './design-rows.ts'
 import { figureText } from './figure-text.ts'
+import type { NamedObservation } from './find-contradiction.ts'
 import { maximumShift, rowErrors, unitSpread } from './grades.ts'
 import { fromDirections, priorGaussians } from './prior-gaussians.ts'
 
@@ -19,7 +20,7 @@ export interface ForwardEvidence {
 export function forwardEvidence(record: RectifierRecord): ForwardEvidence {
   const line = record.forwardLine
   if (line !== null) return { forward: fromLine(record, line), caveats: assumedJunction(record.id, line) }
-  const usable = record.forward.filter((row) => row.drop > 0)
+  const usable = usableRows(record)
   const posterior = conditioned(
     priorGaussians(record.class).forward,
     usable.map((row) => observe(row, record.ratings.averageCurrent)),
@@ -35,6 +36,18 @@ export function forwardEvidence(record: RectifierRecord): ForwardEvidence {
       row.drop > 0 ? assumedJunction(record.id, row) : unusable(record.id, row),
     ),
   }
+}
+
+/** The forward rows as evidence, by name. */
+export function forwardObservations(record: RectifierRecord): NamedObservation[] {
+  return usableRows(record).map((row) => ({
+    name: row.place.name,
+    observation: observe(row, record.ratings.averageCurrent),
+  }))
+}
+
+function usableRows(record: RectifierRecord): ForwardRow[] {
+  return record.forward.filter((row) => row.drop > 0)
 }
 
 function observe(row: ForwardRow, ratedCurrent: number): Observation {

@@ -4,6 +4,7 @@ import { referenceTemperature } from '../domain/constants.ts'
 import type { LeakageRow, RectifierRecord } from '../domain/rectifier.ts'
 import { conditioned, type Observation, predictedMean } from './bayesian-update.ts'
 import { leakageDesign } from './design-rows.ts'
+import type { NamedObservation } from './find-contradiction.ts'
 import { maximumShift, rowErrors, unitSpread } from './grades.ts'
 import { priorGaussians } from './prior-gaussians.ts'
 
@@ -18,7 +19,7 @@ export function leakageEvidence(record: RectifierRecord): LeakageEvidence {
   const prior = priorGaussians(record.class).leakage
   if (prior === null) return { leakage: null, caveats: [] }
   const ratedVoltage = record.ratings.reverseVoltage
-  const usable = record.leakage.filter((row) => row.current > 0 && row.voltage > 0)
+  const usable = usableRows(record)
   const posterior = conditioned(
     prior,
     usable.map((row) => observe(row, ratedVoltage)),
@@ -33,6 +34,18 @@ export function leakageEvidence(record: RectifierRecord): LeakageEvidence {
     },
     caveats: caveatsOf(record, usable),
   }
+}
+
+/** The leakage rows as evidence, by name. */
+export function leakageObservations(record: RectifierRecord): NamedObservation[] {
+  return usableRows(record).map((row) => ({
+    name: row.place.name,
+    observation: observe(row, record.ratings.reverseVoltage),
+  }))
+}
+
+function usableRows(record: RectifierRecord): LeakageRow[] {
+  return record.leakage.filter((row) => row.current > 0 && row.voltage > 0)
 }
 
 function observe(row: LeakageRow, ratedVoltage: number): Observation {
@@ -66,7 +79,6 @@ function maximumLeakageShift(
 function caveatsOf(record: RectifierRecord, usable: readonly LeakageRow[]): Caveat[] {
   const candidate = record.id
   const caveats: Caveat[] = []
-  if (usable.length === 0) caveats.push({ code: 'leakage-assumed', candidate, data: {} })
   for (const row of record.leakage) {
     const data = { row: row.place.name }
     if (!usable.includes(row))

@@ -13,12 +13,13 @@ export interface LinearisedFigure {
   readonly figure: LogFigure
 }
 
-/** Where a figure hardly depends on the lifetime (a peak near its ceiling, softness), solving for it would invent one. */
-const leastSensitivity = 0.2
+/** d ln figure/d u below which solving for u would invent a lifetime far from any part: a peak near its ceiling I e^y. */
+const leastSensitivity = 0.6
 
 /**
  * The point at which a single figure is linearised: u solved at the y that the class gives. Where the figure does not
- * determine u there, the point nearest to the class's centre (in its standard deviations) that gives the figure.
+ * determine u (softness, which is about y, and a peak near its ceiling), the point nearest to the class's centre, in
+ * standard deviations, that gives the figure.
  */
 export function linearisedFigure(
   reading: RampReading,
@@ -27,7 +28,7 @@ export function linearisedFigure(
   expected: ExpectedPoint,
 ): LinearisedFigure {
   const target = Math.log(value)
-  const solved = lifetimeGiving(reading, name, target, expected)
+  const solved = name === 'softness' ? null : lifetimeGiving(reading, name, target, expected)
   if (solved !== null && solved.figure.byLifetime >= leastSensitivity) return solved
   return nearestPoint(reading, name, target, expected)
 }
