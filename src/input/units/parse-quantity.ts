@@ -14,7 +14,7 @@ export interface QuantityRefusal {
 
 /** Sign, digits with at most one point, exponent. Each character is looked at once. */
 const number = /^[+-]?(?:\d+(?:\.\d*)?|\.\d+)(?:[eE][+-]?\d+)?/
-const longestText = 80
+const longestText = 100
 /** Beyond these magnitudes a product of a few quantities would leave the range of doubles. */
 const largest = 1e40
 const smallest = 1e-40
@@ -25,7 +25,7 @@ const smallest = 1e-40
  */
 export function parseQuantity(text: string, rule: QuantityRule): number | QuantityRefusal {
   const { kind, sign } = rule
-  const folded = foldSigns(text).trim()
+  const folded = text.length > longestText ? text : foldSigns(text).trim()
   const digits = folded.length > longestText ? undefined : number.exec(folded)?.[0]
   if (digits === undefined) return refuse('number-malformed', kind, folded.startsWith(',') ? commaHint : '')
   const unitText = folded.slice(digits.length).trim()
@@ -33,7 +33,9 @@ export function parseQuantity(text: string, rule: QuantityRule): number | Quanti
   if (malformed !== null) return malformed
   const conversion = conversionOf(unitText, kind)
   if ('refused' in conversion) return conversion
-  return checked(Number(digits), scaled(Number(digits), conversion), kind, sign)
+  const value = scaled(Number(digits), conversion)
+  const typedZero = !/^[^eE]*[1-9]/.test(digits)
+  return checked(value, typedZero, kind, sign)
 }
 
 const commaHint = 'write the decimals after a point and leave out thousands separators'
@@ -62,8 +64,8 @@ function scaled(value: number, { factor, offset, divisor }: Scale): number {
 }
 
 function checked(
-  typed: number,
   value: number,
+  typedZero: boolean,
   kind: QuantityKindName,
   sign: QuantityRule['sign'],
 ): number | QuantityRefusal {
@@ -77,7 +79,7 @@ function checked(
     }
   }
   const magnitude = Math.abs(value)
-  if (magnitude > largest || (magnitude < smallest && (magnitude > 0 || typed !== 0))) {
+  if (magnitude > largest || (magnitude < smallest && !typedZero)) {
     return {
       refused: true,
       code: 'number-out-of-range',

@@ -68,7 +68,9 @@ export function convertUnit(unitText: string, target: string): UnitConversion | 
   if (dimension !== dimensionOf(target)) return { refused: 'dimension', dimension }
   const offset = unitClass.parse(counted(0, unitText)).toNumber(target)
   const factor = unit.toNumber(target) - offset
-  return Number.isFinite(factor) && factor > 0 ? { factor, offset } : { refused: 'unknown' }
+  // A prefix before a scale with its own zero ("mdegC") is nothing that anyone means.
+  const usable = Number.isFinite(factor) && factor > 0 && (offset === 0 || factor === 1)
+  return usable ? { factor, offset } : { refused: 'unknown' }
 }
 
 /** The dimension of a unit as a text that equals that of every unit of the same dimension. */

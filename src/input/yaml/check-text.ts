@@ -1,7 +1,7 @@
 import type { Problem } from '../../problems/problem.ts'
 
 /** Larger files are refused before anything is parsed. */
-export const largestFile = 64 * 1024 * 1024
+const largestFile = 64 * 1024 * 1024
 const largestFileText = '64 MB'
 
 /** What can be wrong with a text before its language is looked at: size, emptiness, signs that belong to no text. */
@@ -17,29 +17,9 @@ export function checkText(text: string, file: string): Problem | null {
   return { code: 'file-not-text', file, line, column, path: '', found, expected: '', hint: 'save it as UTF-8 text' }
 }
 
-/** Bytes to text; UTF-8 with or without a byte order mark. */
-export function decodeText(bytes: Uint8Array, file: string): string | Problem {
-  if (bytes.length > largestFile) return tooLarge(file, bytes.length)
-  try {
-    return new TextDecoder('utf-8', { fatal: true }).decode(bytes)
-  } catch {
-    // TextDecoder throws a TypeError for bytes that are no UTF-8, and for nothing else here.
-    const [line, column] = placeOfBadByte(bytes)
-    const found = 'its bytes are no UTF-8'
-    return { code: 'file-not-text', file, line, column, path: '', found, expected: '', hint: 'save it as UTF-8 text' }
-  }
-}
-
 const halfPair = /\p{Cs}/u
 
 function tooLarge(file: string, length: number): Problem {
   const found = `${Math.ceil(length / 1024 / 1024)} MB`
   return { code: 'file-too-large', file, line: 0, column: 0, path: '', found, expected: largestFileText, hint: '' }
-}
-
-/** The first place where lenient decoding puts in the replacement character. */
-function placeOfBadByte(bytes: Uint8Array): readonly [number, number] {
-  const lines = new TextDecoder('utf-8').decode(bytes).split('\n')
-  const index = lines.findIndex((line) => line.includes('\ufffd'))
-  return index === -1 ? [1, 1] : [index + 1, lines[index]!.indexOf('\ufffd') + 1]
 }
