@@ -135,7 +135,11 @@ function definitionFrom(root: Section, fixture: 'ramp' | 'step'): RecoveryTimeDe
   }
   if (kind === 'level' && !has(root, 'until')) {
     const expected = 'the reverse current at which the recovery time ends'
-    addProblem(reader, { code: 'key-missing', path: ['until'], found: '', expected, hint: 'trr_by: level needs it' }, 'key')
+    addProblem(
+      reader,
+      { code: 'key-missing', path: ['until'], found: '', expected, hint: 'trr_by: level needs it' },
+      'key',
+    )
   }
   if (kind !== 'level' && has(root, 'until')) {
     const expected = 'only trr_by: level reads it'

@@ -2,7 +2,7 @@ import type { SchemaError } from '#validators'
 import { didYouMean } from '../problems/nearest.ts'
 import { shown } from '../problems/shown.ts'
 import type { ShapeFault } from './shape-fault.ts'
-import { kindOfReference, wordsOfTypes } from './shape-words.ts'
+import { kindOfDefinition, wordsOfTypes } from './shape-words.ts'
 import { wantedQuantity } from './units/quantity-kinds.ts'
 import type { Path } from './yaml/path.ts'
 
@@ -39,7 +39,7 @@ function wrongType(
   value: unknown,
   error: SchemaError,
 ): Pick<ShapeFault, 'code' | 'expected' | 'hint'> & { found?: string } {
-  const kind = kindOfReference(error.schemaPath)
+  const kind = kindOfDefinition(error.parentSchema)
   if (kind !== null && typeof value === 'number')
     return { code: 'unit-missing', expected: wantedQuantity(kind), hint: '' }
   const expected = kind === null ? wordsOfTypes(error.params.type) : wantedQuantity(kind)

@@ -1,9 +1,14 @@
 import { type QuantityKindName, quantityKinds, wantedQuantity } from './units/quantity-kinds.ts'
 
-/** The kind of quantity that a reference like "#/$defs/voltage" names. */
-export function kindOfReference(reference: string): QuantityKindName | null {
-  const name = /\$defs\/([a-z_]+)/.exec(reference)?.[1]
-  return name !== undefined && Object.hasOwn(quantityKinds, name) ? (name as QuantityKindName) : null
+type SchemaPart = Readonly<Record<string, unknown>>
+
+/** The kind of quantity that a definition stands for: its `x-quantity`. */
+export function kindOfDefinition(schema: SchemaPart | undefined): QuantityKindName | null {
+  return asKind(schema?.['x-quantity'])
+}
+
+function asKind(name: unknown): QuantityKindName | null {
+  return typeof name === 'string' && Object.hasOwn(quantityKinds, name) ? (name as QuantityKindName) : null
 }
 
 /** What a part of a schema asks for, in words. */
@@ -17,7 +22,7 @@ export function expectedBySchema(schema: unknown): string {
     readonly enum?: readonly unknown[]
     readonly description?: string
   }
-  const kind = $ref === undefined ? null : kindOfReference($ref)
+  const kind = asKind($ref?.replace('#/$defs/', ''))
   if (kind !== null) return wantedQuantity(kind)
   if (words !== undefined) return `one of ${words.join(', ')}`
   const sentence = (description ?? 'a value').replace(/\.$/, '')

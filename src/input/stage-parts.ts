@@ -17,9 +17,10 @@ export function inputFrom(root: Section): StageInput {
 export function outputFrom(output: Section): Stage['output'] {
   const voltage = required(output, 'voltage', 'voltage', 'positive')
   const power = quantity(output, 'power', 'power', 'positive')
+  const current = required(output, 'current', 'current', 'positive')
   return {
     voltage,
-    current: power === null ? required(output, 'current', 'current', 'positive') : power / voltage,
+    current: power === null ? current : power / voltage,
     capacitance: quantity(output, 'capacitance', 'capacitance', 'not-negative'),
     bleeder: quantity(output, 'bleeder', 'resistance', 'not-negative'),
   }
@@ -27,12 +28,11 @@ export function outputFrom(output: Section): Stage['output'] {
 
 /** The switch shares the sink by default where its own path to the sink is known. */
 export function coolingFrom(cooling: Section, switchHasThermal: boolean): Cooling {
-  if (has(cooling, 'case')) {
-    return { kind: 'case', caseTemperature: required(cooling, 'case', 'temperature', 'any') }
-  }
+  const caseTemperature = quantity(cooling, 'case', 'temperature', 'any')
   const ambientTemperature = required(cooling, 'ambient', 'temperature', 'any')
-  if (!has(cooling, 'sink_to_ambient')) return { kind: 'ambient', ambientTemperature }
-  const sinkToAmbient = required(cooling, 'sink_to_ambient', 'thermal_resistance', 'positive')
+  const sinkToAmbient = quantity(cooling, 'sink_to_ambient', 'thermal_resistance', 'positive')
+  if (caseTemperature !== null) return { kind: 'case', caseTemperature }
+  if (sinkToAmbient === null) return { kind: 'ambient', ambientTemperature }
   if (!has(cooling, 'shared')) {
     cooling.reader.assumed.push({ path: 'cooling.shared', value: String(switchHasThermal) })
   }

@@ -16,10 +16,15 @@ export function switchFrom(section: Section): Stage['switch'] {
 }
 
 function slopeFrom(section: Section): SlopeSource {
-  if (!has(section, 'gate')) {
-    return { kind: 'given', slope: quantityOr(section, 'slope', 'slope', 'positive', '300 A/us') }
+  const stated = quantity(section, 'slope', 'slope', 'positive')
+  if (has(section, 'gate')) return gateFrom(group(section, 'gate'))
+  return {
+    kind: 'given',
+    slope: has(section, 'slope') ? (stated ?? Number.NaN) : assume(section, 'slope', 'slope', '300 A/us'),
   }
-  const gate = group(section, 'gate')
+}
+
+function gateFrom(gate: Section): SlopeSource {
   return {
     kind: 'gate',
     drive: required(gate, 'drive', 'voltage', 'not-negative'),
@@ -33,12 +38,10 @@ function slopeFrom(section: Section): SlopeSource {
 }
 
 function turnOffFrom(section: Section): TurnOff {
-  if (has(section, 'energy')) return { kind: 'energy', energy: required(section, 'energy', 'energy', 'not-negative') }
-  return {
-    kind: 'times',
-    voltageRise: required(section, 'voltage_rise', 'time', 'not-negative'),
-    currentFall: required(section, 'current_fall', 'time', 'not-negative'),
-  }
+  const voltageRise = required(section, 'voltage_rise', 'time', 'not-negative')
+  const currentFall = required(section, 'current_fall', 'time', 'not-negative')
+  const energy = quantity(section, 'energy', 'energy', 'not-negative')
+  return energy === null ? { kind: 'times', voltageRise, currentFall } : { kind: 'energy', energy }
 }
 
 function turnOnFrom(section: Section): MeasuredTurnOn {

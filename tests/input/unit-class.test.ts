@@ -6,7 +6,8 @@ interface UnitOfMathjs {
   readonly dimensions: readonly number[]
   toNumber(unit: string): number
 }
-const table = (mathjs.Unit as unknown as { readonly UNITS: Readonly<Record<string, { readonly prefixes: object }>> }).UNITS
+const table = (mathjs.Unit as unknown as { readonly UNITS: Readonly<Record<string, { readonly prefixes: object }>> })
+  .UNITS
 const baseUnits = ['kg', 'm', 's', 'A', 'K', 'cd', 'mol', 'rad', 'b']
 /** Other temperature scales, prefixes before degC and volt-amperes are refused on purpose; VAR is complex in mathjs. */
 const refused = /(degF|fahrenheit|degR|rankine|VAR?|.degC|.celsius)$/
