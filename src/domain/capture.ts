@@ -51,7 +51,7 @@ export interface Waveform {
 
 /** How the file was read; printed before any of it is used. */
 export interface CaptureReading {
-  readonly delimiter: ',' | ';' | 'tab' | 'none'
+  readonly delimiter: ',' | ';' | 'tab'
   readonly decimal: 'point' | 'comma'
   /** Rows above the first number. */
   readonly headerRows: number
