@@ -49,7 +49,9 @@ function blockLines(block: Block, width: number, paint: Paint, chart: string[]):
     case 'table':
       return [
         ...heading(block.heading, 'plain', width, paint),
-        ...layTable(block.table, width).flatMap((piece, index) => pieceLines(piece, index, width, paint)),
+        ...layTable(block.table, width).flatMap((piece, index) =>
+          pieceLines(piece, index === 0 ? block.heading : null, width, paint),
+        ),
         ...(block.note === null ? [] : wrapText(block.note, width)),
       ]
   }
@@ -68,8 +70,11 @@ function hanging(label: string, text: string, width: number): string[] {
   return [first, ...wrapText(words, width - indent).map((line) => ' '.repeat(indent) + line)]
 }
 
-function pieceLines(piece: Piece, index: number, width: number, paint: Paint): string[] {
-  const title = index === 0 ? [] : ['', ...wrapText(piece.heading, width).map((line) => paint(line, 'dim'))]
+/** `above` is the heading that already stands over the piece, null under another piece. */
+function pieceLines(piece: Piece, above: string | null, width: number, paint: Paint): string[] {
+  const gap = above === null ? [''] : []
+  const said = above !== null && piece.heading.startsWith(above)
+  const title = said ? [] : [...gap, ...wrapText(piece.heading, width).map((line) => paint(line, 'dim'))]
   return [...title, ...tableText(piece).split('\n')]
 }
 

@@ -2,7 +2,7 @@ import { line } from 'd3-shape'
 import { type Axis, type AxisSpec, type Box, makeAxis } from './axis.ts'
 import { colourOf, marker } from './palette.ts'
 import { placeLabels } from './place-labels.ts'
-import { drawing, element, ink, label, labelWidth, pixels } from './svg.ts'
+import { drawing, element, fittingText, ink, label, labelWidth, pixels } from './svg.ts'
 
 export interface LinePoint {
   readonly x: number
@@ -44,6 +44,7 @@ export function lineChart(data: LineChartData): string {
   const width = data.width ?? 760
   const names = Math.min(width * 0.35, Math.max(30, ...data.series.map(({ name }) => labelWidth(name, 11) + 14)))
   const marks = data.marks ?? []
+  const dashed = data.series.some(({ points }) => points.some((point) => point.dashed === true))
   const box: Box = {
     left: 64,
     top: 40 + 15 * marks.length,
@@ -60,7 +61,8 @@ export function lineChart(data: LineChartData): string {
     data.height ?? 420,
     data.title,
     `${data.y.title} against ${data.x.title} for ${data.series.map(({ name }) => name).join(', ')}`,
-    label(12, 22, data.title, { bold: true, size: 14 }),
+    label(12, 22, fittingText(data.title, width - 24, 14), { bold: true, size: 14 }),
+    ...(dashed ? [label(width - 12, 22, 'dashed: read far beyond the data', { size: 11, anchor: 'end' })] : []),
     x.markup,
     y.markup,
     ...marks.map((mark, row) => markMarkup(mark, row, x, box, width)),
@@ -177,7 +179,9 @@ function markMarkup(mark: LineMark, row: number, x: Axis, box: Box, width: numbe
         })
   // on the right of its line, else on the left, else wherever it fits: each mark has a row of its own
   const wide = labelWidth(mark.text, 11)
-  const start = at + 7 + wide < width ? at + 7 : at - 7 - wide > 4 ? at - 7 - wide : Math.max(4, width - wide - 4)
+  const right = (mark.high == null ? at : Math.max(at, clamp(mark.high))) + 7
+  const left = (mark.low == null ? at : Math.min(at, clamp(mark.low))) - 7 - wide
+  const start = right + wide < width ? right : left > 4 ? left : Math.max(4, width - wide - 4)
   return [
     element('line', {
       x1: at,

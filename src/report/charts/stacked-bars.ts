@@ -3,7 +3,7 @@ import { stack } from 'd3-shape'
 import { significant } from '../format.ts'
 import { makeAxis } from './axis.ts'
 import { filling, fillingId } from './palette.ts'
-import { drawing, element, escapeText, ink, label, labelWidth, pixels } from './svg.ts'
+import { drawing, element, escapeText, fittingText, ink, label, labelWidth, pixels } from './svg.ts'
 
 export interface StackedBarsData {
   readonly title: string
@@ -43,14 +43,14 @@ export function stackedBars(data: StackedBarsData): string {
     const y = rows(row) + (barStep - barHeight) / 2
     const segments = layers.map((layer, part) => segment(data, part, layer[row]!, y, axis.place, bar.name))
     return [
-      label(left - 8, y + barHeight / 2 + 4, shortened(bar.name, left - 12), { anchor: 'end' }),
+      label(left - 8, y + barHeight / 2 + 4, fittingText(bar.name, left - 12), { anchor: 'end' }),
       ...segments,
       whisker(bar.low, bar.high, y + barHeight / 2, axis.place),
       label(axis.place(reach[row]!) + 6, y + barHeight / 2 + 4, significant(sums[row]!), { bold: true }),
     ].join('')
   })
   const definitions = element('defs', {}, ...data.parts.map((_, index) => filling(data.idPrefix, index)), ' ')
-  const heading = label(12, 22, data.title, { bold: true, size: 14 })
+  const heading = label(12, 22, fittingText(data.title, width - 24, 14), { bold: true, size: 14 })
   return drawing(
     width,
     box.bottom + 48,
@@ -109,11 +109,6 @@ function legendMarkup({ parts, idPrefix }: StackedBarsData, left: number, top: n
     return item
   })
   return { markup: items.join(''), height: y - top + 20 }
-}
-
-function shortened(name: string, width: number): string {
-  const most = Math.max(4, Math.floor(width / (12 * 0.56)))
-  return [...name].length <= most ? name : `${[...name].slice(0, most - 1).join('')}…`
 }
 
 function describe({ bars, axis }: StackedBarsData, sums: readonly number[]): string {

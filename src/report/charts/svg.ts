@@ -67,6 +67,13 @@ export function labelWidth(text: string, size = 12): number {
   return [...text].length * size * 0.56
 }
 
+/** The text cut with an ellipsis where it would not fit; the drawing's description holds it whole. */
+export function fittingText(text: string, width: number, size = 12): string {
+  const most = Math.max(4, Math.floor(width / (size * 0.56)))
+  const characters = [...visible(text)]
+  return characters.length <= most ? characters.join('') : `${characters.slice(0, most - 1).join('')}…`
+}
+
 /** A whole drawing with its own paper, title and description for those who do not see it. */
 export function drawing(
   width: number,

@@ -1,7 +1,7 @@
 import { line } from 'd3-shape'
 import { type Axis, type Box, makeAxis } from './axis.ts'
 import { colourOf } from './palette.ts'
-import { drawing, element, ink, label, labelWidth, paper } from './svg.ts'
+import { drawing, element, fittingText, ink, label, labelWidth, paper } from './svg.ts'
 
 export interface Trace {
   readonly name: string
@@ -49,7 +49,7 @@ export function waveformChart(data: WaveformData): string {
     height,
     data.title,
     `${data.panels.map(({ axis }) => axis).join(' and ')} against ${data.time}`,
-    label(12, 22, data.title, { bold: true, size: 14 }),
+    label(12, 22, fittingText(data.title, width - 24, 14), { bold: true, size: 14 }),
     x.markup,
     ...data.panels.map((panel, index) => panelMarkup(panel, x, boxes[index]!)),
     ...marks.map(({ time, text }, row) => mark(x.place(time), 38 + 15 * row, text, whole)),

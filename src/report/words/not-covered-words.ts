@@ -8,6 +8,8 @@ export const notCoveredWords: Readonly<Record<string, string>> = {
   'snappy-overshoot': 'Overshoot of an abrupt recovery beyond the exponential tail of the model.',
   'gate-loss': 'Gate drive losses of the switch and of a synchronous part.',
   'core-loss-assumed-zero': 'Core loss of the inductor: not given, counted as 0.',
+  'core-loss-held':
+    'Core loss of the inductor is held at its stated value along the axis; really it moves with frequency and ripple.',
   'stored-energy-assumed-zero': 'Output capacitance of the switch: not given, its energy is counted as 0.',
   'turn-off-assumed-zero': 'Turn-off loss of the switch: not given, counted as 0.',
   'snubber-assumed-zero': 'Snubber: none given, its loss is counted as 0.',

@@ -16,7 +16,7 @@ export const reasonWords: Readonly<Record<ReasonCode, string>> = {
     'Peak reverse voltage [{value:V}|with overshoot] is above what the voltage rule allows[ ({limit:V})]: ' +
     'take a part with a higher rating, or shorten the loop.',
   'average-current':
-    'Mean current [{value:A}|] is above the rating[ of {limit:A}]: take a larger part or put parts in parallel.',
+    'The mean current[ of {value:A}] is above the rating[ of {limit:A}]: take a larger part or put parts in parallel.',
   'junction-over-limit':
     'The junction reaches [{value:C_}|more than its limit][, above the limit of {limit:C_}]: improve the cooling or take a part with less loss.',
   'no-stable-temperature':
