@@ -4,7 +4,7 @@ import { compareIds, orderCandidates } from './order-candidates.ts'
 import { drawInterval } from './summarise-draws.ts'
 
 /** Odds from which a best part counts as decided. */
-const decidedOdds = 0.9
+export const decidedOdds = 0.9
 /** Share of draws from above which a part cheaper than the best counts as tied with it. */
 const tiedShare = 0.1
 

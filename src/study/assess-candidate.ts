@@ -1,6 +1,6 @@
 import type { Caveat } from '../domain/caveat.ts'
 import { celsiusZero } from '../domain/constants.ts'
-import type { CandidateResult, LossesResult, PointResult, Reason } from '../domain/result.ts'
+import type { CandidateResult, PointResult, Reason } from '../domain/result.ts'
 import { gradeEvidence } from '../evidence/grade-evidence.ts'
 import { forwardDrop } from '../models/forward-drop.ts'
 import type { Instant } from '../stage/kernel.ts'
@@ -11,7 +11,8 @@ import { junctionLimitOf } from '../stage/thermal-network.ts'
 import type { Candidate } from './candidate.ts'
 import { eventResult, maximumEvent } from './event-result.ts'
 import { type Judgement, judge } from './judge-candidate.ts'
-import { highestSurroundings, type NominalPoint, snubberLoss, stageLossOf, totalLossOf } from './nominal-point.ts'
+import { lossesResult } from './losses-result.ts'
+import { highestSurroundings, type NominalPoint, snubberLoss, stageLossOf } from './nominal-point.ts'
 import { coldCondition, conditionOf, originsAt } from './point-condition.ts'
 
 /** A candidate's nominal result with what later steps (draws, caveats) need of its solution. */
@@ -111,15 +112,7 @@ function unsettledResult(candidate: Candidate, reasons: Reason[]): CandidateResu
     event: null,
     event_maximum: null,
     forward_v: null,
-    losses_w: {
-      conduction: null,
-      recovery_rectifier: null,
-      recovery_switch: null,
-      capacitive: null,
-      leakage: null,
-      forward_recovery: null,
-      total: null,
-    },
+    losses_w: lossesResult(null),
     junction_c: null,
     junction_limit_c: junctionLimitOf(stage, record) - celsiusZero,
     thermal: 'none',
@@ -145,18 +138,6 @@ function pointResult(instant: Instant): PointResult {
     valley_a: instant.valley,
     peak_a: instant.peak,
     mode: conductionModeOf(instant),
-  }
-}
-
-function lossesResult(rows: Float64Array): LossesResult {
-  return {
-    conduction: rows[row.conduction]!,
-    recovery_rectifier: rows[row.recoveryRectifier]!,
-    recovery_switch: rows[row.recoverySwitch]!,
-    capacitive: rows[row.capacitive]!,
-    leakage: rows[row.leakage]!,
-    forward_recovery: rows[row.forwardRecovery]!,
-    total: totalLossOf(rows),
   }
 }
 

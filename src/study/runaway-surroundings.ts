@@ -1,0 +1,16 @@
+import { settle } from '../stage/thermal-balance.ts'
+import { hasThermalPath } from '../stage/thermal-network.ts'
+import type { Candidate } from './candidate.ts'
+import { atMaximumLeakage, deliversCold, highestSurroundings } from './nominal-point.ts'
+
+/**
+ * Ambient (or case) temperature above which a part at maximum leakage has no stable junction temperature any more.
+ * Searched up to the junction limit + 100 K; null where no edge lies below that, or where the part has no leakage.
+ */
+export function runawaySurroundings(candidate: Candidate): number | null {
+  const { kernel, stage, record, rectifier } = candidate
+  if (rectifier.leakage === null || !hasThermalPath(stage, record) || !deliversCold(kernel)) return null
+  const edge = atMaximumLeakage(candidate, () => highestSurroundings(kernel, kernel.thermal.ceiling))
+  settle(kernel)
+  return edge
+}
