@@ -14,21 +14,29 @@ interface SchemaFile {
 }
 
 /**
- * Turns schemas/*.schema.json into one module of checking functions and their types, importable as `#validators`.
+ * Turns the schemas of the input files into checking functions and their types, importable as `#validators`.
  * Compiling a schema takes longer than reading a whole stage, so it is done here and not at every start.
- * Returns the packages whose code the module contains.
+ * Each function is a file of its own, so that a program carries only those it calls.
+ * Returns the packages whose code the functions contain.
  */
 export async function buildValidators(): Promise<readonly string[]> {
   const schemas = readSchemas()
   mkdirSync(folder, { recursive: true })
-  await Promise.all(schemas.map(writeTypes))
   writeFileSync(`${folder}/validators.d.ts`, declarationText(schemas))
-  return bundleValidators(validatorSource(schemas))
+  writeFileSync(`${folder}/validators.js`, schemas.map(({ name }) => `export * from './${name}.js'\n`).join(''))
+  const packages = await Promise.all(schemas.map(buildValidator))
+  return packages.flat()
 }
 
+async function buildValidator(file: SchemaFile): Promise<readonly string[]> {
+  await writeTypes(file)
+  return bundleValidator(file, validatorSource(file))
+}
+
+/** The schema of results is for readers of results; nothing here checks one at run time. */
 function readSchemas(): readonly SchemaFile[] {
   return readdirSync('schemas')
-    .filter((file) => file.endsWith('.schema.json'))
+    .filter((file) => file.endsWith('.schema.json') && file !== 'result.schema.json')
     .sort()
     .map((file) => {
       const schema = JSON.parse(readFileSync(`schemas/${file}`, 'utf8'))
@@ -46,7 +54,7 @@ function ownKeywords(value: unknown, found = new Set<string>()): Set<string> {
   return found
 }
 
-function validatorSource(schemas: readonly SchemaFile[]): string {
+function validatorSource({ name, schema }: SchemaFile): string {
   const ajv = new Ajv2020({
     strict: true,
     strictRequired: false,
@@ -58,15 +66,15 @@ function validatorSource(schemas: readonly SchemaFile[]): string {
     allowUnionTypes: true,
     code: { source: true, esm: true },
   })
-  for (const keyword of ownKeywords(schemas)) ajv.addKeyword(keyword)
-  for (const { schema } of schemas) ajv.addSchema(schema)
+  for (const keyword of ownKeywords(schema)) ajv.addKeyword(keyword)
+  ajv.addSchema(schema)
   // The package is CommonJS: Node hands over its exports object, whose `default` is the function.
   const standaloneCode = standaloneModule.default
-  return standaloneCode(ajv, Object.fromEntries(schemas.map(({ name, schema }) => [functionName(name), schema.$id])))
+  return standaloneCode(ajv, { [functionName(name)]: schema.$id })
 }
 
 /** The generated code asks for helpers of ajv with `require`, which plain ESM has not; bundling puts them in. */
-async function bundleValidators(contents: string): Promise<readonly string[]> {
+async function bundleValidator({ name }: SchemaFile, contents: string): Promise<readonly string[]> {
   const { metafile } = await build({
     stdin: { contents, resolveDir: '.', loader: 'js' },
     bundle: true,
@@ -75,7 +83,7 @@ async function bundleValidators(contents: string): Promise<readonly string[]> {
     mainFields: ['main'],
     target: 'es2022',
     metafile: true,
-    outfile: `${folder}/validators.js`,
+    outfile: `${folder}/${name}.js`,
   })
   return packagesOf(metafile)
 }
