@@ -68,15 +68,19 @@ function squeezed(table: Table, width: number, heading: string): Piece {
 }
 
 /**
- * Widths that fit, first with whole header words, then with broken ones, then with text columns narrowed to
- * `narrowest` (null: not at all); null where they do not.
+ * Widths that fit: header words are broken only as far as needed, then text columns narrowed to `narrowest` (null: not
+ * at all); null where they do not fit.
  */
 function fittingWidths(table: Table, width: number, narrowest: number | null): number[] | null {
-  const whole = naturalWidths(table, false)
-  if (total(whole) <= width) return whole
-  const widths = naturalWidths(table, true)
-  if (total(widths) <= width) return widths
-  return narrowest === null ? null : narrowed(table, widths, width, narrowest)
+  const widths = naturalWidths(table, false)
+  const broken = naturalWidths(table, true)
+  while (total(widths) > width) {
+    const savings = widths.map((size, index) => size - broken[index]!)
+    const best = savings.indexOf(Math.max(...savings))
+    if (savings[best] === 0) return narrowest === null ? null : narrowed(table, widths, width, narrowest)
+    widths[best] = broken[best]!
+  }
+  return widths
 }
 
 /** Takes from the widest text column, one character at a time, until the table fits. */

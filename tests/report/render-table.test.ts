@@ -77,11 +77,11 @@ describe('the ranking', () => {
       Part and recovery event at the operating point
                                                    volt-
                                                      age    V_F
-                                                  margin    hot    Qrr  I_RM    soft-
-      #  part                     class                %      V     nC     A     ness
-      ─  ───────────────────────  ──────────────  ──────  ─────  ─────  ────  ───────
-      1  larch-200v-10a-soft      soft-ultrafast    34.5  0.912  225.0  7.62      1.6
-      2  alder-200v-8a-ultrafast  ultrafast         34.5  0.912  310.0  9.90  unknown
+                                                  margin    hot    Qrr  I_RM
+      #  part                     class                %      V     nC     A  softness
+      ─  ───────────────────────  ──────────────  ──────  ─────  ─────  ────  ────────
+      1  larch-200v-10a-soft      soft-ultrafast    34.5  0.912  225.0  7.62       1.6
+      2  alder-200v-8a-ultrafast  ultrafast         34.5  0.912  310.0  9.90   unknown
 
       Efficiency, margin and price
                                               ambient
