@@ -2,6 +2,9 @@ import { findRoot } from '../numerics/find-root.ts'
 import { evaluate } from './evaluate.ts'
 import { type Kernel, row, switchPower } from './kernel.ts'
 
+/** A hot junction with much heat asks for surroundings below absolute zero; no other junction is taken below this. [K] */
+const coldest = 50
+
 /** A switch that would be hotter than this has no stable temperature of its own. [K] */
 const switchCeiling = 1500
 
@@ -46,13 +49,16 @@ function slaveOthers(kernel: Kernel, reference: number, junction: number): numbe
   const sink = reference + thermal.common * thermal.factor * sinkHeat(kernel)
   let moved = 0
   if (thermal.switchSolved) {
-    const next = sink + thermal.switchSelf * thermal.factor * switchPower(rows)
+    const next = Math.max(sink + thermal.switchSelf * thermal.factor * switchPower(rows), coldest)
     moved = Math.abs(next - temperatures[1]!)
     temperatures[1] = next
   }
   if (kernel.parts > 1) {
     const base = thermal.rectifierOnSink ? sink : reference
-    const next = Math.min(base + thermal.junctionSelf * thermal.factor * rows[row.otherPart]!, junction)
+    const next = Math.max(
+      Math.min(base + thermal.junctionSelf * thermal.factor * rows[row.otherPart]!, junction),
+      coldest,
+    )
     moved = Math.max(moved, Math.abs(next - temperatures[2]!))
     temperatures[2] = next
   }
