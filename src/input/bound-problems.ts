@@ -17,3 +17,20 @@ export function boundProblems(problems: readonly Problem[]): readonly Problem[] 
   }
   return [...sorted.slice(0, most), more]
 }
+
+/**
+ * What the language, the shape and the values of one file have wrong. Where the language is at fault already,
+ * the shape of what stands there is not told again.
+ */
+export function joinProblems(
+  language: readonly Problem[],
+  shape: readonly Problem[],
+  values: readonly Problem[],
+): readonly Problem[] {
+  const told = new Set(language.map(placeOf))
+  return [...language, ...shape.filter((problem) => !told.has(placeOf(problem))), ...values]
+}
+
+function placeOf({ line, column }: Problem): string {
+  return `${line}:${column}`
+}

@@ -1,7 +1,7 @@
 import { validateRectifier } from '#validators'
 import type { RectifierRecord } from '../domain/rectifier.ts'
 import type { Reading } from '../problems/problem.ts'
-import { boundProblems } from './bound-problems.ts'
+import { boundProblems, joinProblems } from './bound-problems.ts'
 import { recordFrom } from './record.ts'
 import { type Reader, type Section, startReader } from './section.ts'
 import { checkShape } from './shape.ts'
@@ -17,7 +17,7 @@ export function readRecords(text: string, file: string): Reading<readonly Rectif
   const reader = startReader(yaml)
   const shape = checkShape(yaml, validateRectifier)
   const records = recordSections(reader).map(recordFrom)
-  const all = [...problems, ...shape, ...reader.problems]
+  const all = joinProblems(problems, shape, reader.problems)
   const warnings = boundProblems(reader.warnings)
   return all.length > 0
     ? { value: null, problems: boundProblems(all), warnings }

@@ -1,7 +1,7 @@
 import { validateStage } from '#validators'
 import type { Stage, StageKind } from '../domain/stage.ts'
 import type { Reading } from '../problems/problem.ts'
-import { boundProblems } from './bound-problems.ts'
+import { boundProblems, joinProblems } from './bound-problems.ts'
 import { checkStage } from './check-stage.ts'
 import {
   group,
@@ -51,7 +51,7 @@ export function readStage(sourceText: string, file: string): Reading<StageDocume
   const root = rootSection(reader)
   const document = documentFrom(root, file)
   checkStage(root, document.stage)
-  const all = [...problems, ...shape, ...reader.problems]
+  const all = joinProblems(problems, shape, reader.problems)
   const warnings = boundProblems(reader.warnings)
   return all.length > 0
     ? { value: null, problems: boundProblems(all), warnings }

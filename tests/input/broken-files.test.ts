@@ -306,7 +306,6 @@ duty_profile: [{load: 1}]
         ],
         [
           "file.yaml:1:11  yaml-forbidden  stage: an anchor cannot be used here; leave the &name out",
-          "file.yaml:2:8  value-kind  title: nothing stands where text is wanted",
           "file.yaml:2:8  yaml-forbidden  title: an alias cannot be used here; write the value out",
         ],
         [

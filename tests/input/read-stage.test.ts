@@ -198,7 +198,7 @@ describe('zero', () => {
 })
 
 it('warns of a 10 H inductor and of a candidate named twice, and still reads the stage', () => {
-  const text = smallStage.replace('22 uH', '10 H') + 'candidates: [first, second, first]\n'
+  const text = `${smallStage.replace('22 uH', '10 H')}candidates: [first, second, first]\n`
   expect(read(text).stage.candidates).toEqual(['first', 'second'])
   expect(told(readStage, text)).toBe(`
 warning: file.yaml:5:24  value-implausible  inductor.inductance: "10 H" is unusual; values from 10 nH to 1 H are usual (check the unit)
