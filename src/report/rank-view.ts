@@ -34,10 +34,7 @@ function tableNote(ranked: readonly CandidateResult[]): string {
 
 /** What carries the doubt and what to measure. */
 function doubtBlocks({ verdict }: RankResult): Block[] {
-  const sensitivity = (verdict.sensitivity ?? []).map(({ input, share }) => ({
-    lead: null,
-    text: `${sharedInputs[input] ?? input}: ${significant(share * 100, 2)} %`,
-  }))
+  const sensitivity = sensitivityItems(verdict.sensitivity ?? [])
   const measure = (verdict.measure_next ?? []).map((next) => ({ lead: null, text: `${capital(measureWords(next))}.` }))
   return [
     ...listBlock('Measure next', 'plain', measure),
@@ -45,7 +42,27 @@ function doubtBlocks({ verdict }: RankResult): Block[] {
   ]
 }
 
-/** Inputs that all candidates share, as an engineer calls them; those of a part already name it. */
+const leastShare = 0.005
+
+function sensitivityItems(shares: readonly { readonly input: string; readonly share: number }[]) {
+  const shown = shares.filter(({ share }) => share >= leastShare)
+  const items = shown.map(({ input, share }) => ({
+    lead: null,
+    text: `${inputWords(input)}: ${significant(share * 100, 2)} %`,
+  }))
+  const rest = shares.length - shown.length
+  if (rest === 0) return items
+  return [
+    ...items,
+    { lead: null, text: `${rest === 1 ? 'one more input' : `${rest} more inputs`}: below ${leastShare * 100} % each` },
+  ]
+}
+
+/** Inputs as an engineer calls them; those of a part name it. */
+function inputWords(input: string): string {
+  return sharedInputs[input] ?? input.replace(/^forward of /, 'forward voltage of ')
+}
+
 const sharedInputs: Readonly<Record<string, string>> = {
   slope: 'current slope of the stage',
   voltage_fall: 'voltage fall time of the switch',

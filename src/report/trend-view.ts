@@ -107,8 +107,11 @@ function crossingItems({ over, crossings }: TrendResult) {
   }))
 }
 
-function limitItems({ over, limits }: TrendResult) {
-  return limits.map(({ id, at, why }) => ({ lead: positionWords(over, at), text: `${id} ${limitWords(why)}.` }))
+function limitItems(trend: TrendResult) {
+  return trend.limits.map((limit) => ({
+    lead: positionWords(trend.over, limit.at),
+    text: `${limit.id} ${limitWords(trend, limit)}.`,
+  }))
 }
 
 function slopeItem(study: SlopeStudy) {

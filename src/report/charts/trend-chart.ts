@@ -103,9 +103,9 @@ export function trendMarks(trend: TrendResult): LineMark[] {
       high: scaled(high),
       text: `${positionWords(trend.over, at)}: above it ${to} is cheaper than ${from}`,
     })),
-    ...trend.limits.map(({ id, at, why }) => ({
-      x: at * scale,
-      text: `${positionWords(trend.over, at)}: ${id} ${limitWords(why)}`,
+    ...trend.limits.map((limit) => ({
+      x: limit.at * scale,
+      text: `${positionWords(trend.over, limit.at)}: ${limit.id} ${limitWords(trend, limit)}`,
     })),
   ]
   return marks.slice(0, mostMarks).toSorted((a, b) => a.x - b.x)

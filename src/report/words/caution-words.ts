@@ -17,8 +17,7 @@ export type CautionCode = (typeof cautionCodes)[number]
 
 export const cautionWords: Readonly<Record<CautionCode, string>> = {
   'lethal-voltage':
-    'Lethal voltage: this stage carries [{voltage:V}|hazardous voltage], above the limits of 60 V dc and 42.4 V peak taken as hazardous. ' +
-    'Touching live parts can kill.',
+    'Lethal voltage: this stage carries [{voltage:V}|a hazardous voltage]; above 60 V dc or 42.4 V peak, touching live parts can kill.',
   'mains-fed':
     'This stage is fed from the mains[ ({mains:V}, up to {peak:V} peak)]: every part of it, ground of the control included, is to be taken as live, ' +
     'also when it does not switch.',

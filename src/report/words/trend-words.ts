@@ -1,4 +1,4 @@
-import type { TrendKey } from '../../domain/study.ts'
+import type { TrendKey, TrendResult } from '../../domain/study.ts'
 import { celsius, quantity, significant } from '../format.ts'
 import { spokenCode } from './sentence.ts'
 
@@ -36,19 +36,33 @@ export function positionWords(over: TrendKey, at: number): string {
   }
 }
 
-const limits: Readonly<Record<string, string>> = {
-  'junction-over-limit': 'reaches its junction limit',
-  'no-stable-temperature': 'loses its stable temperature',
-  'runaway-at-maximum-leakage': 'runs away at maximum leakage',
-  'voltage-margin': 'leaves its voltage margin',
-  'average-current': 'exceeds its mean current',
-  'recovery-too-slow': 'recovers too slowly for its interval',
-  'mode-change': 'changes its conduction mode',
+/** What happens to a part at a limit when the quantity rises past it: it breaks the rule, or ceases to break it. */
+const limits: Readonly<Record<string, readonly [string, string]>> = {
+  'junction-over-limit': ['exceeds its junction limit', 'comes below its junction limit'],
+  'no-stable-temperature': ['loses its stable temperature', 'gains a stable temperature'],
+  'runaway-at-maximum-leakage': ['runs away at maximum leakage', 'no longer runs away at maximum leakage'],
+  'voltage-margin': ['leaves its voltage margin', 'comes within its voltage margin'],
+  'average-current': ['exceeds its mean current', 'comes within its mean current'],
+  'recovery-too-slow': ['recovers too slowly for its interval', 'recovers within its interval'],
 }
 
-/** Why a part ends at a limit, in a few words that follow its name. */
-export function limitWords(why: string): string {
-  return Object.hasOwn(limits, why) ? limits[why]! : lower(spokenCode(why))
+export type TrendLimit = TrendResult['limits'][number]
+
+/** What happens at a limit, in a few words that follow the part's name. */
+export function limitWords(trend: TrendResult, limit: TrendLimit): string {
+  const pair = Object.hasOwn(limits, limit.why) ? limits[limit.why] : undefined
+  return pair === undefined ? `meets ${lower(spokenCode(limit.why))}` : pair[ceases(trend, limit) ? 1 : 0]
+}
+
+/** Whether the part is worse off below the limit: by its temperature, its acceptance, else its junction and peak voltage. */
+function ceases({ points }: TrendResult, { id, at, why }: TrendLimit): boolean {
+  const below = points.findLast((point) => point.at <= at)?.candidates.find((part) => part.id === id)
+  const above = points.find((point) => point.at > at)?.candidates.find((part) => part.id === id)
+  if (below === undefined || above === undefined) return false
+  if (why === 'no-stable-temperature') return below.thermal === 'none'
+  if (below.accepted !== above.accepted) return above.accepted
+  const worse = why === 'voltage-margin' ? 'peak_reverse_v' : 'junction_c'
+  return (below[worse] ?? 0) > (above[worse] ?? 0)
 }
 
 const edges: Readonly<Record<string, string>> = {

@@ -36,7 +36,7 @@ function withOdds(best: CandidateResult): string {
 /** Odds with two digits; never rounded up to certainty. */
 export function oddsText({ odds_best: odds, odds_error: error }: CandidateResult): string {
   if (odds === null) return 'unknown'
-  const text = odds > 0.995 && odds < 1 ? 'above 0.99' : odds < 0.005 && odds > 0 ? 'below 0.01' : odds.toFixed(2)
+  const text = odds > 0.995 ? 'above 0.99' : odds < 0.005 ? 'below 0.01' : odds.toFixed(2)
   return error !== null && error >= 0.005 ? `${text} (±${error.toFixed(2)})` : text
 }
 
@@ -45,12 +45,17 @@ function advice(next: readonly MeasureNext[] | null): string {
   return first === undefined ? '' : `To settle it, ${measureWords(first)}.`
 }
 
-/** One measurement as an order for the bench: "measure recovery of X at 8 A, 350 A/µs and 110 °C: …". */
+/** One measurement as an order for the bench: "measure the recovery of X at 8 A, 350 A/µs and 110 °C (…)". */
 export function measureWords(next: MeasureNext): string {
-  const slope = next.slope_a_per_s === null ? '' : `, ${quantity(next.slope_a_per_s, 'A/us')}`
-  const at = `${quantity(next.current_a, 'A')}${slope} and ${celsius(next.junction_c)}`
   const name = { recovery: 'the recovery', forward: 'the forward voltage', leakage: 'the leakage' }[next.property]
-  return `measure ${name} of ${next.id} at ${at} (should remove ${significant(next.share * 100, 2)} % of the variance of the gap)`
+  const share = `should remove ${significant(next.share * 100, 2)} % of the variance of the gap`
+  return `measure ${name} of ${next.id} at ${conditionWords(next)} (${share})`
+}
+
+function conditionWords({ property, current_a, slope_a_per_s, junction_c }: MeasureNext): string {
+  if (property === 'leakage') return `the blocking voltage and ${celsius(junction_c)}`
+  const slope = slope_a_per_s === null ? '' : `, ${quantity(slope_a_per_s, 'A/us')}`
+  return `${quantity(current_a, 'A')}${slope} and ${celsius(junction_c)}`
 }
 
 function nothingAcceptable(result: RankResult): string {

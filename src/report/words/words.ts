@@ -66,7 +66,8 @@ export function notCoveredText(entry: string): string {
 }
 
 function worded(table: Readonly<Record<string, string>>, code: string, data: SentenceData): string {
-  return visible(Object.hasOwn(table, code) ? sentence(table[code]!, data) : spokenCode(code))
+  const text = visible(Object.hasOwn(table, code) ? sentence(table[code]!, data) : spokenCode(code))
+  return text.charAt(0).toUpperCase() + text.slice(1)
 }
 
 function candidatesOf(result: AnyResult): readonly CandidateResult[] {
