@@ -1,6 +1,6 @@
 #!/usr/bin/env node
 import { Command, CommanderError, InvalidArgumentError } from 'commander'
-import { outcomeOf, usageFailure } from './commands/outcome.ts'
+import { outcomeOf, outcomeOfStream, usageFailure } from './commands/outcome.ts'
 import type { StudyOptions } from './commands/read-study.ts'
 import { openSession } from './commands/session.ts'
 
@@ -9,10 +9,7 @@ const session = openSession(new URL('..', import.meta.url))
 
 process.on('SIGINT', () => process.exit(130))
 for (const stream of [process.stdout, process.stderr]) {
-  // A reader that has seen enough (`| head -1`) is no fault; any other trouble with the stream is told below.
-  stream.on('error', (error: NodeJS.ErrnoException) =>
-    process.exit(error.code === 'EPIPE' ? (process.exitCode ?? 0) : 2),
-  )
+  stream.on('error', (error) => process.exit(outcomeOfStream(error, session) ?? process.exitCode ?? 0))
 }
 
 process.exitCode = await outcomeOf(session, process.argv.slice(2), async (argv) => {
@@ -59,6 +56,25 @@ function describeStudies(program: Command, settle: Settle): void {
     (stage: string, options: StudyOptions) =>
       settle(import('./commands/rank.ts').then(({ runRank }) => runRank(stage, options, session))),
   )
+  studyCommand(
+    program,
+    'trend',
+    'follow losses and temperatures over a quantity; where the order changes, what sets the limits',
+  )
+    .requiredOption('--over <quantity>', 'frequency, load, slope, ambient, input or inductance')
+    .requiredOption('--from <value>', 'lower end, with its unit: "20 kHz"')
+    .requiredOption('--to <value>', 'upper end, with its unit')
+    .option('--steps <n>', 'number of points', wholeNumber(2, 1000), 25)
+    .option('--log', 'equal ratios between the points instead of equal steps')
+    .action((stage, options) =>
+      settle(import('./commands/trend.ts').then(({ runTrend }) => runTrend(stage, options, session))),
+    )
+  studyCommand(program, 'swap', 'is replacing one rectifier by another justified?')
+    .option('--from <id>', "the part in use (default: the stage's incumbent)")
+    .requiredOption('--to <id>', 'the part to replace it')
+    .action((stage, options) =>
+      settle(import('./commands/swap.ts').then(({ runSwap }) => runSwap(stage, options, session))),
+    )
 }
 
 /** A command that studies one stage takes the same options as the others. */
@@ -82,6 +98,19 @@ function studyCommand(program: Command, name: string, summary: string): Command 
 }
 
 function describeFiles(program: Command, settle: Settle): void {
+  program
+    .command('reduce')
+    .argument('<capture>', 'capture settings')
+    .summary('reduce an oscilloscope capture to a recovery row')
+    .description('reduce an oscilloscope capture to a recovery row')
+    .option('--json', 'print one JSON document')
+    .option('-o, --output <file>', 'write to a file; its ending decides the form')
+    .option('--into <record>', 'append the row to the record whose id is device.id')
+    .option('--strict', 'exit code 4 where the capture is warned about')
+    .option('--quiet', 'no notes')
+    .action((capture, options) =>
+      settle(import('./commands/reduce.ts').then(({ runReduce }) => runReduce(capture, options, session))),
+    )
   program
     .command('check')
     .argument('<file...>', 'stage, record, capture and mapping files')

@@ -1,4 +1,5 @@
 import { CommandFailure, failure, failureDocument } from './failure.ts'
+import { writingFailure } from './replace-file.ts'
 import type { Session } from './session.ts'
 
 /** Exit code 2 and 1 are told here, and nowhere else: the person's to mend, and ours. */
@@ -16,6 +17,14 @@ export async function outcomeOf(
     if (asksForJson(argv)) session.print(`${JSON.stringify(told.document, null, 2)}\n`)
     return told.exitCode
   }
+}
+
+/** A reader that has seen enough (`| head -1`) is no fault, null; what else keeps a stream from being written is told. */
+export function outcomeOfStream(error: NodeJS.ErrnoException, session: Session): 2 | null {
+  if (error.code === 'EPIPE') return null
+  const told = writingFailure('standard output', error)
+  if (told instanceof Error) session.tell(`${told.message}\n`)
+  return 2
 }
 
 interface Told {

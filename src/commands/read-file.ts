@@ -82,8 +82,8 @@ const reasons: Readonly<Record<string, string>> = {
 }
 
 /** Turns what the system says about a path into a problem; what is no system error passes as it is. */
-export function readingFailure(path: string, error: unknown): unknown {
+export function readingFailure(path: string, error: unknown, hint = ''): unknown {
   if (error instanceof CommandFailure || !(error instanceof Error) || !('code' in error)) return error
-  if (error.code === 'ENOENT') return failure({ file: path, code: 'file-missing' })
-  return failure({ file: path, code: 'file-unreadable', found: reasons[String(error.code)] ?? error.message })
+  if (error.code === 'ENOENT') return failure({ file: path, code: 'file-missing', hint })
+  return failure({ file: path, code: 'file-unreadable', found: reasons[String(error.code)] ?? error.message, hint })
 }

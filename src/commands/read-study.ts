@@ -1,4 +1,4 @@
-import { dirname, join, relative, sep } from 'node:path'
+import { dirname, join, relative, resolve, sep } from 'node:path'
 import type { RectifierRecord } from '../domain/rectifier.ts'
 import type { Stage } from '../domain/stage.ts'
 import type { StudySettings } from '../domain/study.ts'
@@ -57,13 +57,21 @@ export function readStageAndRecords(
 ): { readonly stage: Stage | null; readonly records: readonly RectifierRecord[] } {
   const document = readAt(desk, stagePath, readStage)
   const named = (document?.records ?? []).map((path) => join(dirname(stagePath), path))
-  const files = [...named, ...further].flatMap((path) => collecting(desk, () => recordFiles([path])) ?? [])
-  const records = [...new Set(files)].sort().flatMap((path) => readAt(desk, path, readRecords) ?? [])
+  const files = [
+    ...named.flatMap((path) => collecting(desk, () => recordFiles(path, `named by ${stagePath}`)) ?? []),
+    ...further.flatMap((path) => collecting(desk, () => recordFiles(path)) ?? []),
+  ]
+  const records = distinctFiles(files).flatMap((path) => readAt(desk, path, readRecords) ?? [])
   // A file that could not be read hides its ids: calling them unknown would only add noise.
   const complete = desk.problems.length === 0
   desk.problems.push(...checkReferences(complete ? document : null, records))
   if (complete) desk.problems.push(...unknownOnly(only, records))
   return { stage: document?.stage ?? null, records }
+}
+
+/** Each file once, however it was spelt, in the order of the names. */
+function distinctFiles(paths: readonly string[]): readonly string[] {
+  return [...new Map(paths.map((path) => [resolve(path), path])).values()].toSorted()
 }
 
 function unknownOnly(only: readonly string[], records: readonly RectifierRecord[]): readonly Problem[] {

@@ -4,25 +4,21 @@ import { failure } from './failure.ts'
 import { readingFailure } from './read-file.ts'
 
 /**
- * The record files behind a list of files and folders, each once, folders searched through and through.
+ * The record files behind a path: itself, or all of a folder, searched through and through.
  * The order is that of the names, not of the disk, so two machines read alike. Linked folders are not followed: they may lead in circles.
  */
-export function recordFiles(paths: readonly string[]): readonly string[] {
-  return [...new Set(paths.flatMap(filesBehind))].sort()
-}
-
-function filesBehind(path: string): readonly string[] {
-  if (!isFolder(path)) return [path]
-  const found = recordsBelow(path)
+export function recordFiles(path: string, hint = ''): readonly string[] {
+  if (!isFolder(path, hint)) return [path]
+  const found = recordsBelow(path).toSorted()
   if (found.length > 0) return found
   throw failure({ file: path, code: 'file-empty', expected: 'a folder with records in .yaml or .yml files' })
 }
 
-function isFolder(path: string): boolean {
+function isFolder(path: string, hint: string): boolean {
   try {
     return statSync(path).isDirectory()
   } catch (error) {
-    throw readingFailure(path, error)
+    throw readingFailure(path, error, hint)
   }
 }
 

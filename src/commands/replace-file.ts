@@ -100,5 +100,5 @@ const reasons: Readonly<Record<string, string>> = {
 export function writingFailure(path: string, error: unknown): unknown {
   if (!(error instanceof Error) || !('code' in error)) return error
   const found = reasons[String(error.code)] ?? error.message
-  return unwritable(path, found, 'what stood there before is untouched')
+  return unwritable(path, found, '')
 }

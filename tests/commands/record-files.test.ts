@@ -8,23 +8,23 @@ import { scratchFolder } from './scratch.ts'
 import { messageOf } from './session-double.ts'
 
 describe('finding record files', () => {
-  it('searches folders through and through, in the order of names, each file once', () => {
+  it('searches folders through and through, in the order of names, nothing twice', () => {
     const folder = scratchFolder()
     mkdirSync(join(folder, 'a', 'deep'), { recursive: true })
     for (const name of ['b.yaml', 'a/deep/z.yml', 'a/x.YAML', 'a/readme.txt', '.hidden.yaml'])
       writeFileSync(join(folder, name), '')
     symlinkSync(folder, join(folder, 'a', 'circle'))
-    const found = recordFiles([folder, join(folder, 'b.yaml')]).map((path) => path.slice(folder.length + 1))
+    const found = recordFiles(folder).map((path) => path.slice(folder.length + 1))
     expect(found).toEqual(['a/deep/z.yml', 'a/x.YAML', 'b.yaml'])
   })
 
   it('says that a folder holds no records, or is not there', () => {
     const folder = scratchFolder()
-    expect(messageOf(() => recordFiles([folder]))).toBe(
+    expect(messageOf(() => recordFiles(folder))).toBe(
       `${folder}  file-empty  holds nothing; wanted is a folder with records in .yaml or .yml files`,
     )
-    expect(messageOf(() => recordFiles([join(folder, 'none')]))).toBe(
-      `${folder}/none  file-missing  there is no such file or folder`,
+    expect(messageOf(() => recordFiles(join(folder, 'none'), 'named by stage.yaml'))).toBe(
+      `${folder}/none  file-missing  there is no such file or folder (named by stage.yaml)`,
     )
   })
 })
