@@ -22,7 +22,7 @@ export interface RampFigures {
 }
 
 /** Other ends at which the charge is given beside the stated one, as share of the peak; 0 is the whole tail. */
-const otherEnds = [0.1, 0.25, 0]
+const otherEnds = [0.1, 0, 0.25]
 
 /** Reads the figures off a fitted commutation. */
 export function rampFigures(

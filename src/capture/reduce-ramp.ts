@@ -123,7 +123,7 @@ function rampSpread(
   })
   // the same event with nothing, or everything, of the rounding taken out
   const other = settings.bandwidth === null ? { ...ramp.curve, rounding: 0 } : ramp.fitted.curve
-  const crossing = ramp.crossing + ramp.curve.rounding - other.rounding
+  const crossing = ramp.crossing + other.rounding - ramp.curve.rounding
   const without = rampFigures(
     window,
     { ...ramp, curve: other, crossing },

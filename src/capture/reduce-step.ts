@@ -118,6 +118,8 @@ function traceOf(window: EventWindow, step: FittedStep): CaptureTrace {
     current: Float64Array.from(kept, (k) => window.current[k]! - base),
     fitted: Float64Array.from(kept, (k) => {
       const t = window.time[k]!
+      // the edge has no model: it is drawn as it was sampled
+      if (Math.abs(t - step.crossing) < 1.5 * step.edgeTime) return window.current[k]! - base
       return t < step.crossing ? step.forward.value - base : -reverseCurrentAt(curve, t)
     }),
     voltage: window.voltage === null ? null : Float64Array.from(kept, (k) => window.voltage![k]!),

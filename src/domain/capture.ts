@@ -189,3 +189,25 @@ export interface ReducedCapture {
   readonly noise: number
   readonly trace: CaptureTrace
 }
+
+/** Result of `reduce`: plain SI with the unit in the key, temperatures in degrees Celsius. */
+export interface CaptureDocument {
+  readonly format: 1
+  readonly tool: { readonly name: 'ebbwatt'; readonly version: string }
+  readonly seed: number
+  readonly inputs: readonly { readonly path: string; readonly sha256: string }[]
+  readonly fixture: 'ramp' | 'step'
+  readonly device: { readonly id: string | null; readonly junction_c: number }
+  readonly recovery: 'measured' | 'none-measurable'
+  readonly row: Readonly<Record<string, number | string | null>>
+  /** Where no stored charge can be told from the fixture: no more than this. */
+  readonly upper_bound: { readonly qrr_c: number; readonly time_s: number } | null
+  readonly charge_by_end: readonly { readonly end: string; readonly qrr_c: number }[]
+  /** One relative standard deviation by key of the row; `row` is what a record's row gets. */
+  readonly spread: Readonly<Record<string, number>>
+  readonly offset_a: number
+  readonly noise_a: number
+  readonly warnings: readonly { readonly code: CaptureCaveatCode; text: string; readonly data: CaptureCaveat['data'] }[]
+  readonly understood: Readonly<Record<string, unknown>>
+  readonly cautions: readonly { readonly code: string; text: string; readonly data: CaptureCaveat['data'] }[]
+}

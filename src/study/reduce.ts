@@ -125,7 +125,7 @@ function endText(end: number): string {
   return end === 0 ? 'whole tail' : `${Number((100 * end).toPrecision(6))} % of I_RM`
 }
 
-function understoodOf({ settings, reading, reference }: ReduceInput): CaptureDocument['understood'] {
+export function understoodOf({ settings, reading, reference }: ReduceInput): CaptureDocument['understood'] {
   const { columns, start, interval, headerRows, pairsAveraged, timeEvened, ...rest } = reading
   return {
     file: settings.file,
@@ -159,7 +159,7 @@ function cautionsOf(
   for (const value of waveform.voltage ?? []) highest = Math.max(highest, Math.abs(value))
   const unknown = settings.fixture === 'ramp' && waveform.voltage === null
   if (!unknown && highest <= hazardousPeak) return []
-  const voltage = figures.kind === 'ramp' && figures.voltage !== null ? Math.max(figures.voltage, highest) : highest
+  const voltage = figures.kind === 'ramp' && figures.voltage !== null ? figures.voltage : highest
   const data: CaptureDocument['cautions'][number]['data'] = unknown ? {} : { voltage }
   return codes.map((code) => ({ code, text: '', data: code === 'lethal-voltage' ? data : {} }))
 }

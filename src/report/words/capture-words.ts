@@ -18,7 +18,7 @@ export const captureWarningWords: Readonly<Record<CaptureCaveatCode, string>> = 
     'The tail rings at {frequency:Hz} with {amplitude:A}: ends and charge are read through it. Shorten loop and ground lead, or damp the fixture.',
   skew:
     'The reverse voltage begins to rise {skew:s} after the current peak; zero is expected, so the channels are skewed and the energy is wrong. ' +
-    'Deskew them, or add {skew:s} to current_delay with the opposite sign.',
+    'Deskew them, or lower current_delay by {skew:s}.',
   'shunt-inductance':
     'The current jumps by {error:A} at the start of the ramp, as a shunt with {jump:s} of L/R does[ ({inductance:H})]: slope is right, peak and charge are read high. ' +
     'Use a coaxial shunt or compensate it.',
