@@ -161,7 +161,7 @@ describe('README.md', () => {
     const commands = [...help().matchAll(/^ {2}(\w+) (?:\[options\] )?[<[]/gm)].map(([, name]) => name!)
     expect(commands).toEqual(['rank', 'trend', 'swap', 'review', 'reduce', 'check', 'start', 'help'])
     const options = new Set(commands.flatMap((name) => help(name).match(/--[a-z]+/g) ?? []))
-    const known = readme.match(/--[a-z]+|-o FILE/g) ?? []
+    const known: readonly string[] = readme.match(/--[a-z]+|-o FILE/g) ?? []
     const unnamed = [...options].filter(
       (option) => !known.includes(option) && !['--help', '--output', '--version'].includes(option),
     )
