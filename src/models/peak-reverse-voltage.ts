@@ -51,15 +51,17 @@ export interface RingingPeakInput {
   readonly parts: number
 }
 
-/** Runge-Kutta steps per shortest natural period, and the most taken (then what rings is far below 0.1 % of V). */
+/** Runge-Kutta steps per shortest natural period, and the most taken; a slower fall has an envelope instead. */
 const stepsPerPeriod = 64
-const mostSteps = 4000
+const mostSteps = 20_000
 
 /**
  * Peak reverse voltage of the ringing of loop inductance and junction capacitance while the switch's voltage falls.
  *
  * Equation: L di/dt = V min(t/t_fv, 1) − v, C(v) dv/dt = i, from rest. The fall is integrated; after it nothing drives the
  * ringing, so the peak follows from L i²/2 + Ec(v) − V Qc(v) = constant, which is the peak of an integration on.
+ *
+ * Over more than about 300 natural periods of fall the two corners' ringing is added up as if in step (adiabatic envelope).
  *
  * Valid for: V, L > 0, any t_fv ≥ 0, m < 2. Deviations: no damping at all, so it is pessimistic; stored charge is not in it.
  *
@@ -69,29 +71,39 @@ const mostSteps = 4000
  * @example ringingPeakVoltage({ voltage: 400, voltageFall: 15e-9, loopInductance: 20e-9, capacitance: { kind: 'law', zeroBias: 400e-12, builtIn: 1.2, grading: 0.46 }, parts: 1 }) // 546.459
  */
 export function ringingPeakVoltage(input: RingingPeakInput): number {
-  const { voltage, loopInductance } = input
+  const { voltage, voltageFall, loopInductance } = input
   if (!(voltage > 0 && loopInductance > 0)) return voltage
-  const capacitance = capacitanceLaw(input.capacitance, input.parts)
-  const state = stateAfterRamp(input, capacitance)
-  // from here on nothing drives the ringing: its energy against the constant voltage is conserved
-  const energyAt = (v: number) =>
-    capacitiveEnergy({ capacitance, voltage: v }) - voltage * capacitiveCharge({ capacitance, voltage: v })
-  const energy = 0.5 * loopInductance * state.current * state.current + energyAt(state.voltage)
-  const missing = (v: number) => energyAt(v) - energy
+  const law = capacitanceLaw(input.capacitance, input.parts)
+  const fastest = Math.sqrt(loopInductance * capacitanceAt({ capacitance: law, voltage: 2 * voltage }))
+  // a fall this short moves nothing before it is over
+  if (voltageFall < 1e-5 * fastest) return peakFrom(input, law, 0, 0)
+  const steps = 32 + Math.ceil((stepsPerPeriod * voltageFall) / (2 * Math.PI * fastest))
+  return steps > mostSteps ? slowFallPeak(input, law) : peakAfterFall(input, law, steps)
+}
+
+/** Highest voltage of the free ringing from a state: nothing drives it, so its energy against V is conserved. */
+function peakFrom({ voltage, loopInductance }: RingingPeakInput, law: CapacitanceLaw, v: number, i: number): number {
+  const energyAt = (u: number) =>
+    capacitiveEnergy({ capacitance: law, voltage: u }) - voltage * capacitiveCharge({ capacitance: law, voltage: u })
+  const energy = 0.5 * loopInductance * i * i + energyAt(Math.max(0, v))
+  const missing = (u: number) => energyAt(u) - energy
   let high = 2 * voltage
-  for (let i = 0; i < 60 && missing(high) < 0; i++) high *= 2
+  for (let n = 0; n < 60 && missing(high) < 0; n++) high *= 2
   const found = findRoot({ f: missing, low: voltage, high, tolerance: 1e-9 * voltage, maxIterations: 100 })
   return found === null ? voltage : Math.max(voltage, found.root)
 }
 
-/** Voltage and current at the end of the drive's ramp, from rest, by the classical Runge-Kutta method. */
-function stateAfterRamp(
-  { voltage, voltageFall, loopInductance }: RingingPeakInput,
-  law: CapacitanceLaw,
-): { readonly voltage: number; readonly current: number } {
-  if (!(voltageFall > 0)) return { voltage: 0, current: 0 }
-  const fastest = Math.sqrt(loopInductance * capacitanceAt({ capacitance: law, voltage: 2 * voltage }))
-  const steps = Math.min(mostSteps, 32 + Math.ceil((stepsPerPeriod * voltageFall) / (2 * Math.PI * fastest)))
+/** Ringing of both corners of a slow fall, in step: the first grows as its energy over its frequency stays. */
+function slowFallPeak({ voltage, voltageFall, loopInductance }: RingingPeakInput, law: CapacitanceLaw): number {
+  const atVoltage = capacitanceAt({ capacitance: law, voltage })
+  const first = Math.sqrt(loopInductance * law.zeroBias) * (law.zeroBias / atVoltage) ** 0.75
+  const second = Math.sqrt(loopInductance * atVoltage)
+  return voltage + (voltage / voltageFall) * (first + second)
+}
+
+/** Integrates the fall from rest by the classical Runge-Kutta method. */
+function peakAfterFall(input: RingingPeakInput, law: CapacitanceLaw, steps: number): number {
+  const { voltage, voltageFall, loopInductance } = input
   const h = voltageFall / steps
   const rate = voltage / voltageFall
   const charging = (v: number) => (v > 0 ? (1 + v / law.builtIn) ** law.grading : 1) / law.zeroBias
@@ -111,5 +123,5 @@ function stateAfterRamp(
     v += (h / 6) * (v1 + 2 * v2 + 2 * v3 + v4)
     i += (h / 6) * (i1 + 2 * i2 + 2 * i3 + i4)
   }
-  return { voltage: Math.max(0, v), current: i }
+  return peakFrom(input, law, v, i)
 }

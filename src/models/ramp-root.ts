@@ -28,7 +28,8 @@ export function scaledTimeToPeak(crossing: number, charge: number, tail: number)
         : share * (grown - (crossing - charge) * decay) - x
     if (!(missing > 0)) return x
     const curvature = share * decay * weight
-    const rise = 1 - curvature
+    // 1 − curvature, without losing the digits of a ramp far shorter than tau
+    const rise = tail + share * (grown - decay * (crossing - charge))
     if (curvature > 0) {
       const step = (2 * missing) / (rise + Math.sqrt(rise * rise + 2 * curvature * missing))
       x += step
