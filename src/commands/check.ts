@@ -1,5 +1,4 @@
 import type { RectifierRecord } from '../domain/rectifier.ts'
-import { readCapture } from '../input/capture-settings.ts'
 import { checkReferences } from '../input/check-references.ts'
 import { readRecords } from '../input/read-records.ts'
 import { collecting, type Desk, openDesk, readAt, settleDesk } from './desk.ts'
@@ -13,7 +12,7 @@ export interface CheckOptions {
   readonly quiet?: boolean
 }
 
-type FileKind = 'stage' | 'records' | 'capture'
+type FileKind = 'stage' | 'records' | 'capture' | 'mapping'
 
 /** `ebbwatt check FILE...`: what is wrong in any of them, all at once; a stage brings the records it names. */
 export async function runCheck(paths: readonly string[], options: CheckOptions, session: Session): Promise<number> {
@@ -23,7 +22,8 @@ export async function runCheck(paths: readonly string[], options: CheckOptions, 
     const kind = collecting(desk, () => kindOf(readText(path).text))
     return kind === null ? [] : [{ path, kind }]
   })
-  const records = checked.flatMap(({ path, kind }) => checkAs[kind](desk, path))
+  const records: RectifierRecord[] = []
+  for (const { path, kind } of checked) records.push(...(await checkAs[kind](desk, path, session)))
   desk.problems.push(...checkReferences(null, records))
   settleDesk(desk, options.quiet === true, session)
   if (options.json === true) session.print(`${JSON.stringify({ files: checked, warnings: desk.warnings }, null, 2)}\n`)
@@ -31,22 +31,36 @@ export async function runCheck(paths: readonly string[], options: CheckOptions, 
   return 0
 }
 
+type Check = (desk: Desk, path: string, session: Session) => Promise<readonly RectifierRecord[]>
+
 /** Returns the records of a record file: those that were named together must not share an id. */
-const checkAs: Readonly<Record<FileKind, (desk: Desk, path: string) => readonly RectifierRecord[]>> = {
-  stage: (desk, path) => {
-    readStageAndRecords(desk, path, {})
+const checkAs: Readonly<Record<FileKind, Check>> = {
+  stage: async (desk, path, session) => {
+    await readStageAndRecords(desk, path, {}, session)
     return []
   },
-  capture: (desk, path) => {
-    readAt(desk, path, readCapture)
+  capture: async (desk, path) => {
+    readAt(desk, path, (await import('../input/capture-settings.ts')).readCapture)
     return []
   },
-  records: (desk, path) => readAt(desk, path, readRecords) ?? [],
+  mapping: async (desk, path) => {
+    readAt(desk, path, (await import('../input/read-mapping.ts')).readMapping)
+    return []
+  },
+  records: async (desk, path) => readAt(desk, path, readRecords) ?? [],
 }
 
 /** Each kind of file has a key at its top that no other has; what has none of them is read as records. */
+const kindKeys: readonly (readonly [FileKind, RegExp])[] = [
+  ['stage', topKey('stage')],
+  ['capture', topKey('capture')],
+  ['mapping', topKey('catalogue')],
+]
+
+function topKey(key: string): RegExp {
+  return new RegExp(`^(?:\\{[ \\t]*)?["']?${key}["']?[ \\t]*:`, 'm')
+}
+
 function kindOf(text: string): FileKind {
-  const hasTopKey = (key: string) => new RegExp(`^(?:\\{[ \\t]*)?["']?${key}["']?[ \\t]*:`, 'm').test(text)
-  if (hasTopKey('stage')) return 'stage'
-  return hasTopKey('capture') ? 'capture' : 'records'
+  return kindKeys.find(([, key]) => key.test(text))?.[0] ?? 'records'
 }

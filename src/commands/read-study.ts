@@ -1,27 +1,24 @@
-import { dirname, join, relative, resolve, sep } from 'node:path'
+import { dirname, isAbsolute, join, relative, sep } from 'node:path'
 import type { RectifierRecord } from '../domain/rectifier.ts'
 import type { Stage } from '../domain/stage.ts'
 import type { StudySettings } from '../domain/study.ts'
 import { checkReferences } from '../input/check-references.ts'
-import { readRecords } from '../input/read-records.ts'
 import { readStage } from '../input/read-stage.ts'
 import { didYouMean } from '../problems/nearest.ts'
 import type { Problem } from '../problems/problem.ts'
 import type { OutputOptions } from './delivery.ts'
 import { collecting, type Desk, openDesk, readAt, settleDesk } from './desk.ts'
 import { onCommandLine } from './failure.ts'
+import { type RecordOptions, readAllRecords } from './read-all-records.ts'
 import { recordFiles } from './record-files.ts'
 import type { Session } from './session.ts'
 
 /** Options that every study of a stage takes. */
-export interface StudyOptions extends OutputOptions {
+export interface StudyOptions extends OutputOptions, RecordOptions {
   readonly records?: readonly string[]
   readonly only?: readonly string[]
-  readonly mapping?: string
   readonly seed: number
   readonly draws: number
-  readonly strict?: boolean
-  readonly quiet?: boolean
 }
 
 /** Everything a study needs, read and checked. */
@@ -34,9 +31,9 @@ export interface StudyMaterial {
 }
 
 /** Reads a stage and its records; every problem of every file is told at once. */
-export function readStudy(stagePath: string, options: StudyOptions, session: Session): StudyMaterial {
+export async function readStudy(stagePath: string, options: StudyOptions, session: Session): Promise<StudyMaterial> {
   const desk = openDesk()
-  const { stage, records } = readStageAndRecords(desk, stagePath, options)
+  const { stage, records } = await readStageAndRecords(desk, stagePath, options, session)
   settleDesk(desk, options.quiet === true, session)
   if (stage === null) throw new Error('a stage without a value and without a problem')
   const only = [...new Set(options.only ?? [])]
@@ -50,18 +47,20 @@ export function readStudy(stagePath: string, options: StudyOptions, session: Ses
 }
 
 /** The stage and all records it names, with those of the command line; what they say of each other is checked. */
-export function readStageAndRecords(
+export async function readStageAndRecords(
   desk: Desk,
   stagePath: string,
-  { records: further = [], only = [] }: Pick<StudyOptions, 'records' | 'only'>,
-): { readonly stage: Stage | null; readonly records: readonly RectifierRecord[] } {
+  options: RecordOptions & Pick<StudyOptions, 'records' | 'only'>,
+  session: Session,
+): Promise<{ readonly stage: Stage | null; readonly records: readonly RectifierRecord[] }> {
+  const { records: further = [], only = [] } = options
   const document = readAt(desk, stagePath, readStage)
-  const named = (document?.records ?? []).map((path) => join(dirname(stagePath), path))
+  const named = (document?.records ?? []).map((path) => seenFrom(stagePath, path))
   const files = [
     ...named.flatMap((path) => collecting(desk, () => recordFiles(path, `named by ${stagePath}`)) ?? []),
     ...further.flatMap((path) => collecting(desk, () => recordFiles(path)) ?? []),
   ]
-  const records = distinctFiles(files).flatMap((path) => readAt(desk, path, readRecords) ?? [])
+  const records = await readAllRecords(desk, files, options, session)
   // A file that could not be read hides its ids: calling them unknown would only add noise.
   const complete = desk.problems.length === 0
   desk.problems.push(...checkReferences(complete ? document : null, records))
@@ -69,9 +68,9 @@ export function readStageAndRecords(
   return { stage: document?.stage ?? null, records }
 }
 
-/** Each file once, however it was spelt, in the order of the names. */
-function distinctFiles(paths: readonly string[]): readonly string[] {
-  return [...new Map(paths.map((path) => [resolve(path), path])).values()].toSorted()
+/** A path in a file is seen from that file. */
+function seenFrom(file: string, path: string): string {
+  return isAbsolute(path) ? path : join(dirname(file), path)
 }
 
 function unknownOnly(only: readonly string[], records: readonly RectifierRecord[]): readonly Problem[] {

@@ -1,0 +1,88 @@
+import { extname, resolve } from 'node:path'
+import type { RectifierRecord } from '../domain/rectifier.ts'
+import type { CatalogueMapping } from '../input/read-mapping.ts'
+import { readRecords } from '../input/read-records.ts'
+import { type Desk, readAt } from './desk.ts'
+import { onCommandLine } from './failure.ts'
+import type { Session } from './session.ts'
+
+export interface RecordOptions {
+  readonly mapping?: string
+  readonly strict?: boolean
+  readonly quiet?: boolean
+}
+
+/** All records of YAML files and, through the mapping, of CSV tables; each file once, however it was spelt. */
+export async function readAllRecords(
+  desk: Desk,
+  paths: readonly string[],
+  options: RecordOptions,
+  session: Session,
+): Promise<readonly RectifierRecord[]> {
+  const files = [...new Map(paths.map((path) => [resolve(path), path])).values()].toSorted()
+  const tables = files.filter(isTable)
+  const mapping = await readMappingFor(desk, tables, options)
+  const fromTables = mapping === null ? [] : await readTables(desk, tables, mapping, options, session)
+  return [
+    ...files.filter((path) => !isTable(path)).flatMap((path) => readAt(desk, path, readRecords) ?? []),
+    ...fromTables,
+  ]
+}
+
+function isTable(path: string): boolean {
+  return extname(path).toLowerCase() === '.csv'
+}
+
+async function readMappingFor(
+  desk: Desk,
+  tables: readonly string[],
+  { mapping }: RecordOptions,
+): Promise<CatalogueMapping | null> {
+  if (mapping !== undefined) {
+    if (tables.length === 0) desk.warnings.push(unusedMapping(mapping))
+    return readAt(desk, mapping, (await import('../input/read-mapping.ts')).readMapping)
+  }
+  for (const found of tables) {
+    const expected = '--mapping FILE, which says what its columns are'
+    desk.problems.push({
+      ...onCommandLine('--mapping'),
+      code: 'option-unusable',
+      found: `${found} is a table of parts`,
+      expected,
+    })
+  }
+  return null
+}
+
+function unusedMapping(found: string) {
+  return {
+    ...onCommandLine('--mapping'),
+    code: 'value-unused',
+    found,
+    expected: 'no .csv file is among the records',
+  } as const
+}
+
+/** Bad rows are left out and told cell by cell; with `--strict` they are problems. */
+async function readTables(
+  desk: Desk,
+  tables: readonly string[],
+  mapping: CatalogueMapping,
+  { strict, quiet }: RecordOptions,
+  session: Session,
+): Promise<readonly RectifierRecord[]> {
+  const { readCatalogue } = await import('../input/read-catalogue.ts')
+  return tables.flatMap((path) => {
+    session.progress(`reading ${path} ...`)
+    const catalogue = readAt(desk, path, (text, file) => {
+      const reading = readCatalogue(text, file, mapping)
+      const refused = strict === true && (reading.value?.badRows ?? 0) > 0
+      return refused ? { value: null, problems: reading.warnings, warnings: [] } : reading
+    })
+    session.progress('')
+    if (catalogue === null) return []
+    const { rows, badRows, records } = catalogue
+    if (quiet !== true) session.tell(`${path}: ${rows} rows, ${records.length} used, ${badRows} left out\n`)
+    return records
+  })
+}
