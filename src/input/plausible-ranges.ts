@@ -66,23 +66,53 @@ const ranges: Readonly<Record<string, Range>> = {
   'duty_profile.ambient': ['temperature', '-60 degC', '150 degC'],
 }
 
-const numbers = new Map<string, readonly [number, number]>()
+interface Bounds {
+  readonly low: number
+  readonly high: number
+  readonly sentence: string
+}
+
+/** By parent, then by key; null where nothing is known. Filled as values come: a catalogue asks a million times. */
+const known = new Map<string, Map<string, Bounds | null>>()
 
 /** Why a value is unusual there, or null: "values from 10 nH to 1 H are usual". */
 export function unusualBecause(path: Path, key: string, value: number): string | null {
-  const parent = path.findLast((step) => typeof step === 'string')
-  const name = parent === undefined ? key : `${parent}.${key}`
-  const range = ranges[name]
-  if (range === undefined || value === 0) return null
-  const [low, high] = numbers.get(name) ?? remember(name, range)
-  const slack = 1e-9
-  if (value >= low * (1 - slack) && value <= high * (1 + slack)) return null
-  return `values from ${range[1]} to ${range[2]} are usual`
+  if (value === 0) return null
+  const bounds = boundsOf(parentOf(path), key)
+  if (bounds === null || (value >= bounds.low && value <= bounds.high)) return null
+  return bounds.sentence
 }
 
-function remember(name: string, [kind, low, high]: Range): readonly [number, number] {
-  const pair = [low, high].map((text) => parseQuantity(text, { kind, sign: 'any' }))
-  const numeric = [Number(pair[0]), Number(pair[1])] as const
-  numbers.set(name, numeric)
-  return numeric
+/** The key that a path ends in, positions in lists left out. */
+function parentOf(path: Path): string {
+  const last = path[path.length - 1]
+  const parent = typeof last === 'number' ? path[path.length - 2] : last
+  return typeof parent === 'string' ? parent : ''
+}
+
+function boundsOf(parent: string, key: string): Bounds | null {
+  let inside = known.get(parent)
+  if (inside === undefined) {
+    inside = new Map()
+    known.set(parent, inside)
+  }
+  let bounds = inside.get(key)
+  if (bounds === undefined) {
+    bounds = makeBounds(parent === '' ? key : `${parent}.${key}`)
+    inside.set(key, bounds)
+  }
+  return bounds
+}
+
+function makeBounds(name: string): Bounds | null {
+  const range = ranges[name]
+  if (range === undefined) return null
+  const [kind, lowText, highText] = range
+  const [low, high] = [lowText, highText].map((text) => Number(parseQuantity(text, { kind, sign: 'any' })))
+  // The ends themselves are usual, however their last digit rounds.
+  return {
+    low: low! * (1 - 1e-9),
+    high: high! * (1 + 1e-9),
+    sentence: `values from ${lowText} to ${highText} are usual`,
+  }
 }

@@ -41,6 +41,7 @@ export function parseQuantity(text: string, rule: QuantityRule): number | Quanti
 const commaHint = 'write the decimals after a point and leave out thousands separators'
 
 function malformedRest(rest: string, kind: QuantityKindName): QuantityRefusal | null {
+  if (/^ ?[a-zA-Z%]/.test(rest)) return null
   if (/^\s*$/.test(rest)) return refuse('unit-missing', kind, '')
   if (/^\s*,\s*\d/.test(rest))
     return { refused: true, code: 'number-decimal-comma', expected: wantedQuantity(kind), hint: commaHint }
@@ -93,16 +94,19 @@ function checked(
 }
 
 /** mathjs is asked once for each distinct text of a unit; the bound keeps hostile files from filling the memory. */
-const known = new Map<string, Scale | QuantityRefusal>()
-const mostKnown = 4096
+const known = new Map<QuantityKindName, Map<string, Scale | QuantityRefusal>>()
+const mostKnown = 256
 
 function conversionOf(unitText: string, kind: QuantityKindName): Scale | QuantityRefusal {
-  const key = `${kind} ${unitText}`
-  const remembered = known.get(key)
+  let ofKind = known.get(kind)
+  if (ofKind === undefined || ofKind.size >= mostKnown) {
+    ofKind = new Map()
+    known.set(kind, ofKind)
+  }
+  const remembered = ofKind.get(unitText)
   if (remembered !== undefined) return remembered
-  if (known.size >= mostKnown) known.clear()
   const conversion = findConversion(unitText, kind)
-  known.set(key, conversion)
+  ofKind.set(unitText, conversion)
   return conversion
 }
 
