@@ -70,7 +70,14 @@ const specialUnits: Readonly<Record<string, (value: number) => string>> = {
   'K/W': (value) => `${significant(value)} K/W`,
   K: (value) => `${significant(value)} K`,
   kWh: (value) => `${significant(value)} kWh`,
+  odds: (value) => odds(value),
   n: (value) => String(Math.round(value)),
+}
+
+/** Odds with two digits, never rounded to certainty. */
+export function odds(value: number): string {
+  if (value > 0.995) return 'above 0.99'
+  return value < 0.005 ? 'below 0.01' : value.toFixed(2)
 }
 
 /** Temperature already in degrees Celsius, to whole degrees: a junction is not known better. */

@@ -45,7 +45,7 @@ function blockMarkup(block: Block, chart: string): string {
     case 'table':
       return [
         headingMarkup(block.heading),
-        ...groupTables(block.table).map(({ group, table }) => tableMarkup(table, group)),
+        ...groupTables(block.table).map(({ group, table }) => tableMarkup(table, group, group !== block.heading)),
         block.note === null ? '' : `<p>${escapeText(block.note)}</p>`,
       ].join('\n')
   }
@@ -59,8 +59,8 @@ function itemMarkup({ lead, text }: { readonly lead: string | null; readonly tex
   return `<li>${lead === null ? '' : `<strong>${escapeText(lead)}:</strong> `}${escapeText(text)}</li>`
 }
 
-/** A table under its caption; it scrolls by itself where the page is narrow. */
-export function tableMarkup({ columns, rows }: Table, caption: string): string {
+/** A table, under its caption unless a heading says the same; it scrolls by itself where the page is narrow. */
+export function tableMarkup({ columns, rows }: Table, caption: string, captioned: boolean): string {
   const heads = columns
     .map((column) => `<th scope="col"${numeric(column)}>${escapeText(headerText(column))}</th>`)
     .join('')
@@ -68,7 +68,7 @@ export function tableMarkup({ columns, rows }: Table, caption: string): string {
     row.map(({ text }, index) => `<td${numeric(columns[index]!)}>${escapeText(text)}</td>`).join('')
   const body = rows.map((row) => `<tr>${cells(row)}</tr>`).join('\n')
   return (
-    `<div class="scroll" tabindex="0" role="region" aria-label="${escapeText(caption)}"><table><caption>${escapeText(caption)}</caption>` +
+    `<div class="scroll" tabindex="0" role="region" aria-label="${escapeText(caption)}"><table>${captioned ? `<caption>${escapeText(caption)}</caption>` : ''}` +
     `<thead><tr>${heads}</tr></thead>\n<tbody>${body}</tbody></table></div>`
   )
 }

@@ -1,7 +1,7 @@
 import type { CandidateResult } from '../domain/result.ts'
 import type { SwapLoad, SwapResult } from '../domain/study.ts'
 import { closingBlocks, drawsFact, listBlock, rejectedBlock, stageFacts, titleOf, withCautions } from './common-view.ts'
-import { celsius, quantity, significant, withInterval } from './format.ts'
+import { celsius, odds, quantity, significant, withInterval } from './format.ts'
 import { rankColumns } from './rank-columns.ts'
 import { type ColumnSpec, numberColumn, tableOf, textColumn } from './table-view.ts'
 import type { Block, Fact, ReportView, Table } from './view-types.ts'
@@ -102,7 +102,7 @@ function swapFacts(swap: SwapResult): Fact[] {
     saves_w.median === null
       ? null
       : { label: 'Saves', text: withInterval(saves_w.median, saves_w.low, saves_w.high, 'W') },
-    swap.odds_better === null ? null : { label: 'Odds that it saves', text: swap.odds_better.toFixed(2) },
+    swap.odds_better === null ? null : { label: 'Odds that it saves', text: odds(swap.odds_better) },
     change('Junction of the rectifier', temperature(from), temperature(to), swap.junction_change_k),
     change(
       'Junction of the switch',

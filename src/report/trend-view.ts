@@ -47,6 +47,7 @@ function cheapestColumns(over: TrendKey): readonly ColumnSpec<Point>[] {
     numberColumn('stage loss', 'W', group, (point) => best(point)?.stage_loss_w ?? null, { family: 'stage' }),
     numberColumn('total', 'W', group, (point) => best(point)?.total_w ?? null, { family: 'stage' }),
     numberColumn('Tj', '°C', group, (point) => best(point)?.junction_c ?? null, { decimals: 0 }),
+    ...ownColumns(over, best),
     textColumn('next', group, (point) => second(point)?.id ?? null),
     numberColumn('gap', 'W', group, (point) => gapOf(point), { family: 'stage' }),
     numberColumn('accept\u00ADed', '', group, (point) => ranked(point).length, { decimals: 0 }),
@@ -88,6 +89,33 @@ function bracketed(part: TrendCandidate | undefined, value: number | null, decim
   return part.accepted || value === null ? null : `(${fixed(value, decimals)})`
 }
 
+/** What the quantity itself asks for, of the cheapest: shares of turn-on and peak voltage, or efficiency. */
+function ownColumns(over: TrendKey, best: (point: Point) => TrendCandidate | null): readonly ColumnSpec<Point>[] {
+  const group = 'Cheapest along the trend'
+  const watts = (title: string, value: (part: TrendCandidate) => number | null) =>
+    numberColumn<Point>(title, 'W', group, (point) => of(best(point), value), { family: 'stage' })
+  if (over === 'load')
+    return [
+      numberColumn('effi\u00ADciency', '%', group, (point) => of(best(point), (part) => part.efficiency), {
+        scale: 100,
+        decimals: 2,
+      }),
+    ]
+  if (over !== 'slope_a_per_s') return []
+  return [
+    watts('recov\u00ADery, recti\u00ADfier', ({ losses_w }) => losses_w.recovery_rectifier),
+    watts('recov\u00ADery, switch', ({ losses_w }) => losses_w.recovery_switch),
+    watts('over\u00ADlap, switch', ({ turn_on_base_w }) => turn_on_base_w),
+    numberColumn('peak reverse', 'V', group, (point) => of(best(point), (part) => part.peak_reverse_v), {
+      decimals: 0,
+    }),
+  ]
+}
+
+function of(part: TrendCandidate | null, value: (part: TrendCandidate) => number | null): number | null {
+  return part === null ? null : value(part)
+}
+
 function ranked({ candidates }: Point): TrendCandidate[] {
   const usable = candidates.filter(({ accepted, stage_loss_w }) => accepted && stage_loss_w !== null)
   return usable.toSorted((a, b) => a.stage_loss_w! - b.stage_loss_w! || (a.id < b.id ? -1 : 1))
@@ -118,7 +146,7 @@ function slopeItem(study: SlopeStudy) {
   const slope = (value: number) => quantity(value, 'A/us')
   const sentences = [
     study.largest_a_per_s === null
-      ? 'No slope is admissible.'
+      ? `Not admissible at the lowest slope looked at${study.largest_because === 'range' ? '' : `, because of ${edgeWords(study.largest_because)}`}.`
       : `Largest admissible slope ${slope(study.largest_a_per_s)}, set by ${edgeWords(study.largest_because)}.`,
     study.knee_a_per_s === null ? '' : `Knee at ${slope(study.knee_a_per_s)}: above it at most 5 % is left to gain.`,
     study.gain_w === null ? '' : `Going from the slope of the stage to the largest ${gainWords(study.gain_w)}.`,

@@ -178,3 +178,13 @@ describe('words(result)', () => {
     expect(result.verdict_text).toContain('it costs 1.80 W (0.60 to 3.10 W) more stage loss')
   })
 })
+
+describe('the grounds of a swap', () => {
+  const ground = (data: Readonly<Record<string, number>>) =>
+    words({ ...swapSample(), because: [{ code: 'yearly-energy', text: '', data }] }).because[0]!.text
+
+  it('turn negative energy into a cost', () => {
+    expect(ground({ energy: 6.4 })).toBe('Over the duty profile it saves 6.4 kWh a year.')
+    expect(ground({ energy: -6.4 })).toBe('Over the duty profile it costs 6.4 kWh more a year.')
+  })
+})

@@ -65,7 +65,8 @@ export function lineChart(data: LineChartData): string {
     ...(dashed ? [label(width - 12, 22, 'dashed: read far beyond the data', { size: 11, anchor: 'end' })] : []),
     x.markup,
     y.markup,
-    ...marks.map((mark, row) => markMarkup(mark, row, x, box, width)),
+    ...marks.map((mark, row) => markLine(mark, row, x, box)),
+    ...marks.map((mark, row) => markLabel(mark, row, x, box, width)),
     ...bodies,
     ...rings,
     ...nameLabels(data.series, ends, box),
@@ -163,39 +164,35 @@ function nameLabels(series: readonly LineSeries[], ends: readonly ReturnType<typ
   })
 }
 
-function markMarkup(mark: LineMark, row: number, x: Axis, box: Box, width: number): string {
+/** The dotted lines and intervals of all marks; drawn first, so that no label is crossed by a line. */
+function markLine(mark: LineMark, row: number, x: Axis, box: Box): string {
   const at = x.place(mark.x)
-  const y = 38 + 15 * row
-  const clamp = (value: number) => Math.min(box.right, Math.max(box.left, x.place(value)))
-  const interval =
-    mark.low == null || mark.high == null
-      ? ''
-      : element('path', {
-          d: `M${pixels(clamp(mark.low))} ${y}H${pixels(clamp(mark.high))}`,
-          class: 'chart-ink',
-          stroke: ink,
-          'stroke-width': 3,
-          'stroke-opacity': 0.45,
-        })
-  // on the right of its line, else on the left, else wherever it fits: each mark has a row of its own
+  const y = markHeight(row)
+  const line = { x1: at, x2: at, y1: y, y2: box.bottom, class: 'chart-ink', stroke: ink, 'stroke-dasharray': '1 3' }
+  if (mark.low == null || mark.high == null) return element('line', line)
+  const d = `M${pixels(inside(x.place(mark.low), box))} ${y}H${pixels(inside(x.place(mark.high), box))}`
+  const interval = { d, class: 'chart-ink', stroke: ink, 'stroke-width': 3, 'stroke-opacity': 0.45 }
+  return element('line', line) + element('path', interval)
+}
+
+/** Dot and label, on the right of the line, else on the left, else where it fits: each mark has a row of its own. */
+function markLabel(mark: LineMark, row: number, x: Axis, box: Box, width: number): string {
+  const at = x.place(mark.x)
+  const y = markHeight(row)
   const wide = labelWidth(mark.text, 11)
-  const right = (mark.high == null ? at : Math.max(at, clamp(mark.high))) + 7
-  const left = (mark.low == null ? at : Math.min(at, clamp(mark.low))) - 7 - wide
+  const right = (mark.high == null ? at : Math.max(at, inside(x.place(mark.high), box))) + 7
+  const left = (mark.low == null ? at : Math.min(at, inside(x.place(mark.low), box))) - 7 - wide
   const start = right + wide < width ? right : left > 4 ? left : Math.max(4, width - wide - 4)
-  return [
-    element('line', {
-      x1: at,
-      x2: at,
-      y1: y,
-      y2: box.bottom,
-      class: 'chart-ink',
-      stroke: ink,
-      'stroke-dasharray': '1 3',
-    }),
-    interval,
-    element('circle', { cx: at, cy: y, r: 3, class: 'chart-ink-fill', fill: ink }),
-    label(start, y + 4, mark.text, { size: 11, rim: true }),
-  ].join('')
+  const dot = element('circle', { cx: at, cy: y, r: 3, class: 'chart-ink-fill', fill: ink })
+  return label(start, y + 4, mark.text, { size: 11, rim: true }) + dot
+}
+
+function markHeight(row: number): number {
+  return 38 + 15 * row
+}
+
+function inside(position: number, box: Box): number {
+  return Math.min(box.right, Math.max(box.left, position))
 }
 
 function ring(x: number, y: number, text: string): string {

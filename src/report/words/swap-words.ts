@@ -1,5 +1,5 @@
 import type { SwapResult } from '../../domain/study.ts'
-import { quantity, significant, withInterval } from '../format.ts'
+import { odds, quantity, significant, withInterval } from '../format.ts'
 
 /** Grounds of a swap's verdict: the codes of `because`, each with its sentence (pattern language: sentence.ts). */
 export const swapBecauseCodes = [
@@ -23,15 +23,15 @@ export type SwapBecauseCode = (typeof swapBecauseCodes)[number]
 
 export const swapBecauseWords: Readonly<Record<SwapBecauseCode, string>> = {
   'same-part': 'Both are the same part: nothing changes.',
-  saves: 'It saves [{saves:W}|power][ ({low:W} to {high:W})][ with odds {odds}].',
-  'costs-more': 'It costs [{costs:W} more|more power][ ({low:W} to {high:W})][; odds that it saves {odds}].',
+  saves: 'It saves [{saves:W}|power][ ({low:W} to {high:W})][ with odds {odds:odds}].',
+  'costs-more': 'It costs [{costs:W} more|more power][ ({low:W} to {high:W})][; odds that it saves {odds:odds}].',
   'odds-not-settled':
-    'The saving is not distinguishable from nothing[: {saves:W}][ ({low:W} to {high:W})][, odds {odds}]. Measure both parts at this point.',
+    'The saving is not distinguishable from nothing[: {saves:W}][ ({low:W} to {high:W})][, odds {odds:odds}]. Measure both parts at this point.',
   'to-rejected': 'The new part[ {id}] is not acceptable in this stage[: {reasons}].',
   'from-rejected': 'The part in use[ {id}] is itself not acceptable in this stage[: {reasons}].',
   'break-even': 'Break-even lies at [{frequency:Hz}|some frequency][: {cheaper} is cheaper below it].',
   'no-break-even': 'No frequency[ between {low:Hz} and {high:Hz}] makes the two equal.',
-  'yearly-energy': 'Over the duty profile it saves [{energy:kWh}|energy] a year.',
+  'yearly-energy': 'Over the duty profile it [costs {costs:kWh} more|saves {energy:kWh}|changes the energy] a year.',
   price: 'The price difference is [{difference}|known][; nothing here weighs it against the saving].',
   'junction-change': 'The junction of the rectifier changes by [{change:K}|some kelvin].',
   'switch-junction-change': 'The junction of the switch changes by [{change:K}|some kelvin].',
@@ -66,8 +66,8 @@ function savingWords({ saves_w, difference_w }: SwapResult): string {
   return `it costs ${withInterval(-saves, turned(saves_w.high), turned(saves_w.low), 'W')} more stage loss`
 }
 
-function oddsWords({ odds_better: odds, energy_kwh_per_year: energy }: SwapResult): string {
-  const chance = odds === null ? '' : `, odds that it saves ${odds.toFixed(2)}`
+function oddsWords({ odds_better, energy_kwh_per_year: energy }: SwapResult): string {
+  const chance = odds_better === null ? '' : `, odds that it saves ${odds(odds_better)}`
   if (energy === null) return chance
   return `${chance}; ${energy >= 0 ? 'it saves' : 'it costs'} ${quantity(Math.abs(energy), 'kWh')} a year over the duty profile`
 }

@@ -1,5 +1,5 @@
 import type { CandidateResult, MeasureNext, RankResult } from '../../domain/result.ts'
-import { celsius, quantity, significant, withInterval } from '../format.ts'
+import { celsius, odds, quantity, significant, withInterval } from '../format.ts'
 
 /** The decision in one to three sentences: which part, by how much, how sure, and what to do next. */
 export function verdictWords(result: RankResult): string {
@@ -18,9 +18,9 @@ export function verdictWords(result: RankResult): string {
 
 function undecided(result: RankResult, best: CandidateResult, loss: string): string {
   const others = result.verdict.tied.filter((id) => id !== best.id)
-  const odds = best.odds_best === null ? '' : ` Its odds of being the cheapest are ${oddsText(best)}.`
+  const chance = best.odds_best === null ? '' : ` Its odds of being the cheapest are ${oddsText(best)}.`
   const rivals = others.length > 0 ? others : [result.verdict.runner_up!]
-  return `Not decided: ${best.id} has the lowest stage loss, ${loss}, but is not distinguishable from ${list(rivals)}; it is ${gap(result)}.${odds}`
+  return `Not decided: ${best.id} has the lowest stage loss, ${loss}, but is not distinguishable from ${list(rivals)}; it is ${gap(result)}.${chance}`
 }
 
 function gap(result: RankResult): string {
@@ -33,11 +33,11 @@ function withOdds(best: CandidateResult): string {
   return best.odds_best === null ? '' : ` with odds ${oddsText(best)}`
 }
 
-/** Odds with two digits; never rounded up to certainty. */
-export function oddsText({ odds_best: odds, odds_error: error }: CandidateResult): string {
-  if (odds === null) return 'unknown'
-  const text = odds > 0.995 ? 'above 0.99' : odds < 0.005 ? 'below 0.01' : odds.toFixed(2)
-  return error !== null && error >= 0.005 ? `${text} (±${error.toFixed(2)})` : text
+/** Odds with their standard error where it shows. */
+export function oddsText({ odds_best, odds_error }: CandidateResult): string {
+  if (odds_best === null) return 'unknown'
+  const text = odds(odds_best)
+  return odds_error !== null && odds_error >= 0.005 ? `${text} (±${odds_error.toFixed(2)})` : text
 }
 
 function advice(next: readonly MeasureNext[] | null): string {

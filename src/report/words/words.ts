@@ -86,5 +86,9 @@ function fillReasons(candidate: CandidateResult): void {
 function fillSwap(result: SwapResult): void {
   const open = result as { -readonly [Key in keyof SwapResult]: SwapResult[Key] }
   open.verdict_text = swapVerdictWords(result)
-  for (const ground of result.because) ground.text = worded(swapBecauseWords, ground.code, ground.data)
+  for (const ground of result.because) {
+    const { energy } = ground.data
+    const costs = ground.code === 'yearly-energy' && typeof energy === 'number' && energy < 0
+    ground.text = worded(swapBecauseWords, ground.code, costs ? { costs: -energy } : ground.data)
+  }
 }
