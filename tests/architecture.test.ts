@@ -108,6 +108,7 @@ function typeImports(file: string): readonly string[] {
 }
 
 function packageName(path: string): string {
+  if (path.startsWith('dist/generated/')) return '#validators'
   if (path.startsWith('src/') || path.startsWith('node:') || path.startsWith('#')) return path
   return /^(?:@[^/]+\/)?[^/]+/.exec(path)![0]
 }

@@ -1,5 +1,6 @@
 /** `npm run build`: everything under dist/ but dist/build, which holds this program itself. */
 import { readdirSync, rmSync, statSync } from 'node:fs'
+import { join } from 'node:path'
 import { buildBundles } from './bundles.ts'
 import { writeDeclarations } from './declarations.ts'
 import { writeLicences } from './licences.ts'
@@ -13,9 +14,10 @@ removeOlderThan(begun)
 
 /** What an earlier build left behind goes last, so that a running program never finds its files gone. */
 function removeOlderThan(time: number): void {
-  for (const entry of readdirSync('dist', { withFileTypes: true })) {
-    const path = `dist/${entry.name}`
+  for (const entry of readdirSync('dist', { withFileTypes: true, recursive: true })) {
+    const path = join(entry.parentPath, entry.name)
     // A second's grace: some file systems keep whole seconds only.
-    if (entry.isFile() && statSync(path).mtimeMs < time - 1000) rmSync(path)
+    const stale = entry.isFile() && statSync(path).mtimeMs < time - 1000
+    if (stale && !path.startsWith(join('dist', 'build'))) rmSync(path)
   }
 }
