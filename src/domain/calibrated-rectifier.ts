@@ -30,7 +30,11 @@ export interface CalibratedRectifier {
   /** V0. [V] */
   readonly ratedVoltage: number
   /** Null for classes without stored charge. `unitSpread`: sd of ln, drawn for u and y independently. */
-  readonly recovery: { readonly posterior: Gaussian; readonly unitSpread: number; readonly origin: PropertyOrigin } | null
+  readonly recovery: {
+    readonly posterior: Gaussian
+    readonly unitSpread: number
+    readonly origin: PropertyOrigin
+  } | null
   /** `line`: the record gave the characteristic itself (no small-current rule, no ln term). `unitSpread`: relative. */
   readonly forward: {
     readonly posterior: Gaussian

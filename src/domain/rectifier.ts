@@ -17,7 +17,7 @@ export type RecoveryTimeDefinition =
   | { readonly kind: 'line-75-50' }
   | { readonly kind: 'level-25' }
   | { readonly kind: 'level-10' }
-  | { readonly kind: 'level'; /** Reverse current at the end. [A] */ readonly until: number }
+  | { readonly kind: 'level' /** Reverse current at the end. [A] */; readonly until: number }
   | { readonly kind: 'unknown' }
 
 /** Where a row stands in its file, for messages and provenance. */

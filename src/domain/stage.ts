@@ -15,7 +15,7 @@ export type StageInput =
 
 /** How the turn-on di/dt is set. */
 export type SlopeSource =
-  | { readonly kind: 'given'; /** [A/s] */ readonly slope: number }
+  | { readonly kind: 'given' /** [A/s] */; readonly slope: number }
   | {
       readonly kind: 'gate'
       /** [V] */ readonly drive: number
@@ -43,7 +43,7 @@ export interface MeasuredTurnOn {
 }
 
 export type Cooling =
-  | { readonly kind: 'case'; /** [K] */ readonly caseTemperature: number }
+  | { readonly kind: 'case' /** [K] */; readonly caseTemperature: number }
   | {
       readonly kind: 'sink'
       readonly ambientTemperature: number

@@ -114,7 +114,11 @@ export interface SwapResult extends DocumentHead {
   /** justified | not-justified | not-settled */
   readonly verdict: string
   readonly verdict_text: string
-  readonly because: readonly { readonly code: string; text: string; readonly data: Readonly<Record<string, string | number>> }[]
+  readonly because: readonly {
+    readonly code: string
+    text: string
+    readonly data: Readonly<Record<string, string | number>>
+  }[]
   readonly warnings: readonly Warning[]
   readonly cautions: readonly Caution[]
   readonly not_covered: readonly string[]
