@@ -40,7 +40,7 @@ function warningBlock(warnings: readonly Warning[]): Block[] {
   return listBlock('Warnings', 'warning', items)
 }
 
-export function cautionBlock(cautions: readonly Caution[]): Block[] {
+function cautionBlock(cautions: readonly Caution[]): Block[] {
   const items = cautions.map(({ code, text }) => ({ lead: code, text }))
   return listBlock('Cautions', 'caution', items)
 }

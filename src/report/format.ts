@@ -99,7 +99,7 @@ export function prefixFor(value: number, unit: string): readonly [number, string
   return usable.find(([size]) => magnitude >= size) ?? usable[usable.length - 1]!
 }
 
-export function displayUnit(unit: string): string {
+function displayUnit(unit: string): string {
   return unit === 'ohm' ? 'Ω' : unit
 }
 

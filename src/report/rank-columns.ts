@@ -58,7 +58,7 @@ function watts(title: string, group: string, value: (row: CandidateResult) => nu
 }
 
 /** The six rows, counted once; their sum is the total. */
-export const ledgerColumns: readonly Spec[] = [
+const ledgerColumns: readonly Spec[] = [
   watts('conduc\u00ADtion', 'Losses', ({ losses_w }) => losses_w.conduction),
   watts('recov\u00ADery, recti\u00ADfier', 'Losses', ({ losses_w }) => losses_w.recovery_rectifier),
   watts('recov\u00ADery, switch', 'Losses', ({ losses_w }) => losses_w.recovery_switch),

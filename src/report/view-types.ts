@@ -22,7 +22,7 @@ export interface Fact {
 }
 
 /** `lead` names the part or the code the text belongs to. */
-export interface Item {
+interface Item {
   readonly lead: string | null
   readonly text: string
 }

@@ -1,5 +1,6 @@
 import { readFileSync } from 'node:fs'
 import { Ajv2020 } from 'ajv/dist/2020.js'
+import { lint } from 'markdownlint/sync'
 import papaparse from 'papaparse'
 import { describe, expect, it } from 'vitest'
 import type { AnyResult } from '../../src/domain/study.ts'
@@ -97,6 +98,13 @@ function cellsOf(line: string): number {
 }
 
 describe('Markdown', () => {
+  it('passes a Markdown linter, line length and table width left aside', () => {
+    const strings = Object.fromEntries(samples.map(([name, sample]) => [name, renderMarkdown(words(sample()))]))
+    strings.hostile = renderMarkdown(hostileRank())
+    const found = lint({ strings, config: { default: true, MD013: false } })
+    expect(found).toEqual({ rank: [], trend: [], swap: [], hostile: [] })
+  })
+
   it('shows text from files as text', () => {
     const text = renderMarkdown(hostileRank())
     // biome-ignore lint/suspicious/noControlCharactersInRegex: the escape character is what is looked for

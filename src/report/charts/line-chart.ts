@@ -4,7 +4,7 @@ import { colourOf, marker } from './palette.ts'
 import { placeLabels } from './place-labels.ts'
 import { drawing, element, fittingText, ink, label, labelWidth, pixels } from './svg.ts'
 
-export interface LinePoint {
+interface LinePoint {
   readonly x: number
   /** Null interrupts the line. */
   readonly y: number | null

@@ -14,7 +14,7 @@ import { element, pixels } from './svg.ts'
  * Colours told apart by colour-blind readers, dark enough for lines on white.
  * After M. Okabe & K. Ito, Color Universal Design, 2008 (values from memory, yellow left out for its contrast).
  */
-export const colours = ['#0072b2', '#d55e00', '#007a5a', '#b0568a', '#8a6d00', '#2b8cc4', '#4d4d4d'] as const
+const colours = ['#0072b2', '#d55e00', '#007a5a', '#b0568a', '#8a6d00', '#2b8cc4', '#4d4d4d'] as const
 
 export function colourOf(index: number): string {
   return colours[index % colours.length]!

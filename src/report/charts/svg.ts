@@ -60,7 +60,6 @@ export function label(x: number, y: number, text: string, style: TextStyle = {})
 export const ink = '#222222'
 export const paper = '#ffffff'
 export const gridColour = '#d9d9d9'
-export const quietInk = '#5a5a5a'
 
 /** Rough width of a label: enough to place things, no font is measured. */
 export function labelWidth(text: string, size = 12): number {

@@ -90,7 +90,7 @@ function sharesPanel(trend: TrendResult): Panel {
 }
 
 /** Crossings of the cheapest first, then limits, as far as there is room; all of them stand in the tables. */
-export function trendMarks(trend: TrendResult): LineMark[] {
+function trendMarks(trend: TrendResult): LineMark[] {
   const { scale } = trendAxes[trend.over]
   const scaled = (value: number | null) => (value === null ? null : value * scale)
   const crossings = trend.crossings.toSorted(

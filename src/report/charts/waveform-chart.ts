@@ -3,14 +3,14 @@ import { type Axis, type Box, makeAxis } from './axis.ts'
 import { colourOf } from './palette.ts'
 import { drawing, element, fittingText, ink, label, labelWidth, paper } from './svg.ts'
 
-export interface Trace {
+interface Trace {
   readonly name: string
   /** Time and value, in the units of the axes. */
   readonly points: readonly (readonly [number, number])[]
   readonly dashed?: boolean
 }
 
-export interface WaveformPanel {
+interface WaveformPanel {
   readonly axis: string
   readonly traces: readonly Trace[]
   /** Points given by a source, apart from what was computed. */

@@ -34,7 +34,7 @@ function withOdds(best: CandidateResult): string {
 }
 
 /** Odds with their standard error where it shows. */
-export function oddsText({ odds_best, odds_error }: CandidateResult): string {
+function oddsText({ odds_best, odds_error }: CandidateResult): string {
   if (odds_best === null) return 'unknown'
   const text = odds(odds_best)
   return odds_error !== null && odds_error >= 0.005 ? `${text} (±${odds_error.toFixed(2)})` : text
@@ -70,7 +70,7 @@ function rejectedCount(result: RankResult): string {
 }
 
 /** "A", "A and B", "A, B and C". */
-export function list(names: readonly string[]): string {
+function list(names: readonly string[]): string {
   if (names.length < 2) return names.join('')
   return `${names.slice(0, -1).join(', ')} and ${names[names.length - 1]}`
 }

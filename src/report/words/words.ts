@@ -61,7 +61,7 @@ export function cautionText({ code, data }: Pick<Caution, 'code' | 'data'>): str
   return worded(cautionWords, code, { until: 60, ...data, ...(never ? { below: data.until ?? 60 } : {}) })
 }
 
-export function notCoveredText(entry: string): string {
+function notCoveredText(entry: string): string {
   return Object.hasOwn(notCoveredWords, entry) ? notCoveredWords[entry]! : entry
 }
 
