@@ -39,7 +39,7 @@ function farthestFrom(row: NamedObservation, rows: readonly NamedObservation[], 
 }
 
 /** Mahalanobis distance of an observation from its prediction, noise included. */
-export function distanceFrom(gaussian: Gaussian, { designs, values, noise }: Observation): number {
+function distanceFrom(gaussian: Gaussian, { designs, values, noise }: Observation): number {
   const first = designs[0]!
   const residual = values[0]! - predictedMean(gaussian, first)
   const variance = predictedCovariance(gaussian, first, first) + noise[0]!

@@ -82,8 +82,8 @@ function improved(input: FitInput, at: Evaluation): Evaluation | null {
   const [uu, uy, yy] = at.normal
   const [ru, ry] = at.right
   const determinant = uu * yy - uy * uy
-  const stepLifetime = (yy * ru - uy * ry) / determinant
-  const stepRatio = (uu * ry - uy * ru) / determinant
+  const stepLifetime = limited((yy * ru - uy * ry) / determinant)
+  const stepRatio = limited((uu * ry - uy * ru) / determinant)
   if (!(Math.abs(stepLifetime) + Math.abs(stepRatio) > 1e-12)) return null
   for (let part = 1; part > 1e-3; part *= 0.5) {
     const tried = evaluate(input, {
@@ -93,6 +93,11 @@ function improved(input: FitInput, at: Evaluation): Evaluation | null {
     if (tried.misfit < at.misfit) return tried
   }
   return null
+}
+
+/** A longer step than this only leaves the range in which the model means something. */
+function limited(step: number): number {
+  return Math.min(Math.max(step, -2), 2)
 }
 
 function covarianceAt(names: readonly FigureName[], at: Evaluation, errors: FigureErrors): FittedFigures['covariance'] {

@@ -109,7 +109,7 @@ function lastCrossing(surplus: (time: number) => number, least: number, longest:
  * tau from ta and tau_rr. The right-hand side is concave and rising in tau, so Newton's steps from tau_rr + ta, which is
  * too short, approach the root from one side and cannot overshoot.
  */
-export function lifetimeOf(crossing: number, time: number, tail: number): number {
+function lifetimeOf(crossing: number, time: number, tail: number): number {
   const end = crossing + time
   let lifetime = tail + time
   for (let iteration = 0; iteration < 80; iteration++) {

@@ -8,7 +8,7 @@ import { type FigureErrors, fitFigures } from './fit-figures.ts'
 import { maximumShift, rowErrors } from './grades.ts'
 import type { RampFigures, RecoveryPoint } from './invert-pair.ts'
 import type { FigureName, RampReading } from './recovery-figures.ts'
-import type { RowContext, RowReading } from './row-reading.ts'
+import type { RowContext, RowReading, UnusableRow } from './row-reading.ts'
 import { type ExpectedPoint, linearisedFigure } from './single-figure.ts'
 import { chargeIsComputed, disagreement } from './third-figure.ts'
 
@@ -23,10 +23,10 @@ const unknownVoltageError = 0.2
 /** A softness of 0 would be a tail of no length. */
 const leastSoftness = 0.02
 /** More than this between a third figure and the other two is told. */
-export const inconsistentBeyond = 0.15
+const inconsistentBeyond = 0.15
 
-/** One ramp row as evidence on (u, y); null when it states no figure at all. */
-export function invertRampRow(row: RampRow, context: RowContext): RowReading | null {
+/** One ramp row as evidence on (u, y); null when it states no figure, unusable when nothing near its class shows its only one. */
+export function invertRampRow(row: RampRow, context: RowContext): RowReading | UnusableRow | null {
   const reading: RampReading = {
     current: row.current ?? context.ratedCurrent,
     slope: row.slope ?? referenceSlope,
@@ -53,12 +53,13 @@ export function invertRampRow(row: RampRow, context: RowContext): RowReading | n
     inconsistent: difference > inconsistentBeyond,
   }
   const single = chosen.names.length === 1 ? chosen.names[0]! : null
-  const { observation, point } = single === null ? observeTwo(view, chosen) : observeOne(view, single, expected)
+  const observed = single === null ? observeTwo(view, chosen) : observeOne(view, single, expected)
+  if (observed === null)
+    return { unusable: { code: 'row-impossible', candidate: context.id, data: { row: row.place.name } } }
   return {
     row,
     condition,
-    observation,
-    point,
+    ...observed,
     tellsRatio: single === null || single === 'softness',
     single: single && { reading, name: single, value: figures[single]! },
     caveats: caveatsOf(row, context.id, chosen, computed, difference),
@@ -103,9 +104,11 @@ function observeTwo(view: RampView, chosen: ChosenFigures): Observed {
 }
 
 /** A single figure is one scalar: ln figure, linear in u and y around the point where it was solved. */
-function observeOne(view: RampView, name: FigureName, expected: ExpectedPoint): Observed {
+function observeOne(view: RampView, name: FigureName, expected: ExpectedPoint): Observed | null {
   const { reading, figures, errors, designs, row } = view
-  const { point, figure } = linearisedFigure(reading, name, figures[name]!, expected)
+  const linearised = linearisedFigure(reading, name, figures[name]!, expected)
+  if (linearised === null) return null
+  const { point, figure } = linearised
   const design = designs[0].map((entry, index) => figure.byLifetime * entry + figure.byRatio * designs[1][index]!)
   const value =
     Math.log(figures[name]!) -
@@ -139,10 +142,7 @@ function conditionOf(row: RampRow, reading: RampReading, context: RowContext): R
 }
 
 /** What the class prior gives at a condition. */
-export function expectedPoint(
-  context: RowContext,
-  [lifetime, ratio]: readonly [Float64Array, Float64Array],
-): ExpectedPoint {
+function expectedPoint(context: RowContext, [lifetime, ratio]: readonly [Float64Array, Float64Array]): ExpectedPoint {
   return {
     lifetime: predictedMean(context.prior, lifetime),
     ratio: predictedMean(context.prior, ratio),

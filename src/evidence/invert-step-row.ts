@@ -7,7 +7,7 @@ import { recoveryDesigns } from './design-rows.ts'
 import { figureText } from './figure-text.ts'
 import { maximumShift, rowErrors } from './grades.ts'
 import type { RecoveryPoint } from './invert-pair.ts'
-import type { RowContext, RowReading } from './row-reading.ts'
+import type { RowContext, RowReading, UnusableRow } from './row-reading.ts'
 
 /**
  * Published forms put the lifetime of one storage time 3 to 4.5 times apart; the lumped one is at the low end. ln tau is
@@ -19,8 +19,8 @@ const ratioError = 0.4
 /** A step row states no reverse voltage after recovery. */
 const unknownVoltageError = 0.2
 
-/** One step row as evidence on (u, y) at ln(a/a0) = 0; null when no lifetime can be read from it. */
-export function invertStepRow(row: StepRow, context: RowContext): RowReading | { readonly unusable: Caveat } {
+/** One step row as evidence on (u, y) at ln(a/a0) = 0; unusable when no lifetime can be read from it. */
+export function invertStepRow(row: StepRow, context: RowContext): RowReading | UnusableRow {
   const condition = {
     ratedCurrent: context.ratedCurrent,
     current: row.current,

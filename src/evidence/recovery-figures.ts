@@ -89,12 +89,15 @@ export function logFigure(event: SteadyEvent, reading: RampReading, name: Figure
     }
     case 'softness': {
       if (reading.softnessBy === 'slopes') return combine(event, Math.log(tailTime / time), -1 / time, 1 / tailTime, 0)
-      const factor = factorOf(reading, time)
-      const growth = factor > 0 ? growthOf(reading, factor) / factor : 0
+      // a peak that hardly passes the level has a softness near 0, not one of minus infinity in logarithms
+      const factor = Math.max(factorOf(reading, time), leastFactor)
+      const growth = factor > leastFactor ? growthOf(reading, factor) / factor : 0
       return combine(event, Math.log((factor * tailTime) / time), (growth - 1) / time, 1 / tailTime, growth)
     }
   }
 }
+
+const leastFactor = 1e-3
 
 /** Chain rule: from the derivatives of ln figure with respect to ta, tau_rr and, directly, ln a. */
 function combine(event: SteadyEvent, value: number, byTime: number, byTail: number, direct: number): LogFigure {

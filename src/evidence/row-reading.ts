@@ -31,3 +31,8 @@ export interface RowReading {
   readonly single: { readonly reading: RampReading; readonly name: FigureName; readonly value: number } | null
   readonly caveats: readonly Caveat[]
 }
+
+/** A row from which nothing can be read, and why. */
+export interface UnusableRow {
+  readonly unusable: Caveat
+}

@@ -15,22 +15,25 @@ export interface LinearisedFigure {
 
 /** d ln figure/d u below which solving for u would invent a lifetime far from any part: a peak near its ceiling I e^y. */
 const leastSensitivity = 0.6
+/** ln of the figure by which the nearest point may miss it: far below any reading error. */
+const metWithin = 1e-3
 
 /**
  * The point at which a single figure is linearised: u solved at the y that the class gives. Where the figure does not
  * determine u (softness, which is about y, and a peak near its ceiling), the point nearest to the class's centre, in
- * standard deviations, that gives the figure.
+ * standard deviations, that gives the figure. Null where no part that the class allows for shows such a figure.
  */
 export function linearisedFigure(
   reading: RampReading,
   name: FigureName,
   value: number,
   expected: ExpectedPoint,
-): LinearisedFigure {
+): LinearisedFigure | null {
   const target = Math.log(value)
   const solved = name === 'softness' ? null : lifetimeGiving(reading, name, target, expected)
   if (solved !== null && solved.figure.byLifetime >= leastSensitivity) return solved
-  return nearestPoint(reading, name, target, expected)
+  const nearest = nearestPoint(reading, name, target, expected)
+  return Math.abs(target - nearest.figure.value) < metWithin ? nearest : null
 }
 
 /** u at a fixed y that gives ln figure = target, by Newton's steps kept inside a bracket; null where none does. */

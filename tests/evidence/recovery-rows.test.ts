@@ -64,6 +64,12 @@ describe('a ramp row', () => {
     expect(Math.abs(part.rectifier.recovery!.posterior.mean[0]! - Math.log(35e-9))).toBeLessThan(0.2)
   })
 
+  it('with a softness alone that nothing near its class shows is told and leaves the class as it is', () => {
+    const part = calibrated(rampRow({ softness: 1e9 }))
+    expect(part.codes).toContain('row-impossible')
+    expect(part.rectifier.recovery!.origin).toBe('class-guess')
+  })
+
   it('of impossible trr and I_RM keeps its I_RM and says both numbers', () => {
     const part = calibrated(rampRow({ recoveryTime: 20e-9, peakReverseCurrent: 5 }))
     expect(part.dataOf('row-impossible')).toEqual({ row: 'recovery row 1', found: 'trr 20 ns', bound: 'trr 50 ns' })
@@ -182,13 +188,15 @@ describe('a step row', () => {
     expect(part.rectifier.softnessKnown).toBe(false)
   })
 
-  it('with twice the time means twice the lifetime', () => {
-    const u = (time: number) => calibrated(stepRow({ recoveryTime: time })).rectifier.recovery!.posterior
-    const gain = u(56e-9).mean[0]! - u(28e-9).mean[0]!
-    // the posterior takes the share P/(P + 0.6² + 0.05²) of ln 2, P = 0.45² at I0
+  it('moves u by its share of the way to 1.7 times the lumped lifetime at the y of the class', () => {
+    const part = calibrated(stepRow({ recoveryTime: 28e-9 }))
+    // trr/tau at y = 1: ln((1 + IF/IR)/(1 + TM/tau)) + (tau_rr/tau) ln(IR/Ix), 0.5 A, 1 A, 0.25 A
+    const factor = Math.log(1.5 / (1 + Math.exp(-1))) + Math.log(4) / (1 + Math.E)
     const lnCurrent = Math.log(0.5 / 8)
-    const prior = 0.45 ** 2 + (0.15 * lnCurrent) ** 2
-    expect(gain).toBeCloseTo((Math.LN2 * 0.45 ** 2) / (prior + 0.36 + 0.0025), 10)
+    const variance = 0.45 ** 2 + (0.15 * lnCurrent) ** 2
+    const share = 0.45 ** 2 / (variance + 0.6 ** 2 + 0.05 ** 2)
+    const expected = Math.log(35e-9) + share * Math.log((1.7 * 28e-9) / factor / 35e-9)
+    expect(part.rectifier.recovery!.posterior.mean[0]).toBeCloseTo(expected, 10)
   })
 
   it('whose storage time is longer than its recovery time says so and keeps the recovery time', () => {
