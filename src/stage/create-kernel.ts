@@ -1,5 +1,5 @@
 import type { CalibratedRectifier } from '../domain/calibrated-rectifier.ts'
-import { celsiusZero } from '../domain/constants.ts'
+import { celsiusZero, referenceSlope } from '../domain/constants.ts'
 import type { RectifierRecord } from '../domain/rectifier.ts'
 import type { Stage } from '../domain/stage.ts'
 import { capacitiveCharge, chargingCost } from '../models/junction-capacitance.ts'
@@ -71,6 +71,8 @@ export function createKernel({ stage, record, rectifier }: KernelSetup): Kernel 
       discontinuous: false,
       idleVoltage: 0.5,
     },
+    startCurrent: 0.5,
+    blockingLog: 0.5,
     hotEvent: emptyEvent(),
     otherEvent: emptyEvent(),
     rows: new Float64Array(rowCount),
@@ -134,6 +136,8 @@ function partConstants(record: RectifierRecord, rectifier: CalibratedRectifier):
 
 function emptyState(): PartState {
   return {
+    slope: 0.5,
+    slopeLog: Math.log(0.5 / referenceSlope),
     lifetimeLog: 0.5,
     ratioLog: 0.5,
     constant: 0.5,

@@ -1,7 +1,7 @@
 import { referenceTemperature } from '../domain/constants.ts'
 import { bookInstant } from './book-instant.ts'
-import { type Kernel, row } from './kernel.ts'
-import { evaluateLine, layLineGrid } from './line-cycle.ts'
+import { type Kernel, row, rowCount } from './kernel.ts'
+import { evaluateLine, evaluateLineRound, layLineGrid } from './line-cycle.ts'
 import { moveToTemperature } from './part-at-temperature.ts'
 import { solveDcInstant } from './solve-instant.ts'
 
@@ -17,15 +17,34 @@ export function placeTemperatures(kernel: Kernel): void {
 /** All rows of the ledger at the kernel's conditions and temperatures; `delivers` says whether the point exists. */
 export function evaluate(kernel: Kernel): void {
   placeTemperatures(kernel)
-  kernel.rows.fill(0)
+  clearRows(kernel.rows)
   if (kernel.kind === 'mains-boost') evaluateLine(kernel)
-  else {
-    solveDcInstant(kernel)
-    if (!kernel.delivers) return
-    bookInstant(kernel, 1)
-  }
+  else evaluateDc(kernel)
+  if (kernel.delivers) bookFixed(kernel)
+}
+
+/** As {@link evaluate}, but the crest of a mains stage only comes one step closer: see {@link evaluateLineRound}. */
+export function evaluateRound(kernel: Kernel): void {
+  placeTemperatures(kernel)
+  clearRows(kernel.rows)
+  if (kernel.kind === 'mains-boost') evaluateLineRound(kernel)
+  else evaluateDc(kernel)
+  if (kernel.delivers) bookFixed(kernel)
+}
+
+function evaluateDc(kernel: Kernel): void {
+  solveDcInstant(kernel)
+  if (kernel.delivers) bookInstant(kernel, 1)
+}
+
+function bookFixed(kernel: Kernel): void {
   kernel.rows[row.stored] = kernel.storedEnergy * kernel.frequency
   kernel.rows[row.inductor]! += kernel.coreLoss
+}
+
+/** A loop: `fill` costs a call that so few elements do not earn back. */
+function clearRows(rows: Float64Array): void {
+  for (let k = 0; k < rowCount; k++) rows[k] = 0
 }
 
 /** To be called after conditions other than draws of the part change: blocking voltage, and the line's nodes. */
@@ -34,6 +53,8 @@ export function placeConditions(kernel: Kernel): void {
   if (kernel.kind === 'buck') instant.blockingVoltage = kernel.inputVoltage
   else if (kernel.kind === 'inverting') instant.blockingVoltage = kernel.inputVoltage + kernel.outputVoltage
   else instant.blockingVoltage = kernel.outputVoltage
+  kernel.blockingLog = Math.log(instant.blockingVoltage / kernel.part.ratedVoltage)
+  kernel.startCurrent = 0
   if (kernel.kind === 'mains-boost') {
     placeTemperatures(kernel)
     layLineGrid(kernel)

@@ -40,6 +40,10 @@ export interface Kernel {
   other: PartState
   // Results of the last evaluation.
   instant: Instant
+  /** Where the next search for the mean inductor current starts; 0: at the loss-free current. [A] */
+  startCurrent: number
+  /** ln(blocking voltage/rated voltage). */
+  blockingLog: number
   hotEvent: RecoveryEvent
   otherEvent: RecoveryEvent
   rows: Float64Array
@@ -108,6 +112,9 @@ export interface PartConstants {
 
 /** Properties of a part at one junction temperature. */
 export interface PartState {
+  /** Slope that `slopeLog` = ln(slope/a0) was taken at: the logarithm is the same in most evaluations. [A/s] */
+  slope: number
+  slopeLog: number
   lifetimeLog: number
   ratioLog: number
   constant: number
@@ -164,6 +171,11 @@ export interface LineGrid {
   count: number
   /** Crest of the inductor's mean current over the line. [A] */
   crestCurrent: number
+  /** The crest that solutions start from: scaled when the nodes were laid. [A] */
+  startCrest: number
+  /** Mean rectifier current of the last booking [A], and by how much of itself the crest was off. */
+  bookedMean: number
+  mismatch: number
   /** Weight of the angles in continuous conduction. */
   continuousShare: number
 }

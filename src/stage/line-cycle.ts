@@ -1,7 +1,7 @@
 import { gaussLegendre } from '../numerics/gauss-legendre.ts'
 import { bookInstant } from './book-instant.ts'
 import { type Kernel, type LineGrid, row } from './kernel.ts'
-import { offVoltageAt, onVoltageAt, placeContinuous, placeDiscontinuous } from './solve-instant.ts'
+import { offVoltageHere, onVoltageAt, placeContinuous, placeDiscontinuous } from './solve-instant.ts'
 
 /** Nodes: near the zero crossing, in the layer below the mode border where residual charge dies out, above the border. */
 const farNodes = gaussLegendre(4)
@@ -15,6 +15,9 @@ export function createLineGrid(): LineGrid {
     weight: new Float64Array(lineNodeCount),
     count: 0,
     crestCurrent: 0,
+    startCrest: 0,
+    bookedMean: 0,
+    mismatch: 0,
     continuousShare: 1,
   }
 }
@@ -28,8 +31,8 @@ export function layLineGrid(kernel: Kernel): void {
   grid.crestCurrent = lossFreeCrest(kernel)
   layPanels(grid, modeBorder(kernel))
   // With drops the crest is a little higher and the border lies a little lower: once more with the scaled crest.
-  if (!scaleCrest(kernel)) return
-  layPanels(grid, modeBorder(kernel))
+  if (scaleCrest(kernel)) layPanels(grid, modeBorder(kernel))
+  grid.startCrest = grid.crestCurrent
 }
 
 function layPanels(grid: LineGrid, border: number): void {
@@ -90,7 +93,7 @@ export function solveLineInstant(kernel: Kernel, sine: number): boolean {
   if (!placeContinuous(kernel, mean)) return false
   if (instant.continuousValley >= 0 || kernel.part.synchronous) return true
   const onVoltage = onVoltageAt(kernel, mean)
-  const offVoltage = offVoltageAt(kernel, mean)
+  const offVoltage = offVoltageHere(kernel, mean)
   if (!(onVoltage > 0) || !(offVoltage > 0)) return false
   const peak = Math.sqrt((2 * mean) / (kernel.inductance * kernel.frequency * (1 / onVoltage + 1 / offVoltage)))
   placeDiscontinuous(kernel, peak, onVoltage, offVoltage)
@@ -103,17 +106,37 @@ export function solveLineInstant(kernel: Kernel, sine: number): boolean {
  * that mean is nearly proportional to the crest, so correction by the ratio converges in a few rounds.
  */
 export function evaluateLine(kernel: Kernel): void {
-  const { line, rows } = kernel
   kernel.delivers = scaleCrest(kernel)
+  if (kernel.delivers) bookLine(kernel)
+}
+
+/**
+ * One round of the same for a solver that comes back with new temperatures anyway: books at the present crest, then
+ * corrects it. `mismatch` tells how far the crest was off. Scaling it out in every round costs twice the bookings.
+ */
+export function evaluateLineRound(kernel: Kernel): void {
+  const { line } = kernel
+  bookLine(kernel)
   if (!kernel.delivers) return
+  const ratio = kernel.outputCurrent / line.bookedMean
+  line.mismatch = Math.abs(ratio - 1)
+  line.crestCurrent *= ratio
+  kernel.delivers = line.crestCurrent < 1e9
+}
+
+/** Adds the losses at all angles to the rows. */
+function bookLine(kernel: Kernel): void {
+  const { line, instant } = kernel
+  let mean = 0
   for (let k = 0; k < line.count; k++) {
-    if (!solveLineInstant(kernel, line.sine[k]!)) {
-      kernel.delivers = false
-      return
-    }
-    bookInstant(kernel, line.weight[k]!)
+    kernel.delivers = solveLineInstant(kernel, line.sine[k]!)
+    if (!kernel.delivers) return
+    const weight = line.weight[k]!
+    mean += ((instant.valley + instant.peak) / 2) * instant.conductionShare * weight
+    bookInstant(kernel, weight)
   }
-  rows[row.meanRectifierCurrent] = kernel.outputCurrent
+  line.bookedMean = mean
+  kernel.rows[row.meanRectifierCurrent] = kernel.outputCurrent
 }
 
 /** False when no crest current delivers the output. */

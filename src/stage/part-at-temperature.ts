@@ -19,7 +19,7 @@ export function moveToTemperature(kernel: Kernel, state: PartState, junction: nu
   }
   if (part.leaks) {
     state.leakageLog = c[14]! + c[15]! * (1 / referenceTemperature - 1 / junction)
-    state.leakage = leakageAt(kernel, state, kernel.instant.blockingVoltage)
+    state.leakage = leakageOf(state.leakageLog + c[16]! * kernel.blockingLog)
   }
   if (part.synchronous) {
     state.channelResistance = Math.max(
@@ -29,9 +29,13 @@ export function moveToTemperature(kernel: Kernel, state: PartState, junction: nu
   }
 }
 
-/** Reverse current at a voltage. [A] A reverse current beyond 1 kA only says "runs away"; the bound keeps sums finite. */
+/** Reverse current at a voltage. [A] */
 export function leakageAt(kernel: Kernel, state: PartState, voltage: number): number {
   if (voltage <= 0) return 0
-  const exponent = state.leakageLog + kernel.coefficients[16]! * Math.log(voltage / kernel.part.ratedVoltage)
-  return Math.exp(Math.min(exponent, 7))
+  return leakageOf(state.leakageLog + kernel.coefficients[16]! * Math.log(voltage / kernel.part.ratedVoltage))
+}
+
+/** A reverse current beyond 1 kA only says "runs away"; the bound keeps sums finite. */
+function leakageOf(logarithm: number): number {
+  return Math.exp(Math.min(logarithm, 7))
 }

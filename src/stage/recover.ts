@@ -42,7 +42,11 @@ export function recover(kernel: Kernel, state: PartState, share: number, slope: 
 function placeLifetimes(kernel: Kernel, state: PartState, event: RecoveryEvent): void {
   const c = kernel.coefficients
   const logCurrent = Math.log(Math.max(event.current / kernel.part.ratedCurrent, currentFloor))
-  const logSlope = Math.log(event.slope / referenceSlope)
+  if (state.slope !== event.slope) {
+    state.slope = event.slope
+    state.slopeLog = Math.log(event.slope / referenceSlope)
+  }
+  const logSlope = state.slopeLog
   event.lifetime = Math.exp(state.lifetimeLog + c[1]! * logCurrent + c[2]! * logSlope)
   event.tailTime = event.lifetime / (1 + Math.exp(state.ratioLog + c[5]! * logCurrent + c[6]! * logSlope))
 }

@@ -1,31 +1,42 @@
 import { forwardDrop } from '../models/forward-drop.ts'
 import type { Kernel } from './kernel.ts'
 
-const drop = { constant: 0, logarithmic: 0, linear: 0, ratedCurrent: 1, current: 0, line: false }
+const curve = { constant: 0, logarithmic: 0, linear: 0, ratedCurrent: 1, current: 0, line: false }
 
-/** Drop across the conducting rectifier at a total current, for the volt-second balance. [V] */
-function rectifierDrop(kernel: Kernel, totalCurrent: number): number {
-  const state = kernel.hot
-  drop.constant = state.constant
-  drop.logarithmic = state.logarithmic
-  drop.linear = state.linear
-  drop.ratedCurrent = kernel.part.ratedCurrent
-  drop.line = kernel.part.line
-  drop.current = Math.abs(totalCurrent) * kernel.hotShare
-  const diode = Math.max(forwardDrop(drop), 0)
-  if (!kernel.part.synchronous) return diode
-  const diodeShare = Math.min(
-    1,
-    ((kernel.part.deadBefore + kernel.part.deadAfter) * kernel.frequency) / lossFreeConductionShare(kernel),
-  )
-  return diodeShare * diode + (1 - diodeShare) * totalCurrent * kernel.hotShare * state.channelResistance
+/** Drop of the conducting rectifier in the volt-second balance, where {@link placeDrop} last took it. [V] */
+const balance = { drop: 0 }
+
+/** Takes the rectifier's drop at a total current. */
+function placeDrop(kernel: Kernel, totalCurrent: number): void {
+  const { part, hot: state, hotShare } = kernel
+  const current = Math.abs(totalCurrent) * hotShare
+  curve.constant = state.constant
+  curve.logarithmic = state.logarithmic
+  curve.linear = state.linear
+  curve.ratedCurrent = part.ratedCurrent
+  curve.line = part.line
+  curve.current = current
+  const diode = Math.max(forwardDrop(curve), 0)
+  if (part.synchronous) {
+    const share = diodeShare(kernel)
+    balance.drop = share * diode + (1 - share) * totalCurrent * hotShare * state.channelResistance
+  } else balance.drop = diode
 }
 
-function lossFreeConductionShare(kernel: Kernel): number {
-  const { inputVoltage: vin, outputVoltage: vo } = kernel
-  if (kernel.kind === 'buck') return Math.max(1 - vo / vin, 1e-6)
-  if (kernel.kind === 'boost') return vin / vo
-  return vin / (vin + vo)
+/** Steepness of the drop, for the next step of an iteration only: roots do not depend on it. [Ω] */
+function dropSlope(kernel: Kernel, totalCurrent: number): number {
+  const { part, hot: state, hotShare } = kernel
+  const logarithmic = part.line ? 0 : state.logarithmic / totalCurrent
+  const diode = Math.max(logarithmic + (state.linear / part.ratedCurrent) * hotShare, 0)
+  if (!part.synchronous) return diode
+  const share = diodeShare(kernel)
+  return share * diode + (1 - share) * hotShare * state.channelResistance
+}
+
+/** Share of the conduction interval that the dead times leave to a synchronous part's diode. */
+function diodeShare({ kind, part, frequency, inputVoltage: vin, outputVoltage: vo }: Kernel): number {
+  const lossFreeShare = kind === 'buck' ? Math.max(1 - vo / vin, 1e-6) : kind === 'boost' ? vin / vo : vin / (vin + vo)
+  return Math.min(1, ((part.deadBefore + part.deadAfter) * frequency) / lossFreeShare)
 }
 
 /**
@@ -43,40 +54,62 @@ export function solveDcInstant(kernel: Kernel): void {
 }
 
 function solveContinuous(kernel: Kernel): boolean {
-  const current = kernel.kind === 'buck' ? kernel.outputCurrent : solveContinuousCurrent(kernel)
+  if (kernel.kind === 'buck') return placeContinuous(kernel, kernel.outputCurrent)
+  const current = solveContinuousCurrent(kernel)
   if (!(current > 0)) return false
-  return placeContinuous(kernel, current)
+  return placePeriod(kernel, current)
 }
 
 /**
  * Mean inductor current of boost and inverting stages: the lower root of
  * I² (Ron + RL) − I (Vin + Io Ron) + Io (Vo + VF(I) [+ Vin]) = 0, which is the balance with D = 1 − Io/I put in.
+ * Each round solves the quadratic exactly with V_F's tangent, so that two or three rounds give all digits (holding
+ * V_F instead takes eight; tests/bench/points.ts). Leaves the drop at the root in `balance`.
  */
 function solveContinuousCurrent(kernel: Kernel): number {
   const { inputVoltage: vin, outputVoltage: vo, outputCurrent: io } = kernel
   const quadratic = kernel.onResistance + kernel.inductorResistance
-  const linear = vin + io * kernel.onResistance
+  const held = vin + io * kernel.onResistance
   const base = kernel.kind === 'boost' ? vo : vo + vin
-  let current = (io * base) / vin
-  // V_F moves little with I, so the root with V_F held converges by a factor of some 30 a round.
+  let current = kernel.startCurrent > 0 ? kernel.startCurrent : (io * base) / vin
+  let tangent = true
   for (let round = 0; round < 60; round++) {
-    const constant = io * (base + rectifierDrop(kernel, current))
+    placeDrop(kernel, current)
+    const slope = tangent ? dropSlope(kernel, current) : 0
+    const linear = held - io * slope
+    const constant = io * (base + balance.drop - slope * current)
     const discriminant = linear * linear - 4 * quadratic * constant
-    if (discriminant < 0) return Number.NaN
+    if (!(discriminant >= 0 && linear > 0)) {
+      // A tangent far from the root lies above the curve and may have none: hold V_F from here on.
+      if (!tangent) return Number.NaN
+      tangent = false
+      continue
+    }
     const next = (2 * constant) / (linear + Math.sqrt(discriminant))
-    const moved = Math.abs(next - current)
+    const moved = next - current
     current = next
-    if (moved <= 1e-14 * next) break
+    if (Math.abs(moved) <= (tangent ? 1e-7 : 1e-14) * next) {
+      // Within this step curve and tangent differ by less than rounding.
+      balance.drop += slope * moved
+      break
+    }
   }
+  kernel.startCurrent = current
   return current
 }
 
 /** Places duty, ripple and valley for a mean inductor current; also used at each angle of the line. */
 export function placeContinuous(kernel: Kernel, current: number): boolean {
+  placeDrop(kernel, current)
+  return placePeriod(kernel, current)
+}
+
+/** The period of the continuous balance with the drop in `balance`. */
+function placePeriod(kernel: Kernel, current: number): boolean {
   const instant = kernel.instant
   const vin = instant.inputVoltage
   const vo = kernel.outputVoltage
-  const forward = rectifierDrop(kernel, current)
+  const forward = balance.drop
   const inductorDrop = current * kernel.inductorResistance
   const switchDrop = current * kernel.onResistance
   let duty: number
@@ -138,8 +171,14 @@ export function onVoltageAt(kernel: Kernel, mean: number): number {
 }
 
 /** Magnitude of the voltage across the inductor while the rectifier conducts, drops at a mean current. [V] */
-export function offVoltageAt(kernel: Kernel, mean: number): number {
-  const total = kernel.outputVoltage + rectifierDrop(kernel, mean) + mean * kernel.inductorResistance
+function offVoltageAt(kernel: Kernel, mean: number): number {
+  placeDrop(kernel, mean)
+  return offVoltageHere(kernel, mean)
+}
+
+/** The same where {@link placeContinuous} has just taken the drop at this mean current. [V] */
+export function offVoltageHere(kernel: Kernel, mean: number): number {
+  const total = kernel.outputVoltage + balance.drop + mean * kernel.inductorResistance
   return kernel.kind === 'buck' || kernel.kind === 'inverting' ? total : total - kernel.instant.inputVoltage
 }
 

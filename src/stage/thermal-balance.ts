@@ -1,9 +1,11 @@
 import { ambientForJunction, lowestSettledJunction } from './ambient-for-junction.ts'
-import { evaluate } from './evaluate.ts'
+import { evaluateRound } from './evaluate.ts'
 import { type Kernel, row, switchPower } from './kernel.ts'
 
 /** Temperatures are solved to this. [K] */
 const tolerance = 1e-6
+/** The crest of the line current is solved to this share of itself, beside the temperatures. */
+const crestTolerance = 1e-9
 const maxRounds = 25
 
 // Scratch of the solver: unknowns are the solved temperatures, at most three.
@@ -25,19 +27,18 @@ const target = new Float64Array(3)
  */
 export function settle(kernel: Kernel): boolean {
   const count = startFromReference(kernel)
-  evaluate(kernel)
+  evaluateRound(kernel)
   if (!kernel.delivers) return settleSlowly(kernel)
   computeResidual(kernel, count)
   identity(count)
-  let sawBelow = residual[0]! > 0
   for (let round = 0; round < maxRounds; round++) {
-    if (largest(residual, count) <= tolerance) return sawBelow ? true : settleSlowly(kernel)
-    if (!stepForward(kernel, count)) return settleSlowly(kernel)
-    evaluate(kernel)
+    const moving = largest(residual, count) > tolerance
+    if (!moving && kernel.line.mismatch <= crestTolerance) return true
+    if (moving && !stepForward(kernel, count)) return settleSlowly(kernel)
+    evaluateRound(kernel)
     if (!kernel.delivers) return settleSlowly(kernel)
     computeResidual(kernel, count)
-    updateInverse(count)
-    sawBelow ||= residual[0]! > 0
+    if (moving) updateInverse(count)
   }
   return settleSlowly(kernel)
 }
@@ -80,6 +81,9 @@ function startFromReference(kernel: Kernel): number {
     temperatures[1] = thermal.reference
   }
   temperatures[2] = thermal.reference
+  kernel.startCurrent = 0
+  kernel.line.crestCurrent = kernel.line.startCrest
+  kernel.line.mismatch = 0
   if (kernel.parts > 1) index[count++] = 2
   return count
 }
