@@ -1,24 +1,11 @@
 import { describe, expect, it } from 'vitest'
-import type { RecoveryRow } from '../../src/domain/rectifier.ts'
-import { calibrate } from '../../src/evidence/calibrate.ts'
-import { recoveryAt } from '../../src/evidence/recovery-at.ts'
+import { calibrated } from './calibrated.ts'
 import { lumpedFigures } from './lumped.ts'
-import { kelvin, place, rampRow, record, stepRow } from './records.ts'
+import { kelvin, place, rampRow } from './records.ts'
 
 const condition = { current: 8, slope: 200e6, junction: kelvin(25) }
 const exact = { ...condition, voltage: 400, spread: 1e-4 }
 const made = lumpedFigures(condition, Math.log(60e-9), Math.log(2))
-
-function calibrated(...recovery: readonly RecoveryRow[]) {
-  const { rectifier, caveats } = calibrate({ record: record({ recovery }), blockingVoltage: 400 })
-  return {
-    rectifier,
-    codes: caveats.map((caveat) => caveat.code),
-    dataOf: (code: string) => caveats.find((caveat) => caveat.code === code)?.data,
-    at: (current: number, slope: number, celsius: number) =>
-      recoveryAt({ rectifier, current, slope, junction: kelvin(celsius) })!,
-  }
-}
 
 describe('a ramp row', () => {
   it.each([
@@ -166,50 +153,6 @@ describe('a ramp row', () => {
     const both = calibrated(rampRow({ charge: 50e-9 }), rampRow({ charge: 50e-9, grade: 'measured' }))
     expect(both.rectifier.recovery!.unitSpread).toBe(0.1)
     expect(calibrated(rampRow({ charge: 50e-9, spread: 0.02 })).rectifier.recovery!.unitSpread).toBe(0.02)
-  })
-})
-
-describe('a step row', () => {
-  // PHYSICS section 1: tau 150 ns, tau_rr 20 ns, 0.5 A, 1 A: ts 39.3546 ns, trr to 0.25 A 67.0805 ns
-  const both = stepRow({ storageTime: 39.3546e-9, recoveryTime: 67.0805e-9, spread: 1e-5 })
-
-  it('with storage and recovery time is centred at 1.7 times the lumped lifetime, and tells the ratio', () => {
-    const wide = calibrated(both)
-    expect(wide.rectifier.softnessKnown).toBe(true)
-    const { lifetimeDeviation, ratioDeviation } = wide.at(0.5, 1e8, 25)
-    // class 0.45 and ln(I/I0) against 0.6; class 0.5 against 0.4 and the unknown voltage
-    expect(lifetimeDeviation).toBeLessThan(0.46)
-    expect(ratioDeviation).toBeLessThan(0.4)
-  })
-
-  it('with recovery time alone says nothing about the ratio', () => {
-    const part = calibrated(stepRow({ recoveryTime: 28e-9 }))
-    expect(part.rectifier.recovery!.posterior.mean[4]).toBe(1)
-    expect(part.rectifier.softnessKnown).toBe(false)
-  })
-
-  it('moves u by its share of the way to 1.7 times the lumped lifetime at the y of the class', () => {
-    const part = calibrated(stepRow({ recoveryTime: 28e-9 }))
-    // trr/tau at y = 1: ln((1 + IF/IR)/(1 + TM/tau)) + (tau_rr/tau) ln(IR/Ix), 0.5 A, 1 A, 0.25 A
-    const factor = Math.log(1.5 / (1 + Math.exp(-1))) + Math.log(4) / (1 + Math.E)
-    const lnCurrent = Math.log(0.5 / 8)
-    const variance = 0.45 ** 2 + (0.15 * lnCurrent) ** 2
-    const share = 0.45 ** 2 / (variance + 0.6 ** 2 + 0.05 ** 2)
-    const expected = Math.log(35e-9) + share * Math.log((1.7 * 28e-9) / factor / 35e-9)
-    expect(part.rectifier.recovery!.posterior.mean[0]).toBeCloseTo(expected, 10)
-  })
-
-  it('whose storage time is longer than its recovery time says so and keeps the recovery time', () => {
-    const part = calibrated(stepRow({ storageTime: 70e-9, recoveryTime: 60e-9 }))
-    expect(part.dataOf('row-impossible')).toEqual({ row: 'recovery row 1', found: 'storage 70 ns', bound: 'trr 60 ns' })
-    expect(part.rectifier.recovery).toEqual(calibrated(stepRow({ recoveryTime: 60e-9 })).rectifier.recovery)
-  })
-
-  it('from which nothing can be read is told and leaves the class as it is', () => {
-    const part = calibrated(stepRow({ recoveryTime: 28e-9, until: 2 }))
-    expect(part.codes).toContain('row-impossible')
-    expect(part.codes).toContain('recovery-guess')
-    expect(part.rectifier.recovery!.origin).toBe('class-guess')
   })
 })
 

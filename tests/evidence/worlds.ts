@@ -1,17 +1,16 @@
 import type { CalibratedRectifier } from '../../src/domain/calibrated-rectifier.ts'
 import { referenceSlope, referenceTemperature } from '../../src/domain/constants.ts'
-import type { RampRow, RectifierClass, RectifierRecord } from '../../src/domain/rectifier.ts'
+import type { RectifierRecord } from '../../src/domain/rectifier.ts'
 import { predictedMean } from '../../src/evidence/bayesian-update.ts'
 import { classPriors } from '../../src/evidence/class-priors.ts'
 import { forwardDesign, leakageDesign, recoveryDesigns } from '../../src/evidence/design-rows.ts'
 import { gradeErrors } from '../../src/evidence/grades.ts'
 import { invertPair } from '../../src/evidence/invert-pair.ts'
 import { priorGaussians } from '../../src/evidence/prior-gaussians.ts'
-import { choleskyFactor } from '../../src/numerics/cholesky.ts'
-import { normalQuantile } from '../../src/numerics/normal-quantile.ts'
-import { type SeededStream, seededStream } from '../../src/numerics/seeded-stream.ts'
+import { type Drawing, drawing } from './drawing.ts'
 import { type Condition, type Figures, lumpedFigures } from './lumped.ts'
-import { forwardRow, kelvin, leakageRow, rampRow, record } from './records.ts'
+import { forwardRow, kelvin, leakageRow, record } from './records.ts'
+import { readRow, type Setting, settingOf, type WorldOptions } from './world-rows.ts'
 
 /** A part whose truth is known, and the record that an engineer would have of it. */
 export interface World {
@@ -30,19 +29,11 @@ export interface World {
   readonly truth: CalibratedRectifier
 }
 
-export interface WorldOptions {
-  readonly seed: number
-  readonly index: number
-  readonly class?: RectifierClass
-  /** Number of typical recovery rows; drawn from 1 to 4 when left out. */
-  readonly rows?: number
-}
-
 const ratedVoltage = 600
 
 /** A world drawn from the stated priors: coefficients, unit, voltage dependence of y, reading errors. */
 export function priorWorld(options: WorldOptions): World {
-  const draw = drawing('prior', options)
+  const draw = drawing('prior', options.seed, options.index)
   const setting = settingOf(options, draw)
   const coefficients = draw.from(priorGaussians(setting.class).recovery!)
   const perLnVoltage = 0.1 * draw.normal()
@@ -78,7 +69,7 @@ export function priorWorld(options: WorldOptions): World {
  * around published ratios (Qrr ×1.9 to ×2.9 from 25 to 125 °C, exponent 0.3 in a; PHYSICS section 3).
  */
 export function roughWorld(options: WorldOptions): World {
-  const draw = drawing('rough', options)
+  const draw = drawing('rough', options.seed, options.index)
   const setting = settingOf(options, draw)
   const prior = classPriors[setting.class].recovery!
   const atReference = { current: setting.ratedCurrent, slope: referenceSlope, junction: referenceTemperature }
@@ -111,29 +102,6 @@ export function roughWorld(options: WorldOptions): World {
     peakReverseCurrent: centre.peakReverseCurrent * Math.sqrt(chargeOfUnit / centre.charge),
   }
   return complete(setting, draw, population, own, pointCoefficients(setting.condition, own))
-}
-
-interface Setting {
-  readonly class: RectifierClass
-  readonly ratedCurrent: number
-  readonly blockingVoltage: number
-  readonly condition: Condition
-  readonly rows: number
-}
-
-function settingOf(options: WorldOptions, draw: Drawing): Setting {
-  const ratedCurrent = draw.pick([4, 8, 15])
-  return {
-    class: options.class ?? 'ultrafast',
-    ratedCurrent,
-    blockingVoltage: 400,
-    condition: {
-      current: ratedCurrent * draw.between(0.3, 1.2),
-      slope: referenceSlope * draw.between(1, 6),
-      junction: kelvin(draw.between(60, 110)),
-    },
-    rows: options.rows ?? draw.pick([1, 2, 3, 4]),
-  }
 }
 
 /** The record: typical rows read off with the stated errors, forward and leakage rows too. */
@@ -218,34 +186,6 @@ function complete(
   }
 }
 
-const shownFigures = [
-  ['recoveryTime'],
-  ['recoveryTime', 'charge'],
-  ['charge', 'peakReverseCurrent'],
-  ['recoveryTime', 'peakReverseCurrent'],
-  ['recoveryTime', 'charge', 'peakReverseCurrent'],
-] as const
-
-function readRow(
-  setting: Setting,
-  draw: Drawing,
-  population: (condition: Condition, voltage: number) => Figures,
-  index: number,
-): RampRow {
-  const condition = {
-    current: setting.ratedCurrent * draw.pick([0.5, 1]),
-    slope: draw.pick([100e6, 200e6, 300e6]),
-    junction: kelvin(draw.pick([25, 25, 100, 125])),
-  }
-  const voltage = draw.pick([200, 400])
-  const figures = population(condition, voltage)
-  const { reading } = gradeErrors.typical.recovery
-  const shown = draw.pick(shownFigures)
-  const fields = Object.fromEntries(shown.map((name) => [name, figures[name] * draw.misread(reading)]))
-  const place = { name: `recovery row ${index + 1}`, file: 'world.yaml', line: index + 1, column: 1 }
-  return rampRow({ ...condition, voltage, place, ...fields })
-}
-
 /** Coefficients of a rectifier that shows these figures at every condition; right at one. */
 function pointCoefficients(condition: Condition, figures: Figures): Float64Array {
   const reading = { ...condition, recoveryTimeBy: { kind: 'line-90-25' }, softnessBy: 'times' } as const
@@ -269,29 +209,4 @@ function power(at: Condition, reference: Condition, exponents: Exponents): numbe
 
 function noDoubt(size: number): Float64Array {
   return new Float64Array(size * size)
-}
-
-interface Drawing {
-  readonly normal: () => number
-  readonly between: (low: number, high: number) => number
-  readonly pick: <T>(choices: readonly T[]) => T
-  readonly misread: (error: number) => number
-  readonly from: (gaussian: { readonly mean: Float64Array; readonly covariance: Float64Array }) => Float64Array
-}
-
-function drawing(kind: string, { seed, index }: WorldOptions): Drawing {
-  const stream: SeededStream = seededStream(kind, seed, index)
-  const normal = () => normalQuantile(stream.uniform())
-  return {
-    normal,
-    between: (low, high) => low + (high - low) * stream.uniform(),
-    pick: (choices) => choices[stream.below(choices.length)]!,
-    misread: (error) => Math.exp(error * normal()),
-    from: ({ mean, covariance }) => {
-      const n = mean.length
-      const factor = choleskyFactor(covariance, n)
-      const raw = Array.from({ length: n }, normal)
-      return mean.map((centre, i) => raw.reduce((sum, value, j) => sum + factor[i * n + j]! * value, centre))
-    },
-  }
 }
