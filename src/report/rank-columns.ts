@@ -93,7 +93,7 @@ function softnessWords({ event }: CandidateResult): string | null {
 function mainsColumns(candidates: readonly CandidateResult[]): readonly Spec[] {
   const levels = candidates.find(({ at_mains }) => at_mains !== null)?.at_mains ?? []
   return levels.flatMap(({ mains_v }, index) => {
-    const mains = `${Math.round(mains_v)} V:`
+    const mains = `${Math.round(mains_v)}\u00A0V:`
     const at = (row: CandidateResult) => row.at_mains?.[index] ?? null
     return [
       watts(`${mains} stage loss`, 'Over the mains', (row) => at(row)?.stage_loss_w ?? null, 'stage'),

@@ -8,7 +8,7 @@ import type { Block, Column, Table } from './view-types.ts'
 /** A worded result as one HTML page without scripts or outside references: the same tables, and the chart. */
 export function renderHtml(result: AnyResult): string {
   const { title, blocks } = viewOf(result)
-  const chart = `<figure>${renderChart(result).trim()}</figure>`
+  const chart = `<figure tabindex="0">${renderChart(result).trim()}</figure>`
   const marked = blocks.some(({ kind }) => kind === 'chart')
   const body = blocks.map((block, index) => (!marked && index === 1 ? chart : '') + blockMarkup(block, chart))
   return [
@@ -97,7 +97,7 @@ th,td{padding:.25rem .6rem;border-bottom:1px solid var(--rule);text-align:left;v
 thead th{border-bottom:2px solid var(--ink);vertical-align:bottom}
 .number{text-align:right;white-space:nowrap}thead .number{white-space:normal}
 .warning h2{color:var(--warn)}.caution h2{color:var(--alert)}.caution{border-left:4px solid var(--alert);padding-left:1rem}
-figure{margin:1rem 0;overflow-x:auto}figure svg{max-width:100%;height:auto;background:#fff}
+figure{margin:1rem 0;overflow-x:auto}figure svg{min-width:36rem;max-width:100%;height:auto;background:#fff}
 @media(max-width:40rem){dl{grid-template-columns:1fr}dt{margin-top:.4rem}main{padding:.8rem}}
 @media print{main{max-width:none;padding:0}.scroll{overflow:visible}table{font-size:8pt}tr{break-inside:avoid}}
 `

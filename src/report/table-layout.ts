@@ -115,7 +115,8 @@ export function headerLines({ title, unit }: Column, width: number): string[] {
     const parts = word.split('\u00AD')
     return parts.map((part, index) => (index < parts.length - 1 && !part.endsWith('-') ? `${part}-` : part))
   })
-  return unit === null ? lines : [...lines, unit]
+  const shown = lines.map((line) => line.replaceAll('\u00A0', ' '))
+  return unit === null ? shown : [...shown, unit]
 }
 
 function total(widths: readonly number[]): number {

@@ -91,9 +91,9 @@ export function numberColumn<Row>(
   return { title, ...(unit === '' ? {} : { unit }), group, value: scaled, ...rest }
 }
 
-/** A column title without the places where a narrow table may break it. */
+/** A column title without the signs that say where a narrow table may break it and where not. */
 export function plainTitle(title: string): string {
-  return title.replaceAll('\u00AD', '')
+  return title.replaceAll('\u00AD', '').replaceAll('\u00A0', ' ')
 }
 
 /** A table in which a column that stands in two groups (the total) stands once. */

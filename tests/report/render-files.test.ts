@@ -8,6 +8,7 @@ import { renderCsv } from '../../src/report/render-csv.ts'
 import { renderHtml } from '../../src/report/render-html.ts'
 import { renderJson } from '../../src/report/render-json.ts'
 import { renderMarkdown } from '../../src/report/render-markdown.ts'
+import { renderTable } from '../../src/report/render-table.ts'
 import { words } from '../../src/report/words/words.ts'
 import { swapSample, trendSample } from './more-samples.ts'
 import { rankSample } from './samples.ts'
@@ -188,5 +189,22 @@ describe('the schema of results', () => {
     expect(validate({ ...rest, candidates: [added, ...others] })).toBe(false)
     expect(validate({ ...rest, candidates: [{ ...first!, rank: 0 }, ...others] })).toBe(false)
     expect(validate(rest)).toBe(false)
+  })
+})
+
+describe('columns over the mains', () => {
+  it('stand in every form with the voltage in their title', () => {
+    const sample = rankSample()
+    const at_mains = [207, 230, 253].map((mains_v) => ({
+      mains_v,
+      total_w: 5,
+      stage_loss_w: 20,
+      junction_c: 70,
+      thermal: 'settled' as const,
+    }))
+    const result = words({ ...sample, candidates: sample.candidates.map((part) => ({ ...part, at_mains })) })
+    expect(renderCsv(result)).toContain('207 V: stage loss (W),207 V: total (W),207 V: Tj (°C)')
+    expect(renderMarkdown(result)).toContain('### Over the mains')
+    expect(renderTable(result, { width: 80, colour: false })).toMatch(/\n +207 V: +230 V: +253 V:\n/)
   })
 })
