@@ -1,4 +1,3 @@
-import type { Waveform } from '../domain/capture.ts'
 import type { LocatedEvent } from './locate-event.ts'
 
 /** What one channel's limits did to its samples. */
@@ -33,22 +32,29 @@ export function clippedPeak(
     : null
 }
 
-/** A flat stretch without any noise, at the record's extreme, in a channel that is noisy elsewhere. */
-export function clippedPlateau(
-  values: Float64Array,
-  from: number,
-  to: number,
-  noise: number,
-  step: number,
-): FoundClipping | null {
-  if (to - from < 12 || !(noise > 0.4 * step) || !(noise > 0)) return null
-  const level = values[from + Math.floor((to - from) / 2)]!
-  let equal = 0
-  for (let k = from; k < to; k++) if (values[k] === level) equal += 1
-  if (equal < 0.95 * (to - from)) return null
-  for (let k = 0; k < values.length; k++)
-    if (Math.abs(values[k]!) > Math.abs(level) && values[k]! * level > 0) return null
-  return { at: level, samples: equal }
+/** Samples in a row that noise would have moved. */
+const longRun = 12
+
+/**
+ * A run of samples at the record's extreme, without any noise, in a channel that is noisy elsewhere: noise would have
+ * left the level on both sides. `side` is 1 for the highest reading, -1 for the lowest.
+ */
+export function clippedPlateau(values: Float64Array, side: 1 | -1, noise: number, step: number): FoundClipping | null {
+  if (!(noise > 0.4 * step) || !(noise > 0)) return null
+  let extreme = Number.NEGATIVE_INFINITY
+  let run = 0
+  let longest = 0
+  for (let k = 0; k < values.length; k++) {
+    const value = side * values[k]!
+    if (value > extreme) {
+      extreme = value
+      run = 0
+      longest = 0
+    }
+    run = value === extreme ? run + 1 : 0
+    if (run > longest) longest = run
+  }
+  return longest >= longRun ? { at: side * extreme, samples: longest } : null
 }
 
 /** Step of the converter: the smallest difference between neighbouring samples that are not equal. */
@@ -61,9 +67,9 @@ export function quantum(values: Float64Array, from: number, to: number): number 
   return Number.isFinite(smallest) ? smallest : 0
 }
 
-/** Step of the converter from a whole capture. */
-export function channelQuantum(waveform: Waveform): number {
-  return quantum(waveform.current, 1, Math.min(waveform.current.length, 20_000))
+/** Step of the converter of a channel, from the first part of its record. */
+export function channelQuantum(values: Float64Array): number {
+  return quantum(values, 1, Math.min(values.length, 20_000))
 }
 
 /** Standard deviation of one raw sample from the differences of neighbours over a stretch that is quiet otherwise. */

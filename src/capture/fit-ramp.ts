@@ -36,13 +36,21 @@ export interface WindowMarks {
   readonly lowest: number
 }
 
-/** Baseline, plateau, line through zero from 0.5 I_F to −0.5 I_RM, corner and tail; three rounds settle the levels. */
-export function fitRamp(window: EventWindow, marks: WindowMarks, conditions: FitConditions): FittedRamp {
-  let base = marks.base
-  let forward = marks.forward
-  let reverse = marks.base - marks.lowest
-  let result: FittedRamp | null = null
-  for (let round = 0; round < 3; round++) {
+/**
+ * Baseline, plateau, line through zero from 0.5 I_F to −0.5 I_RM, corner and tail; three rounds settle the levels, one is
+ * enough from a fit of nearly the same samples.
+ */
+export function fitRamp(
+  window: EventWindow,
+  marks: WindowMarks,
+  conditions: FitConditions,
+  near: FittedRamp | null = null,
+): FittedRamp {
+  let base = near?.fitted.base ?? marks.base
+  let forward = near?.current ?? marks.forward
+  let reverse = near?.curve.amplitude ?? marks.base - marks.lowest
+  let result = near
+  for (let round = near === null ? 0 : 2; round < 3; round++) {
     result = oneRound(window, marks, conditions, { base, forward, reverse }, result)
     base = result.fitted.base
     forward = result.current

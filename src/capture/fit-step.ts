@@ -24,16 +24,20 @@ export interface FittedStep {
   readonly edgeEnd: number
 }
 
-/** Plateaus, zero crossing, corner and tail; three rounds settle the levels. `resolution` is the shortest time told apart. */
+/** A plateau lasts at least this share of the edge before it; a shorter one is the edge's own rounding. */
+const leastPlateau = 0.7
+
+/** Plateaus, zero crossing, corner and tail; three rounds settle the levels, one from a fit nearby. `resolution` is the shortest time told apart. */
 export function fitStep(
   window: EventWindow,
   marks: WindowMarks,
   conditions: FitConditions,
   resolution: number,
+  near: FittedStep | null = null,
 ): FittedStep {
-  let levels = { base: marks.base, reverse: marks.base - marks.lowest }
-  let result: FittedStep | null = null
-  for (let round = 0; round < 3; round++) {
+  let levels = { base: near?.fitted.base ?? marks.base, reverse: near?.reverse ?? marks.base - marks.lowest }
+  let result = near
+  for (let round = near === null ? 0 : 2; round < 3; round++) {
     result = oneRound(window, marks, conditions, resolution, levels, result)
     levels = { base: result.fitted.base, reverse: result.reverse }
   }
@@ -64,7 +68,7 @@ function oneRound(
   const firstTail = Math.max(window.interval, ((marks.quarter - marks.half) * window.interval) / Math.LN2)
   const tailTime = previous?.fitted.curve.tailTime ?? firstTail
   const corner = previous?.fitted.curve.corner ?? window.time[marks.half]! - Math.LN2 * tailTime
-  const long = corner - edgeEnd > 2 * Math.max(resolution, edgeTime)
+  const long = corner - edgeEnd > leastPlateau * Math.max(resolution, edgeTime)
   const plateau = long ? reverseLevel(window, edgeEnd, corner) : null
   const line = plateau ?? edge
   const guess = {

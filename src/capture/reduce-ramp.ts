@@ -1,15 +1,18 @@
-import type { CaptureCaveat, CaptureTrace, NothingMeasurable, ReducedCapture } from '../domain/capture.ts'
+import type { CaptureTrace, NothingMeasurable, ReducedCapture } from '../domain/capture.ts'
 import { type CaptureContext, instrumentTime, resolution } from './capture-context.ts'
 import { correctSkew } from './correct-skew.ts'
 import { type EventWindow, eventWindow } from './event-window.ts'
 import { lineAt } from './fit-line.ts'
 import { type FittedRamp, fitRamp, type WindowMarks } from './fit-ramp.ts'
+import { generalCaveats } from './general-caveats.ts'
 import { rampDefects } from './ramp-defects.ts'
 import { type RampFigures, rampFigures } from './ramp-figures.ts'
 import { reverseCurrentAt } from './recovery-curve.ts'
 import { type RecoveryEnergy, recoveryEnergy } from './recovery-energy.ts'
 import { resampleRamp } from './resample-ramp.ts'
 import { rowSpread } from './row-spread.ts'
+import { signOfVoltage } from './sign-of-voltage.ts'
+import { marksIn } from './window-marks.ts'
 
 /** Reduces a commutation at a set slope (PHYSICS: measured captures). */
 export function reduceRamp(given: CaptureContext): ReducedCapture {
@@ -25,59 +28,15 @@ export function reduceRamp(given: CaptureContext): ReducedCapture {
   const shared = { offset: ramp.fitted.base, noise: ramp.fitted.noise, trace: traceOf(window, ramp) }
   const nothing = nothingMeasurable(context, ramp, figures)
   if (nothing !== null)
-    return { figures: nothing, spread: {}, rowSpread: 0, caveats: general(context, voltageSign), ...shared }
+    return { figures: nothing, spread: {}, rowSpread: 0, caveats: generalCaveats(context, voltageSign), ...shared }
   const { endDoubt: _, ...plain } = figures
   const spread = rampSpread(context, window, marks, ramp, figures, energy)
   return {
     figures: { kind: 'ramp', ...plain, voltage: energy?.voltage ?? null, energy: energy?.energy ?? null },
     spread,
     rowSpread: rowSpread([spread.recoveryTime!, spread.charge!, spread.peakReverseCurrent!]),
-    caveats: [...general(context, voltageSign), ...rampDefects(context, window, ramp, figures, energy)],
+    caveats: [...generalCaveats(context, voltageSign), ...rampDefects(context, window, ramp, figures, energy)],
     ...shared,
-  }
-}
-
-/** Caveats that need no fit. */
-export function general(context: CaptureContext, voltageSign: 1 | -1): readonly CaptureCaveat[] {
-  const { event, settings, fixture } = context
-  const found: CaptureCaveat[] = []
-  if (event.inverted) found.push({ code: 'wrong-sign', data: { channel: 'current' } })
-  if (voltageSign < 0) found.push({ code: 'wrong-sign', data: { channel: 'voltage' } })
-  if (event.events > 1) found.push({ code: 'several-events', data: { events: event.events } })
-  if (fixture !== null && !fixture.subtracted && settings.fixture === 'ramp')
-    found.push({ code: 'reference-not-subtracted', data: {} })
-  if (settings.device.junction === null) found.push({ code: 'junction-assumed', data: {} })
-  return found
-}
-
-/** A reverse voltage is higher after the event than before it; the other way round the channel is turned. */
-export function signOfVoltage({ waveform, event }: CaptureContext): 1 | -1 {
-  const { voltage } = waveform
-  if (voltage === null) return 1
-  const mean = (from: number, to: number) => {
-    let sum = 0
-    for (let k = from; k < to; k++) sum += voltage[k]!
-    return sum / Math.max(1, to - from)
-  }
-  return mean(event.quarter, event.last) < mean(event.first, event.edge) ? -1 : 1
-}
-
-/** The first look's sample numbers in the averaged window. */
-export function marksIn(window: EventWindow, { waveform, event }: CaptureContext): WindowMarks {
-  const at = (k: number) =>
-    Math.min(
-      window.time.length - 1,
-      Math.max(0, Math.floor((waveform.start + k * waveform.interval - window.time[0]!) / window.interval + 0.5)),
-    )
-  return {
-    edge: at(event.edge),
-    crossing: at(event.crossing),
-    peak: Math.max(at(event.peak), at(event.crossing) + 1),
-    half: at(event.half),
-    quarter: Math.max(at(event.quarter), at(event.half) + 1),
-    forward: event.forward,
-    base: event.base,
-    lowest: event.lowest,
   }
 }
 

@@ -2,12 +2,14 @@ import type { CaptureTrace, NothingMeasurable, ReducedCapture } from '../domain/
 import { type CaptureContext, instrumentTime, resolution } from './capture-context.ts'
 import { type EventWindow, eventWindow } from './event-window.ts'
 import { type FittedStep, fitStep } from './fit-step.ts'
+import { generalCaveats } from './general-caveats.ts'
 import { reverseCurrentAt } from './recovery-curve.ts'
-import { general, marksIn, signOfVoltage } from './reduce-ramp.ts'
 import { resampleStep } from './resample-step.ts'
 import { rowSpread } from './row-spread.ts'
+import { signOfVoltage } from './sign-of-voltage.ts'
 import { stepDefects } from './step-defects.ts'
 import { type StepFigures, stepFigures } from './step-figures.ts'
+import { marksIn } from './window-marks.ts'
 
 /** Reduces a resistor-limited reversal (PHYSICS: measured captures, step fixture). */
 export function reduceStep(context: CaptureContext): ReducedCapture {
@@ -20,7 +22,8 @@ export function reduceStep(context: CaptureContext): ReducedCapture {
   const step = fitStep(window, marks, conditions, shortest)
   const shared = { offset: step.fitted.base, noise: step.fitted.noise, trace: traceOf(window, step) }
   const nothing = nothingMeasurable(window, step, shortest)
-  if (nothing !== null) return { figures: nothing, spread: {}, rowSpread: 0, caveats: general(context, 1), ...shared }
+  if (nothing !== null)
+    return { figures: nothing, spread: {}, rowSpread: 0, caveats: generalCaveats(context, 1), ...shared }
   const figures = stepFigures(window, step, settings.recoveryTimeBy)
   const spread = stepSpread(context, window, step, figures, shortest)
   const { endDoubt: _, ...plain } = figures
@@ -28,7 +31,7 @@ export function reduceStep(context: CaptureContext): ReducedCapture {
     figures: { kind: 'step', ...plain },
     spread,
     rowSpread: rowSpread([spread.recoveryTime!, figures.storageTime === null ? 0 : spread.storageTime!]),
-    caveats: [...general(context, 1), ...stepDefects(context, window, step, figures)],
+    caveats: [...generalCaveats(context, 1), ...stepDefects(context, window, step, figures)],
     ...shared,
   }
 }
@@ -64,7 +67,7 @@ function reverseLobe(window: EventWindow, step: FittedStep): { peak: number; wid
   let quiet = 0
   for (let k = from; k < window.time.length && quiet < 4; k++) {
     const reverse = base - window.current[k]!
-    quiet = reverse < Math.max(2 * noise, 0.02 * peak) && count > 2 ? quiet + 1 : 0
+    quiet = above > 0 && reverse < Math.max(2 * noise, 0.02 * peak) ? quiet + 1 : 0
     charge += reverse
     count += 1
     if (reverse > 0.5 * peak) above += 1

@@ -28,7 +28,7 @@ export function resampleRamp(input: {
   const sums = new Float64Array(resampled.length)
   for (let round = 0; round < rounds; round++) {
     const current = fitted.map((value) => value + residuals[Math.floor(uniform() * residuals.length)]!)
-    const again = fitRamp({ ...window, current }, input.marks, input.conditions)
+    const again = fitRamp({ ...window, current }, input.marks, input.conditions, ramp)
     const drawn = rampFigures({ ...window, current }, again, input.definition, input.chargeUntil)
     resampled.forEach((name, i) => {
       // one fit in a wild corner says "unsure", not "infinitely so"

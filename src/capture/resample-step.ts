@@ -2,8 +2,8 @@ import { type CaptureContext, instrumentTime } from './capture-context.ts'
 import type { EventWindow } from './event-window.ts'
 import { type FittedStep, fitStep } from './fit-step.ts'
 import { reverseCurrentAt } from './recovery-curve.ts'
-import { marksIn } from './reduce-ramp.ts'
 import { type StepFigures, stepFigures } from './step-figures.ts'
+import { marksIn } from './window-marks.ts'
 
 const rounds = 24
 const resampled = ['current', 'reverse', 'storageTime', 'recoveryTime', 'lifetime', 'tailTime'] as const
@@ -34,7 +34,7 @@ export function resampleStep(input: {
     })
     const again = stepFigures(
       window,
-      fitStep({ ...window, current }, marks, { instrument: instrumentTime(context.settings) }, shortest),
+      fitStep({ ...window, current }, marks, { instrument: instrumentTime(context.settings) }, shortest, step),
       context.settings.recoveryTimeBy,
     )
     resampled.forEach((name, i) => {

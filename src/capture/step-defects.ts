@@ -36,7 +36,7 @@ export function stepDefects(
   if (ringing !== null) add('ringing', { frequency: ringing.frequency, amplitude: ringing.amplitude })
   const followed = window.time[window.time.length - 1]! - step.fitted.curve.corner
   const wanted = figures.tailTime * Math.log(1 / settings.chargeUntil)
-  if (followed < wanted) add('tail-truncated', { followed, wanted })
+  if (followed < 0.9 * wanted) add('tail-truncated', { followed, wanted })
   const conduction = (event.edge - event.first) * waveform.interval
   if (event.startVisible && chargedShare(conduction, figures.lifetime) < chargedEnough)
     add('plateau-too-short', { conduction, wanted: 3 * figures.lifetime })
@@ -49,11 +49,7 @@ function clipping({ waveform, event }: CaptureContext) {
   const { current } = waveform
   const quietFrom = Math.min(event.last - 1, event.quarter + 4 * (event.quarter - event.half))
   const noise = sampleNoise(current, quietFrom, event.last)
-  const step = channelQuantum(waveform)
-  const fall = event.crossing - event.edge
-  const middle = 0.3 * (event.half - event.crossing)
-  return (
-    clippedPlateau(current, event.first, event.edge - fall, noise, step) ??
-    clippedPlateau(current, Math.round(event.crossing + middle), Math.round(event.half - middle), noise, step)
-  )
+  const step = channelQuantum(current)
+  const forward = event.inverted ? -1 : 1
+  return clippedPlateau(current, forward, noise, step) ?? clippedPlateau(current, forward === 1 ? -1 : 1, noise, step)
 }
