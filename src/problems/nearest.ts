@@ -16,7 +16,7 @@ export function nearestWords(typed: string, known: readonly string[]): readonly 
 
 /** "did you mean "a" or "b"?", or "" when nothing is near. */
 export function didYouMean(typed: string, known: readonly string[]): string {
-  const near = nearestWords(typed, known).slice(0, 2)
+  const near = [...new Set(nearestWords(typed, known))].slice(0, 2)
   return near.length === 0 ? '' : `did you mean ${near.map((word) => `"${word}"`).join(' or ')}?`
 }
 

@@ -18,7 +18,7 @@ const words: Readonly<Record<ProblemCode, (problem: Problem) => string>> = {
 
   'yaml-syntax': (p) => `${p.expected}${aside(p.hint)}`,
   'yaml-duplicate-key': (p) => `"${p.found}" stands here twice; keep one${aside(p.hint)}`,
-  'yaml-forbidden': (p) => `${p.found} cannot be used here; ${p.hint}`,
+  'yaml-forbidden': (p) => `${p.found} cannot be used here${next(p.hint)}`,
   'yaml-too-deep': (p) => `is nested deeper than ${p.expected}`,
 
   'key-unknown': (p) => `"${p.found}" is no key here${aside(p.hint || `known: ${p.expected}`)}`,
@@ -33,7 +33,8 @@ const words: Readonly<Record<ProblemCode, (problem: Problem) => string>> = {
     `${quoted(p.found)}: "${unitOf(p.found)}" is no unit here${aside(p.hint || `wanted is ${p.expected}`)}`,
   'unit-dimension': (p) => `${quoted(p.found)}: ${p.hint}; wanted is ${p.expected}`,
   'number-malformed': (p) => `${quoted(p.found)} is not a number with a unit; wanted is ${p.expected}${aside(p.hint)}`,
-  'number-decimal-comma': (p) => `${quoted(p.found)} has a comma in its number, which is never guessed at (${p.hint})`,
+  'number-decimal-comma': (p) =>
+    `${quoted(p.found)} has a comma in its number, which is never guessed at${aside(p.hint)}`,
   'number-not-finite': (p) => `${quoted(p.found)} is not a finite number; wanted is ${p.expected}`,
   'number-out-of-range': (p) => `${quoted(p.found)} is outside what can be used: ${p.expected}${aside(p.hint)}`,
   'number-zero': (p) => `${quoted(p.found)} is zero; wanted is ${p.expected}${aside(p.hint)}`,

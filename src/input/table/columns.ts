@@ -23,11 +23,17 @@ export function findColumns(
       index.set(leaf.cell, at)
       return []
     }
-    const hint = twice ? 'it stands there twice: give its position' : didYouMean(String(column), names)
-    const place = { ...mapping.placeOf(leaf), path: `record.${pathText(leaf.path)}.column` }
-    return [
-      { ...place, code: 'table-column-unknown', found: shown(String(column)), expected: shown(names.join(', ')), hint },
-    ]
+    const place = {
+      ...mapping.placeOf(leaf),
+      path: `record.${pathText(leaf.path)}.column`,
+      found: shown(String(column)),
+    }
+    if (twice)
+      return [{ ...place, code: 'values-contradict', expected: twiceWords, hint: `write a position such as ${at + 1}` }]
+    const hint = didYouMean(String(column), names)
+    return [{ ...place, code: 'table-column-unknown', expected: shown(names.join(', ')), hint }]
   })
   return { index, problems }
 }
+
+const twiceWords = 'two columns of the table have this name'
