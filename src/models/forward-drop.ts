@@ -1,5 +1,5 @@
 /** A forward characteristic at one temperature. */
-export interface ForwardCurve {
+interface ForwardCurve {
   /** Constant term. [V] */
   readonly constant: number
   /** Coefficient of ln(i/I0). [V] */

@@ -28,7 +28,7 @@ export interface ResidualRecoveryOutput {
 }
 
 /** Share of the charge at idle time 0 below which nothing is booked. [1] */
-export const negligibleResidue = 0.01
+const negligibleResidue = 0.01
 
 /**
  * Hard recovery of what is left in the rectifier in discontinuous conduction, after it has recovered softly into the inductor.

@@ -1,5 +1,5 @@
 /** How a source stands: seen in the document, quoted by another, recalled, or evaluated here from a published formula. */
-export type Standing = 'read' | 'second-hand' | 'from memory' | 'own'
+type Standing = 'read' | 'second-hand' | 'from memory' | 'own'
 
 /** One figure of a case: what is printed and what the engine has to give. */
 export interface Figure {
@@ -17,7 +17,7 @@ export interface Figure {
 }
 
 /** A worked example with its inputs. */
-export interface Case<Input> {
+interface Case<Input> {
   readonly name: string
   readonly input: Input
   readonly figures: readonly Figure[]
@@ -35,7 +35,7 @@ export interface PublishedRow {
 }
 
 /** A case after computing, SI. */
-export interface Evaluated {
+interface Evaluated {
   readonly name: string
   readonly figures: readonly Figure[]
   readonly computed: Readonly<Record<string, number>>
