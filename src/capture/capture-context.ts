@@ -17,6 +17,7 @@ export interface CaptureContext {
   /** Null without a reference. */
   readonly fixture: FixtureResponse | null
   readonly uniform: () => number
+  readonly refits: number
 }
 
 /** Rise time of a first-order response, 10 to 90 %, times its bandwidth (2.197/(2 pi); common practice). */

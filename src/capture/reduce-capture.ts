@@ -12,6 +12,8 @@ export interface CaptureInput {
   readonly reference: Waveform | null
   /** Even numbers from 0 to 1 from a seeded generator, for the resampling. */
   readonly uniform: () => number
+  /** Refits from which the doubt by noise is taken; 0 leaves it out. */
+  readonly refits: number
 }
 
 /** Reduces a capture to its figures; null where the record holds no fall from forward to reverse current. */

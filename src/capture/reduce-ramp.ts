@@ -79,6 +79,7 @@ function rampSpread(
     definition: settings.recoveryTimeBy,
     chargeUntil: settings.chargeUntil,
     uniform: context.uniform,
+    refits: context.refits,
   })
   // the same event with nothing, or everything, of the rounding taken out
   const other = settings.bandwidth === null ? { ...ramp.curve, rounding: 0 } : ramp.fitted.curve
@@ -95,11 +96,17 @@ function rampSpread(
     const key = name as keyof typeof noise
     const bandwidth = 0.5 * (without[key] / figures[key] - 1)
     const end = key === 'charge' ? 0.5 * (1 - figures.charge / ends.at(-1)!) : timesEnd[key] ? figures.endDoubt : 0
-    spread[name] = Math.hypot(value, bandwidth, end)
+    const settling = key === 'slope' ? unsettled(ramp) : 0
+    spread[name] = Math.hypot(value, bandwidth, end, settling)
   }
   if (energy !== null) spread.energy = Math.hypot(spread.charge!, 0.01)
   if (energy !== null) spread.voltage = 0.01
   return spread
+}
+
+/** Share of the slope that the instrument still lacks where the line through zero begins. */
+function unsettled({ curve, fitted, current }: FittedRamp): number {
+  return Math.exp((-0.5 * current) / (curve.slope * fitted.curve.rounding))
 }
 
 /** Figures that move with the end of the recovery time. */

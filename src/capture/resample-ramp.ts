@@ -5,8 +5,6 @@ import { type FitConditions, type FittedRamp, fitRamp, type WindowMarks } from '
 import { type RampFigures, rampFigures } from './ramp-figures.ts'
 import { reverseCurrentAt } from './recovery-curve.ts'
 
-const rounds = 24
-
 /**
  * Relative standard deviation of each figure from the noise: the fitted event with residuals drawn anew, fitted again
  * (residual bootstrap; B. Efron & R. J. Tibshirani, An Introduction to the Bootstrap, 1993, section 9.5, from memory).
@@ -21,12 +19,13 @@ export function resampleRamp(input: {
   readonly chargeUntil: number
   /** Even numbers from 0 to 1 from a seeded generator. */
   readonly uniform: () => number
+  readonly refits: number
 }): Readonly<Record<(typeof resampled)[number], number>> {
-  const { window, ramp, figures, uniform } = input
+  const { window, ramp, figures, uniform, refits } = input
   const fitted = window.current.map((_, k) => fittedAt(window, ramp, k))
   const residuals = window.current.map((value, k) => value - fitted[k]!)
   const sums = new Float64Array(resampled.length)
-  for (let round = 0; round < rounds; round++) {
+  for (let round = 0; round < refits; round++) {
     const current = fitted.map((value) => value + residuals[Math.floor(uniform() * residuals.length)]!)
     const again = fitRamp({ ...window, current }, input.marks, input.conditions, ramp)
     const drawn = rampFigures({ ...window, current }, again, input.definition, input.chargeUntil)
@@ -36,7 +35,7 @@ export function resampleRamp(input: {
       sums[i] = sums[i]! + (Number.isFinite(ratio) ? ratio * ratio : 1)
     })
   }
-  return Object.fromEntries(resampled.map((name, i) => [name, Math.sqrt(sums[i]! / rounds)])) as Record<
+  return Object.fromEntries(resampled.map((name, i) => [name, Math.sqrt(sums[i]! / Math.max(1, refits))])) as Record<
     (typeof resampled)[number],
     number
   >

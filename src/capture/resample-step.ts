@@ -5,7 +5,6 @@ import { reverseCurrentAt } from './recovery-curve.ts'
 import { type StepFigures, stepFigures } from './step-figures.ts'
 import { marksIn } from './window-marks.ts'
 
-const rounds = 24
 const resampled = ['current', 'reverse', 'storageTime', 'recoveryTime', 'lifetime', 'tailTime'] as const
 
 /** Relative standard deviation of each figure from the noise, by refitting the event with residuals drawn anew. */
@@ -26,7 +25,7 @@ export function resampleStep(input: {
   const draw = () => residuals[Math.floor(context.uniform() * residuals.length)]!
   const marks = marksIn(window, context)
   const sums = new Float64Array(resampled.length)
-  for (let round = 0; round < rounds; round++) {
+  for (let round = 0; round < context.refits; round++) {
     // the edge keeps its samples: its shape has no model
     const current = window.current.map((value, k) => {
       if (k >= fitted.from && k < fitted.to) return fittedAt(k) + draw()
@@ -42,8 +41,7 @@ export function resampleStep(input: {
       sums[i] = sums[i]! + (Number.isFinite(ratio) ? ratio * ratio : 1)
     })
   }
-  return Object.fromEntries(resampled.map((name, i) => [name, Math.sqrt(sums[i]! / rounds)])) as Record<
-    (typeof resampled)[number],
-    number
-  >
+  return Object.fromEntries(
+    resampled.map((name, i) => [name, Math.sqrt(sums[i]! / Math.max(1, context.refits))]),
+  ) as Record<(typeof resampled)[number], number>
 }

@@ -22,6 +22,9 @@ export interface ReduceInput {
   readonly inputs: CaptureDocument['inputs']
 }
 
+/** Refits behind the spread: its own error is then a seventh of it. */
+const refits = 24
+
 /** The document, and the event drawn again for plots. */
 export interface ReduceResult {
   readonly document: CaptureDocument
@@ -35,7 +38,7 @@ export interface ReduceResult {
 export function reduce(input: ReduceInput): ReduceResult {
   const { settings, waveform, reference, seed } = input
   const uniform = seededStream('reduce', seed, settings.file).uniform
-  const reduced = reduceCapture({ settings, waveform, reference, uniform })
+  const reduced = reduceCapture({ settings, waveform, reference, uniform, refits })
   if (reduced === null) {
     const found = 'the current never falls from forward to reverse'
     throw new StudyRefusal('range-outside', { found, expected: 'a record with a recovery event', path: 'file' })

@@ -1,3 +1,4 @@
+import { captureAccuracySection } from '../capture/accuracy.ts'
 import { capacitanceRows } from './capacitance-rows.ts'
 import { compareRow, type ValidationSection } from './compare.ts'
 import { conductionRows } from './conduction-rows.ts'
@@ -38,6 +39,7 @@ export const sections: readonly ValidationSection[] = [
   section('Conduction', 'What the rectifier loses while it conducts.', conductionRows),
   section('Overlap, ripple and line cycle', 'What the stage adds around the rectifier.', stageRows),
   section('Heat and leakage', 'Junction temperature, runaway and derating.', heatRows),
+  captureAccuracySection(),
 ]
 
 /** Published rows without a case here, each with its reason. */
