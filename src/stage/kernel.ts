@@ -173,9 +173,9 @@ export interface LineGrid {
   crestCurrent: number
   /** The crest that solutions start from: scaled when the nodes were laid. [A] */
   startCrest: number
-  /** Mean rectifier current of the last booking [A], and by how much of itself the crest was off. */
+  /** Mean rectifier current of the last booking [A], and the share by which the crest was corrected after it. */
   bookedMean: number
-  mismatch: number
+  correction: number
   /** Weight of the angles in continuous conduction. */
   continuousShare: number
 }

@@ -17,7 +17,7 @@ export function createLineGrid(): LineGrid {
     crestCurrent: 0,
     startCrest: 0,
     bookedMean: 0,
-    mismatch: 0,
+    correction: 0,
     continuousShare: 1,
   }
 }
@@ -112,14 +112,14 @@ export function evaluateLine(kernel: Kernel): void {
 
 /**
  * One round of the same for a solver that comes back with new temperatures anyway: books at the present crest, then
- * corrects it. `mismatch` tells how far the crest was off. Scaling it out in every round costs twice the bookings.
+ * corrects it. `correction` tells by what share. Scaling it out in every round costs twice the bookings.
  */
 export function evaluateLineRound(kernel: Kernel): void {
   const { line } = kernel
   bookLine(kernel)
   if (!kernel.delivers) return
   const ratio = kernel.outputCurrent / line.bookedMean
-  line.mismatch = Math.abs(ratio - 1)
+  line.correction = ratio - 1
   line.crestCurrent *= ratio
   kernel.delivers = line.crestCurrent < 1e9
 }

@@ -1,11 +1,14 @@
 import { ambientForJunction, lowestSettledJunction } from './ambient-for-junction.ts'
 import { evaluateRound } from './evaluate.ts'
+import { placeSensitivity, sensitivity } from './heat-sensitivity.ts'
 import { type Kernel, row, switchPower } from './kernel.ts'
 
 /** Temperatures are solved to this. [K] */
 const tolerance = 1e-6
 /** The crest of the line current is solved to this share of itself, beside the temperatures. */
 const crestTolerance = 1e-9
+/** Closer to running away than this, estimates of the sensitivity are not used. */
+const leastMargin = 0.2
 const maxRounds = 25
 
 // Scratch of the solver: unknowns are the solved temperatures, at most three.
@@ -30,15 +33,17 @@ export function settle(kernel: Kernel): boolean {
   evaluateRound(kernel)
   if (!kernel.delivers) return settleSlowly(kernel)
   computeResidual(kernel, count)
-  identity(count)
+  placeInverse(kernel, count)
   for (let round = 0; round < maxRounds; round++) {
     const moving = largest(residual, count) > tolerance
-    if (!moving && kernel.line.mismatch <= crestTolerance) return true
+    if (!moving && Math.abs(kernel.line.correction) <= crestTolerance) return true
     if (moving && !stepForward(kernel, count)) return settleSlowly(kernel)
+    const crestMoves = Math.abs(kernel.line.correction) * (kernel.temperatures[0]! - kernel.thermal.reference)
     evaluateRound(kernel)
     if (!kernel.delivers) return settleSlowly(kernel)
     computeResidual(kernel, count)
-    if (moving) updateInverse(count)
+    // What the crest's move did to the heat must not be taken for an answer to the temperatures.
+    if (moving && crestMoves <= 0.02 * largest(step, count)) updateInverse(count)
   }
   return settleSlowly(kernel)
 }
@@ -54,6 +59,11 @@ function settleSlowly(kernel: Kernel): boolean {
 /** Where the heat flow through the network would put each solved junction, minus where it is. */
 function computeResidual(kernel: Kernel, count: number): void {
   heatTargets(kernel, target)
+  // The crest of a mains stage has been corrected after the booking: most heat follows its power of 1.5.
+  if (kernel.kind === 'mains-boost') {
+    const growth = 1.5 * kernel.line.correction
+    for (let k = 0; k < 3; k++) target[k]! += growth * (target[k]! - kernel.thermal.reference)
+  }
   for (let k = 0; k < count; k++) residual[k] = target[index[k]!]! - kernel.temperatures[index[k]!]!
 }
 
@@ -83,14 +93,43 @@ function startFromReference(kernel: Kernel): number {
   temperatures[2] = thermal.reference
   kernel.startCurrent = 0
   kernel.line.crestCurrent = kernel.line.startCrest
-  kernel.line.mismatch = 0
+  kernel.line.correction = 0
   if (kernel.parts > 1) index[count++] = 2
   return count
 }
 
-function identity(count: number): void {
+/**
+ * First guess of the inverse of I − d(heatTargets)/dT: from the estimated sensitivities for a single part, else the
+ * identity, which makes the first step that of the plain fixed point.
+ */
+function placeInverse(kernel: Kernel, count: number): void {
   inverse.fill(0)
   for (let k = 0; k < count; k++) inverse[k * 3 + k] = 1
+  if (kernel.parts > 1) return
+  const { thermal } = kernel
+  placeSensitivity(kernel)
+  const { rectifier, switchByRectifier, switchOwn } = sensitivity
+  const common = thermal.common * thermal.factor
+  const self = thermal.junctionSelf * thermal.factor
+  const ownSwitch = thermal.switchSelf * thermal.factor
+  // Heat of either on the common sink warms both.
+  const sinkByRectifier =
+    common * ((thermal.rectifierOnSink ? rectifier : 0) + (thermal.switchOnSink ? switchByRectifier : 0))
+  const sinkBySwitch = thermal.switchOnSink ? common * switchOwn : 0
+  const a = 1 - (thermal.rectifierOnSink ? sinkByRectifier : 0) - self * rectifier
+  if (count === 1) {
+    if (a > leastMargin) inverse[0] = 1 / a
+    return
+  }
+  const b = thermal.rectifierOnSink ? -sinkBySwitch : 0
+  const c = -sinkByRectifier - ownSwitch * switchByRectifier
+  const d = 1 - sinkBySwitch - ownSwitch * switchOwn
+  const determinant = a * d - b * c
+  if (!(a > leastMargin && d > leastMargin && determinant > leastMargin)) return
+  inverse[0] = d / determinant
+  inverse[1] = -b / determinant
+  inverse[3] = -c / determinant
+  inverse[4] = a / determinant
 }
 
 /** Moves along the quasi-Newton direction; false when the step leaves the searched range. */
