@@ -21,7 +21,7 @@ import { spreadFrom, switchFrom } from './stage-switch.ts'
 import { type Place, readYaml } from './yaml/read-yaml.ts'
 
 /** A part that the stage file names, and where it does so. */
-export interface NamedPart {
+interface NamedPart {
   readonly id: string
   /** "candidates[2]", "incumbent", "switch.turn_on.rectifier". */
   readonly path: string

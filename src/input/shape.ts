@@ -12,7 +12,7 @@ import type { YamlFile } from './yaml/read-yaml.ts'
 export function checkShape(yaml: YamlFile, validate: Validator<unknown>): readonly Problem[] {
   if (validate(yaml.data)) return []
   const faults = withoutPairs(yaml.data, validate.errors ?? []).flatMap((error) => faultOf(yaml.data, error))
-  const told = new Map(faults.map((fault) => [`${pathText(fault.path)} ${fault.code}`, fault]))
+  const told = new Map(faults.map((fault) => [`${pathText(fault.path)} ${pathText(fault.at)} ${fault.code}`, fault]))
   return [...told.values()].map(({ at, of, path, ...fault }) => ({
     ...fault,
     file: yaml.file,

@@ -7,9 +7,12 @@ import { problemSentence } from './words.ts'
  */
 export function formatProblem(problem: Problem, sourceText: string | null = null): string {
   const head = `${place(problem)}  ${problem.code}  ${problem.path === '' ? '' : `${problem.path}: `}${problemSentence(problem)}`
-  const line = sourceText === null ? undefined : sourceLine(sourceText, problem.line)
+  const line = sourceText === null || isTable.test(problem.file) ? undefined : sourceLine(sourceText, problem.line)
   return line === undefined || line.trim() === '' ? head : `${head}\n${pointed(line, problem)}`
 }
+
+/** In a table the column of a problem counts columns, not characters: there is nothing for a caret to point at. */
+const isTable = /\.csv$/i
 
 function place({ file, line, column }: Problem): string {
   return line === 0 ? file : `${file}:${line}:${column}`

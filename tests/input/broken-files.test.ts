@@ -107,6 +107,19 @@ duty_profile: [{load: 1}]
     `)
   })
 
+  it('when several keys are unknown in one place', () => {
+    expect(told(readStage, `${smallStage}titel: x\nkooling: 3\n`)).toMatchInlineSnapshot(`
+      "
+      file.yaml:7:1  key-unknown  "titel" is no key here (did you mean "title"?)
+          titel: x
+          ^^^^^
+      file.yaml:8:1  key-unknown  "kooling" is no key here (did you mean "cooling"?)
+          kooling: 3
+          ^^^^^^^
+      "
+    `)
+  })
+
   it('when keys are missing', () => {
     expect(told(readStage, 'title: x\n')).toMatchInlineSnapshot(`
       "

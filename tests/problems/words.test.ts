@@ -41,6 +41,10 @@ describe('a problem as a person reads it', () => {
     expect(line!.slice(caret!.indexOf('^'), caret!.lastIndexOf('^') + 1)).toBe('100 khz')
   })
 
+  it('shows no line of a table, whose columns are not characters', () => {
+    expect(formatProblem(problem({ file: 'parts.CSV', line: 1 }), 'a,b,c').split('\n')).toHaveLength(1)
+  })
+
   it('has no place inside the file where there is none, and shows no line that the file has not', () => {
     expect(formatProblem(problem({ code: 'file-missing', line: 0, column: 0, path: '', hint: '' }))).toBe(
       'catalogs-demo/stages/pump.yaml  file-missing  there is no such file or folder',
