@@ -23,7 +23,7 @@ export interface ProvenanceInput {
   readonly forwardCurrent: number
   /** [V] */
   readonly blockingVoltage: number
-  /** The event as it was solved, from the real conduction interval; null: from the steady state. */
+  /** The event as it was solved, from the real conduction interval; null: from the steady state, nothing at no current. */
   readonly event: EventFigures | null
 }
 
@@ -58,8 +58,12 @@ function recoveryOrigins({ record, rectifier, condition, event }: ProvenanceInpu
   if (rectifier.recovery.origin === 'class-guess') return plain(eventFigures.map(([figure]) => guess(figure)))
   const at = { ...condition, current: Math.max(condition.current, currentFloor * rectifier.ratedCurrent) }
   const places = record.recovery.map((row) => ({ row, ...conditionOfRow(row, record) }))
-  const span = spanOf(at, places)
   const nearest = places.reduce((best, place) => (separation(at, place) < separation(at, best) ? place : best))
+  const from = nearest.row.place.name
+  if (event === null && !(condition.current > 0)) {
+    return plain(eventFigures.map(([figure]) => ({ figure, how: 'converted', from, factor: 0 })))
+  }
+  const span = spanOf(at, places)
   const figures = event ?? steadyFiguresAt(rectifier, condition)
   const fitted = steadyFiguresAt(rectifier, nearest)
   const same = near(at, nearest)
@@ -69,11 +73,11 @@ function recoveryOrigins({ record, rectifier, condition, event }: ProvenanceInpu
     return {
       figure,
       how,
-      from: nearest.row.place.name,
+      from,
       factor: ratio(figures?.[key], stated ?? fitted?.[key]),
     } as const
   })
-  return { provenance, caveats: span.far ? [farCaveat(record, 'Recovery', nearest.row.place.name, span.factor)] : [] }
+  return { provenance, caveats: span.far ? [farCaveat(record, 'Recovery', from, span.factor)] : [] }
 }
 
 /** A figure as the row prints it, where it means the same as ours. */

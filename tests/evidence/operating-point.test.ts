@@ -4,7 +4,7 @@ import { calibrate } from '../../src/evidence/calibrate.ts'
 import { gradeEvidence } from '../../src/evidence/grade-evidence.ts'
 import { posteriorAfterRow } from '../../src/evidence/posterior-after-row.ts'
 import { provenanceAt } from '../../src/evidence/provenance.ts'
-import { forwardDropAt, leakageCurrentAt, recoveryAt } from '../../src/evidence/recovery-at.ts'
+import { forwardDropAt, recoveryAt } from '../../src/evidence/recovery-at.ts'
 import { lumpedFigures } from './lumped.ts'
 import { forwardRow, kelvin, leakageRow, rampRow, record, stepRow } from './records.ts'
 
@@ -160,6 +160,14 @@ describe('the origin of a figure', () => {
       { charge: 0, peakReverseCurrent: 0, recoveryTime: 0 },
     )
     expect(at.of('event.qrr_c')!.factor).toBe(0)
+    // u and y are read at a hundredth of I0 there
+    expect(at.caveats[0]!.data).toMatchObject({ factor: expect.closeTo(100, 9) })
+  })
+
+  it('of a recovery that does not take place is no extrapolation', () => {
+    const at = origins({ recovery: [row] }, { current: 0, slope: 200e6, junction: kelvin(100) })
+    expect(at.of('event.qrr_c')).toEqual({ figure: 'event.qrr_c', how: 'converted', from: 'recovery row 1', factor: 0 })
+    expect(at.caveats).toEqual([])
   })
 })
 
@@ -181,21 +189,25 @@ describe('one more measured row', () => {
     expect(after.posterior.mean).toEqual(rectifier.recovery!.posterior.mean)
   })
 
-  it('of forward voltage and leakage brings the doubt there to about the reading error', () => {
-    const forward = posteriorAfterRow({ rectifier, property: 'forward', condition })!
-    const drop = forwardDropAt({
-      rectifier: { ...rectifier, forward: { ...rectifier.forward, ...forward } },
-      current: 8,
-      junction: point.junction,
-    })
-    expect(drop.deviation / drop.drop).toBeLessThan(0.01)
-    const leakage = posteriorAfterRow({ rectifier, property: 'leakage', condition })!
-    const at = leakageCurrentAt({
-      rectifier: { ...rectifier, leakage: { ...rectifier.leakage!, ...leakage } },
-      voltage: 400,
-      junction: point.junction,
-    })
-    expect(at!.deviation).toBeLessThan(0.1)
+  it('of forward voltage and leakage too', () => {
+    const { drop } = forwardDropAt({ rectifier, current: 8, junction: point.junction })
+    const withForward = { ...held, forward: [...held.forward, forwardRow({ ...point, drop, grade: 'measured' })] }
+    const withLeakage = {
+      ...held,
+      leakage: [...held.leakage, leakageRow({ voltage: 400, junction: point.junction, grade: 'measured' })],
+    }
+    const added = {
+      forward: calibrate({ record: withForward, blockingVoltage: 400 }).rectifier.forward,
+      leakage: calibrate({ record: withLeakage, blockingVoltage: 400 }).rectifier.leakage!,
+    }
+    for (const property of ['forward', 'leakage'] as const) {
+      const after = posteriorAfterRow({ rectifier, property, condition })!
+      expect(after.unitSpread).toBe(added[property].unitSpread)
+      for (const [index, value] of after.posterior.covariance.entries()) {
+        const expected = added[property].posterior.covariance[index]!
+        expect(Math.abs(value - expected)).toBeLessThanOrEqual(1e-9 * Math.abs(expected) + 1e-18)
+      }
+    }
   })
 
   it('does not exist for a property that the part does not have', () => {

@@ -141,6 +141,13 @@ describe('capacitance', () => {
     expect(capacitance).toMatchObject({ builtIn: 1.2 })
   })
 
+  it('given as a law is that law, a built-in voltage of 0 V replaced', () => {
+    const law = (builtIn: number) =>
+      calibrated({ capacitance: { kind: 'law', zeroBias: 4e-10, builtIn, grading: 0.5 } }).rectifier.capacitance
+    expect(law(1)).toEqual({ kind: 'law', zeroBias: 4e-10, builtIn: 1, grading: 0.5 })
+    expect(law(0)).toEqual({ kind: 'law', zeroBias: 4e-10, builtIn: 0.8, grading: 0.5 })
+  })
+
   it('given as one charge stays that charge', () => {
     const { capacitance } = calibrated({ capacitance: { kind: 'charge', charge: 20e-9, voltage: 400 } }).rectifier
     expect(capacitiveCharge({ capacitance: capacitance!, voltage: 100 })).toBeCloseTo(10e-9, 15)
@@ -188,6 +195,11 @@ describe('plausibility by class', () => {
       leakage: [leakageRow({ current: 1 })],
     })
     expect(found).toEqual(['The carrier lifetime', 'Lifetime over tail time', 'The forward voltage', 'The leakage'])
+  })
+
+  it('expects more of a guaranteed maximum than of a typical figure', () => {
+    expect(implausible({ leakage: [leakageRow({ current: 30e-6 })] })).toEqual(['The leakage'])
+    expect(implausible({ leakage: [leakageRow({ current: 30e-6, grade: 'maximum' })] })).toEqual([])
   })
 
   it('tells recovery rows and a rated voltage that no Schottky has', () => {

@@ -1,13 +1,14 @@
 import { describe, expect, it } from 'vitest'
 import { fitFigures } from '../../src/evidence/fit-figures.ts'
 import { invertPair, type RampFigures } from '../../src/evidence/invert-pair.ts'
+import { invertRampRow } from '../../src/evidence/invert-ramp-row.ts'
 import { invertStepRow } from '../../src/evidence/invert-step-row.ts'
 import { priorGaussians } from '../../src/evidence/prior-gaussians.ts'
 import type { FigureName, RampReading } from '../../src/evidence/recovery-figures.ts'
 import type { RowReading } from '../../src/evidence/row-reading.ts'
 import { lifetimeFromStep } from '../../src/models/step-fixture.ts'
 import { lumpedFigures } from './lumped.ts'
-import { stepRow } from './records.ts'
+import { rampRow, stepRow } from './records.ts'
 
 const reading: RampReading = { current: 8, slope: 200e6, recoveryTimeBy: { kind: 'line-90-25' }, softnessBy: 'times' }
 const made = lumpedFigures({ ...reading, junction: 298 }, Math.log(60e-9), Math.log(2))
@@ -125,5 +126,43 @@ describe('reading errors', () => {
     // PHYSICS section 1: tau 150 ns, tau_rr 20 ns
     expect(Math.exp(point.lifetime) / (1.7 * 150e-9)).toBeCloseTo(1, 4)
     expect(1 + Math.exp(point.ratio)).toBeCloseTo(7.5, 3)
+  })
+})
+
+describe('the doubt of a ramp row', () => {
+  const context = { id: 'x', ratedCurrent: 8, blockingVoltage: 400, prior: priorGaussians('ultrafast').recovery! }
+  const noise = (fields: Parameters<typeof rampRow>[0]) =>
+    (invertRampRow(rampRow({ slope: 200e6, ...fields }), context) as RowReading).observation
+  const pair = { recoveryTime: made.recoveryTime, charge: made.charge }
+
+  it('has 0.10 |ln(V/V_row)| more on y, 0.2 without a voltage', () => {
+    const onRatio = (voltage: number | null) =>
+      noise({ ...pair, voltage }).noise[3]! - noise({ ...pair, voltage: 400 }).noise[3]!
+    expect(onRatio(200)).toBeCloseTo((0.1 * Math.LN2) ** 2, 12)
+    expect(onRatio(800)).toBeCloseTo((0.1 * Math.LN2) ** 2, 12)
+    expect(onRatio(null)).toBeCloseTo(0.04, 12)
+  })
+
+  it('carries that into a single figure by what y does to it', () => {
+    const [without, at] = [noise({ charge: 100e-9, voltage: null }), noise({ charge: 100e-9 })]
+    expect(without.noise[0]! - at.noise[0]!).toBeCloseTo(0.04 * at.designs[0]![4]! ** 2, 12)
+    expect(at.noise[0]).toBeCloseTo(0.05 ** 2, 12)
+  })
+
+  it('is 15 % more on a trr of unknown definition, and 25 % on a softness read from one', () => {
+    const unknown = { recoveryTimeBy: { kind: 'unknown' } } as const
+    expect(noise({ recoveryTime: 50e-9, ...unknown }).noise[0]).toBeCloseTo(0.05 ** 2 + 0.15 ** 2, 12)
+    expect(noise({ softness: 1, ...unknown }).noise[0]).toBeCloseTo(0.25 ** 2, 12)
+    expect(noise({ softness: 1, softnessBy: 'slopes', ...unknown }).noise[0]).toBeCloseTo(0.05 ** 2, 12)
+  })
+
+  it('is that of 50 % in a current or slope it does not state', () => {
+    const start = { lifetime: Math.log(60e-9), ratio: Math.log(2) }
+    const exact = { recoveryTime: 0.05, charge: 0.05, peakReverseCurrent: 0.05, softness: 0.05 }
+    const input = { figures, names: ['recoveryTime', 'charge'] as const, start, reading }
+    const known = fitFigures({ ...input, errors: { figures: exact, current: 0, slope: 0 } })
+    const vague = fitFigures({ ...input, errors: { figures: exact, current: 0.5, slope: 0 } })
+    const found = noise({ ...pair, current: null }).noise[0]! - noise(pair).noise[0]!
+    expect(found / (vague.covariance[0] - known.covariance[0])).toBeCloseTo(1, 6)
   })
 })

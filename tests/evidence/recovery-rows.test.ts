@@ -175,6 +175,17 @@ describe('rows of one record', () => {
       expect(part.codes).not.toContain(code)
   })
 
+  it('whose charge grows a little when hot are not told', () => {
+    const part = calibrated(cold, rampRow({ recoveryTime: 70e-9, charge: 110e-9, junction: kelvin(125) }))
+    expect(part.codes).not.toContain('hot-below-cold')
+  })
+
+  it('whose charge falls with a harder slope make a fit that is told', () => {
+    const harder = rampRow({ slope: 500e6, recoveryTime: 30e-9, charge: 80e-9, spread: 0.01 })
+    const part = calibrated({ ...cold, spread: 0.01 }, harder)
+    expect(part.dataOf('evidence-falls')!.quantity).toBe('slope')
+  })
+
   it('that cannot both be of one part are told with their distance', () => {
     const part = calibrated(cold, rampRow({ recoveryTime: 150e-9, charge: 500e-9, place: place('recovery row 2') }))
     expect(part.codes).toContain('rows-contradict')
