@@ -61,8 +61,10 @@ function strayRecovery(record: RectifierRecord): Caveat[] {
 function checkRecovery(candidate: string, prior: Gaussian, reading: RowReading): Caveat[] {
   const [lifetimeDesign, ratioDesign] = recoveryDesigns(reading.condition)
   const shift = reading.row.grade === 'maximum' ? maximumShift.lifetime : 0
-  const lifetime = expectation(prior, lifetimeDesign)
-  const ratio = expectation(prior, ratioDesign)
+  // what a step fixture tells about a ramp is doubtful by itself: that much is no fault of the row
+  const method = reading.row.fixture === 'step' ? reading.observation.noise : []
+  const lifetime = expectation(prior, lifetimeDesign, method[0])
+  const ratio = expectation(prior, ratioDesign, method[3])
   const { name } = reading.row.place
   const found: Caveat[] = []
   if (lifetime.far(reading.point.lifetime - shift)) {
@@ -154,9 +156,9 @@ function checkSoftness(candidate: string, readings: readonly RowReading[]): Cave
   return least < snappyBelow ? [{ code: 'snappy', candidate, data: { softness: least, current } }] : []
 }
 
-function expectation(prior: Gaussian, design: Float64Array) {
+function expectation(prior: Gaussian, design: Float64Array, methodVariance = 0) {
   const mean = predictedMean(prior, design)
-  const deviation = predictedDeviation(prior, design)
+  const deviation = Math.hypot(predictedDeviation(prior, design), Math.sqrt(methodVariance))
   return {
     range: [mean - expectedWithin * deviation, mean + expectedWithin * deviation] as const,
     far: (value: number) => Math.abs(value - mean) > implausibleBeyond * deviation,

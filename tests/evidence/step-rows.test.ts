@@ -38,6 +38,12 @@ describe('a step row', () => {
     expect(part.rectifier.recovery).toEqual(calibrated(stepRow({ recoveryTime: 60e-9 })).rectifier.recovery)
   })
 
+  it('far from its class by no more than the fixture itself may err is not called implausible', () => {
+    // 4 times the class's lifetime: 1.4 against sqrt(0.45² + 0.6²) and more
+    expect(calibrated(stepRow({ recoveryTime: 60e-9 })).codes).not.toContain('implausible-for-class')
+    expect(calibrated(stepRow({ recoveryTime: 600e-9 })).codes).toContain('implausible-for-class')
+  })
+
   it('from which nothing can be read is told and leaves the class as it is', () => {
     const part = calibrated(stepRow({ recoveryTime: 28e-9, until: 2 }))
     expect(part.codes).toContain('row-impossible')
