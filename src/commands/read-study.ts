@@ -3,7 +3,7 @@ import type { RectifierRecord } from '../domain/rectifier.ts'
 import type { Stage } from '../domain/stage.ts'
 import type { StudySettings } from '../domain/study.ts'
 import { checkReferences } from '../input/check-references.ts'
-import { readStage } from '../input/read-stage.ts'
+import { readStage, type StageDocument } from '../input/read-stage.ts'
 import { didYouMean } from '../problems/nearest.ts'
 import type { Problem } from '../problems/problem.ts'
 import type { OutputOptions } from './delivery.ts'
@@ -54,7 +54,7 @@ export async function readStageAndRecords(
   session: Session,
 ): Promise<{ readonly stage: Stage | null; readonly records: readonly RectifierRecord[] }> {
   const { records: further = [], only = [] } = options
-  const document = readAt(desk, stagePath, readStage)
+  const document = await readStageFile(desk, stagePath)
   const named = (document?.records ?? []).map((path) => seenFrom(stagePath, path))
   const files = [
     ...named.flatMap((path) => collecting(desk, () => recordFiles(path, `named by ${stagePath}`)) ?? []),
@@ -64,8 +64,19 @@ export async function readStageAndRecords(
   // A file that could not be read hides its ids: calling them unknown would only add noise.
   const complete = desk.problems.length === 0
   desk.problems.push(...checkReferences(complete ? document : null, records))
-  if (complete) desk.problems.push(...unknownOnly(only, records))
+  if (complete) desk.problems.push(...unknownIds('--only', only, records))
   return { stage: document?.stage ?? null, records }
+}
+
+/** A stage with its duty profile, which may stand in a table of its own. */
+async function readStageFile(desk: Desk, stagePath: string): Promise<StageDocument | null> {
+  const document = readAt(desk, stagePath, readStage)
+  if (document === null || document.dutyProfileFile === null) return document
+  const { readProfile } = await import('../input/read-profile.ts')
+  const { stage } = document
+  const read = (text: string, path: string) => readProfile(text, path, stage)
+  const dutyProfile = readAt(desk, seenFrom(stagePath, document.dutyProfileFile), read)
+  return { ...document, stage: { ...stage, dutyProfile } }
 }
 
 /** A path in a file is seen from that file. */
@@ -73,11 +84,16 @@ function seenFrom(file: string, path: string): string {
   return isAbsolute(path) ? path : join(dirname(file), path)
 }
 
-function unknownOnly(only: readonly string[], records: readonly RectifierRecord[]): readonly Problem[] {
-  const ids = records.map(({ id }) => id)
-  return only
-    .filter((id) => !ids.includes(id))
-    .map((id) => ({ ...onCommandLine('--only'), code: 'id-unknown', found: id, hint: didYouMean(id, ids) }))
+/** Ids on the command line that no record bears, each with the nearest that one does. */
+export function unknownIds(
+  option: string,
+  ids: readonly string[],
+  records: readonly RectifierRecord[],
+): readonly Problem[] {
+  const known = records.map(({ id }) => id)
+  return ids
+    .filter((id) => !known.includes(id))
+    .map((id) => ({ ...onCommandLine(option), code: 'id-unknown', found: id, hint: didYouMean(id, known) }))
 }
 
 /** Paths as reached from the stage file, with slashes, so that the same inputs give the same bytes from any folder. */

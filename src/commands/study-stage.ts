@@ -1,5 +1,7 @@
+import type { SentenceData } from '../domain/result.ts'
 import { type RefusalCode, StudyRefusal } from '../domain/study-refusal.ts'
 import type { ProblemCode } from '../problems/problem.ts'
+import { quantity } from '../report/format.ts'
 import { failure } from './failure.ts'
 import { breathe, type Session } from './session.ts'
 
@@ -26,16 +28,20 @@ const problemOfRefusal: Readonly<Record<RefusalCode, ProblemCode>> = {
   'range-outside': 'range-outside',
 }
 
-/** A refusal's data may carry found, expected and hint; anything else it carries is told as "name value". */
+/** What to do next, where the refusal itself does not say. */
+const nextStep: Readonly<Partial<Record<RefusalCode, string>>> = {
+  'cannot-deliver': 'check the output, the resistances and the input',
+  'no-candidate': 'name records in the stage file or with --records',
+}
+
 function refusalFailure(stagePath: string, { code, data }: StudyRefusal) {
-  const { found, expected, hint, path, ...rest } = data
-  const others = Object.entries(rest).map(([name, value]) => `${name} ${value}`)
-  return failure({
-    code: problemOfRefusal[code],
-    file: stagePath,
-    path: String(path ?? ''),
-    found: String(found ?? others.join(', ')),
-    expected: String(expected ?? ''),
-    hint: String(hint ?? ''),
-  })
+  const { path = '', found = powerOf(data), expected = '', hint = nextStep[code] ?? '' } = data
+  const texts = { path: String(path), found: String(found), expected: String(expected), hint: String(hint) }
+  return failure({ code: problemOfRefusal[code], file: stagePath, ...texts })
+}
+
+/** "60 kW from 48 V", where the study tells these figures. */
+function powerOf({ power, voltage }: SentenceData): string {
+  if (typeof power !== 'number' || typeof voltage !== 'number') return ''
+  return `${quantity(power, 'W')} from ${quantity(voltage, 'V')}`
 }

@@ -3,8 +3,8 @@ import { swap } from '../study/swap.ts'
 import { deliverResult } from './deliver.ts'
 import { chooseDelivery, resultForms } from './delivery.ts'
 import { exitCodeOf } from './exit-code.ts'
-import { failure } from './failure.ts'
-import { readStudy, type StudyOptions } from './read-study.ts'
+import { CommandFailure, failure } from './failure.ts'
+import { readStudy, type StudyOptions, unknownIds } from './read-study.ts'
 import { checkTarget } from './replace-file.ts'
 import type { Session } from './session.ts'
 import { studyStage } from './study-stage.ts'
@@ -28,6 +28,8 @@ export async function runSwap(stagePath: string, options: SwapOptions, session: 
       expected: 'the id of the part in use',
     })
   }
+  const unknown = [...unknownIds('--from', [from], records), ...unknownIds('--to', [options.to], records)]
+  if (unknown.length > 0) throw new CommandFailure(unknown)
   const result = words(
     await studyStage(stagePath, session, () => swap(stage, records, { from, to: options.to }, settings)),
   )
