@@ -9,7 +9,7 @@ import { eventCharge, lumpedFigures } from './lumped.ts'
 import type { World } from './worlds.ts'
 
 /** 5th and 95th percentile of what one event costs at the world's condition, for one unit. */
-export function eventInterval(world: World, draws: number): { readonly low: number; readonly high: number } {
+function eventInterval(world: World, draws: number): { readonly low: number; readonly high: number } {
   const { rectifier } = calibrate({ record: world.record, blockingVoltage: world.blockingVoltage })
   const { posterior, unitSpread } = rectifier.recovery!
   const [u, y] = recoveryDesigns({ ...world.condition, ratedCurrent: rectifier.ratedCurrent })

@@ -14,7 +14,7 @@ export interface Figures {
 }
 
 /** k of the line through 0.9 and 0.25 I_RM: ln 4 + 0.25 ln 3.6/0.65 (PHYSICS section 1 prints 1.87896). */
-export const lineFactor = Math.log(4) + (0.25 * Math.log(3.6)) / 0.65
+const lineFactor = Math.log(4) + (0.25 * Math.log(3.6)) / 0.65
 
 /** The lumped-charge event from the steady state at u = ln tau and y = ln(tau/tau_rr − 1). */
 export function lumpedFigures({ current, slope }: Condition, u: number, y: number): Figures {
