@@ -32,6 +32,13 @@ records: [parts]
 incumbent: plain
 `
 
+/** The small stage with some text put before its records. */
+export function smallStageWith(lines: string): string {
+  const folder = smallStage()
+  writeFileSync(join(folder, 'stage.yaml'), stage.replace('records:', `${lines}\nrecords:`))
+  return folder
+}
+
 /** A folder with stage.yaml and three records: one good, one that is all class guess, one whose rating is too small. */
 export function smallStage(): string {
   const folder = scratchFolder()
