@@ -92,7 +92,10 @@ export function forwardDropUsable(input: ForwardRangeInput): boolean {
   if (low >= high) return dropAt(input, low) > 0
   const logarithmic = input.line ? 0 : input.logarithmic
   // dV_F/d ln i at both ends
-  return logarithmic + input.linear * low >= 0 && logarithmic + input.linear * high >= 0 && dropAt(input, low) > 0
+  if (!(logarithmic + input.linear * low >= 0 && logarithmic + input.linear * high >= 0)) return false
+  // ln x ≥ 1 − 1/x spares the logarithm in nearly every case
+  if (logarithmic >= 0 && input.constant + logarithmic * (1 - 1 / low) + input.linear * low > 0) return true
+  return dropAt(input, low) > 0
 }
 
 /**

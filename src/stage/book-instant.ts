@@ -47,68 +47,67 @@ export function statedSlopeAt(kernel: Kernel, current: number): number {
   return slope
 }
 
-/** Adds the losses of one switching period, weighted, to the kernel's rows: each watt enters exactly one row. */
+/**
+ * Adds the losses of one switching period, weighted, to the kernel's rows: each watt enters exactly one row.
+ *
+ * Here and in recover.ts functions hand numbers on in fields of the kernel: a double that is passed to or returned from
+ * a function which the compiler does not inline is allocated, some twenty times a period (tests/bench/points.ts).
+ */
 export function bookInstant(kernel: Kernel, weight: number): void {
-  const slope = slopeAt(kernel, Math.max(kernel.instant.valley, 0))
-  const hot = bookPart(kernel, kernel.hot, kernel.hotEvent, kernel.hotShare, slope, 1, weight)
-  kernel.rows[row.hotPart]! += hot * weight
-  if (kernel.parts > 1) {
-    const others = kernel.parts - 1
-    const other = bookPart(kernel, kernel.other, kernel.otherEvent, kernel.otherShare, slope, others, weight)
-    kernel.rows[row.otherPart]! += other * weight
-  }
-  bookSwitch(kernel, slope, weight)
+  kernel.weight = weight
+  kernel.turnOnSlope = slopeAt(kernel, Math.max(kernel.instant.valley, 0))
+  bookPart(kernel, kernel.hot, kernel.hotEvent, row.hotPart)
+  if (kernel.parts > 1) bookPart(kernel, kernel.other, kernel.otherEvent, row.otherPart)
+  bookSwitch(kernel)
 }
 
-/** Books `count` equal parts and returns the heat in one of them. [W] */
-function bookPart(
-  kernel: Kernel,
-  state: PartState,
-  event: RecoveryEvent,
-  share: number,
-  slope: number,
-  count: number,
-  weight: number,
-): number {
-  const { rows, frequency, part, instant, turnOn } = kernel
-  recover(kernel, state, share, slope, event)
-  const conducted = conductionPower(kernel, state, share)
-  const leaked = leakagePower(kernel, state)
-  const forward = forwardRecoveryPower(kernel, state, share, slope)
+/** Books equal parts, and the heat in one of them in its own row. */
+function bookPart(kernel: Kernel, state: PartState, event: RecoveryEvent, heatRow: number): void {
+  const { rows, frequency, part, instant, turnOn, weight } = kernel
+  recover(kernel, state, event)
+  placeConduction(kernel, state)
+  const conducted = state.conducted
+  const leaked = part.leaks ? leakagePower(kernel, state) : 0
+  const forward = part.forwardRecoveryTime > 0 ? forwardRecoveryPower(kernel, state) : 0
   const inRectifier = event.rectifierEnergy * frequency
   const cost =
     part.capacitiveCharge > 0
       ? part.chargingCost * Math.max(0, 1 - event.charge / part.capacitiveCharge) * frequency
       : 0
-  const scale = weight * count
+  const scale = weight * state.count
   rows[row.conduction]! += conducted * scale
   rows[row.leakage]! += leaked * scale
   rows[row.forwardRecovery]! += forward * scale
   rows[row.recoveryRectifier]! += inRectifier * scale
   rows[row.recoverySwitch]! += event.switchAddedEnergy * turnOn.addedShare * frequency * scale
   rows[row.capacitive]! += cost * turnOn.addedShare * scale
-  rows[row.meanRectifierCurrent]! += ((instant.valley + instant.peak) / 2) * instant.conductionShare * share * scale
-  return conducted + leaked + forward + inRectifier
+  rows[row.meanRectifierCurrent]! +=
+    0.5 * (instant.valley + instant.peak) * instant.conductionShare * state.share * scale
+  rows[heatRow]! += (conducted + leaked + forward + inRectifier) * weight
 }
 
-function conductionPower(kernel: Kernel, state: PartState, share: number): number {
+function placeConduction(kernel: Kernel, state: PartState): void {
   const { instant, part } = kernel
-  if (part.synchronous) return synchronousConduction(kernel, state, share)
+  if (part.synchronous) {
+    state.conducted = synchronousConduction(kernel, state)
+    return
+  }
   conduction.constant = state.constant
   conduction.logarithmic = state.logarithmic
   conduction.linear = state.linear
   conduction.ratedCurrent = part.ratedCurrent
   conduction.line = part.line
-  conduction.valley = instant.valley * share
-  conduction.peak = instant.peak * share
+  conduction.valley = instant.valley * state.share
+  conduction.peak = instant.peak * state.share
   state.chord = !forwardDropUsable(conduction)
   const power = state.chord ? chordConductionPower(conduction) : trapezoidConductionPower(conduction)
-  return power * instant.conductionShare
+  state.conducted = power * instant.conductionShare
 }
 
 /** Body diode in the two dead times, channel in between. */
-function synchronousConduction(kernel: Kernel, state: PartState, share: number): number {
+function synchronousConduction(kernel: Kernel, state: PartState): number {
   const { instant, part, frequency } = kernel
+  const { share } = state
   const valley = instant.valley * share
   const peak = instant.peak * share
   const before = valley > 0 ? dropAt(kernel, state, valley) * valley * frequency * part.deadBefore : 0
@@ -129,7 +128,6 @@ function dropAt(kernel: Kernel, state: PartState, current: number): number {
 }
 
 function leakagePower(kernel: Kernel, state: PartState): number {
-  if (!kernel.part.leaks) return 0
   const instant = kernel.instant
   const blocking = instant.blockingVoltage * state.leakage * instant.duty
   if (!instant.discontinuous) return blocking
@@ -138,24 +136,23 @@ function leakagePower(kernel: Kernel, state: PartState): number {
 }
 
 /** (V_FP − V_F) I_peak t_fr/2 per period; V_FP scales with the square root of the slope. */
-function forwardRecoveryPower(kernel: Kernel, state: PartState, share: number, slope: number): number {
+function forwardRecoveryPower(kernel: Kernel, state: PartState): number {
   const part = kernel.part
-  if (part.forwardRecoveryTime === 0) return 0
-  const peak = kernel.instant.peak * share
+  const peak = kernel.instant.peak * state.share
   const fall = kernel.turnOff.currentFall
-  const turnOffSlope = fall > 0 ? peak / fall : slope * share
+  const turnOffSlope = fall > 0 ? peak / fall : kernel.turnOnSlope * state.share
   const overshoot =
     part.forwardRecoveryPeak * Math.sqrt(turnOffSlope / part.forwardRecoverySlope) - dropAt(kernel, state, peak)
   return (Math.max(overshoot, 0) * peak * part.forwardRecoveryTime * kernel.frequency) / 2
 }
 
-function bookSwitch(kernel: Kernel, slope: number, weight: number): void {
-  const { rows, instant, frequency } = kernel
+function bookSwitch(kernel: Kernel): void {
+  const { rows, instant, frequency, weight } = kernel
   const { valley, peak, duty, conductionShare } = instant
   const meanSquare = (valley * valley + valley * peak + peak * peak) / 3
   rows[row.switchConduction]! += meanSquare * duty * kernel.onResistance * weight
   rows[row.inductor]! += meanSquare * (duty + conductionShare) * kernel.inductorResistance * weight
-  rows[row.turnOnBase]! += turnOnBase(kernel, slope) * frequency * weight
+  rows[row.turnOnBase]! += turnOnBase(kernel, kernel.turnOnSlope) * frequency * weight
   rows[row.turnOff]! += turnOffEnergy(kernel) * frequency * weight
 }
 

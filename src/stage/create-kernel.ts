@@ -29,6 +29,7 @@ export function blockingVoltageOf(stage: Stage, inputVoltage = stage.input.volta
 export function createKernel({ stage, record, rectifier }: KernelSetup): Kernel {
   const { parts, imbalance } = stage.parallel
   const hotShare = (1 + (parts > 1 ? imbalance : 0)) / parts
+  const otherShare = parts > 1 ? (1 - hotShare) / (parts - 1) : 0
   const slope = stage.switch.slope
   const kernel: Kernel = {
     kind: stage.kind,
@@ -52,12 +53,12 @@ export function createKernel({ stage, record, rectifier }: KernelSetup): Kernel 
     turnOn: { current: 0, voltage: 0, energy: 0, addedShare: 1 },
     parts,
     hotShare,
-    otherShare: parts > 1 ? (1 - hotShare) / (parts - 1) : 0,
+    otherShare,
     thermal: thermalNetwork(stage, record),
     part: partConstants(record, rectifier),
     coefficients: nominalCoefficients(rectifier),
-    hot: emptyState(),
-    other: emptyState(),
+    hot: emptyState(hotShare, 1),
+    other: emptyState(otherShare, parts - 1),
     instant: {
       inputVoltage: 0.5,
       blockingVoltage: 0.5,
@@ -71,6 +72,8 @@ export function createKernel({ stage, record, rectifier }: KernelSetup): Kernel 
       discontinuous: false,
       idleVoltage: 0.5,
     },
+    turnOnSlope: 0.5,
+    weight: 0.5,
     startCurrent: 0.5,
     blockingLog: 0.5,
     hotEvent: emptyEvent(),
@@ -134,8 +137,10 @@ function partConstants(record: RectifierRecord, rectifier: CalibratedRectifier):
   }
 }
 
-function emptyState(): PartState {
+function emptyState(share: number, count: number): PartState {
   return {
+    share,
+    count,
     slope: 0.5,
     slopeLog: Math.log(0.5 / referenceSlope),
     lifetimeLog: 0.5,
@@ -146,6 +151,7 @@ function emptyState(): PartState {
     leakageLog: -0.5,
     leakage: 0,
     channelResistance: 0.5,
+    conducted: 0.5,
     chord: false,
   }
 }

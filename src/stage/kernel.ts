@@ -40,6 +40,9 @@ export interface Kernel {
   other: PartState
   // Results of the last evaluation.
   instant: Instant
+  /** Total turn-on di/dt of this period, and the period's weight in the line cycle. [A/s], [1] */
+  turnOnSlope: number
+  weight: number
   /** Where the next search for the mean inductor current starts; 0: at the loss-free current. [A] */
   startCurrent: number
   /** ln(blocking voltage/rated voltage). */
@@ -112,6 +115,9 @@ export interface PartConstants {
 
 /** Properties of a part at one junction temperature. */
 export interface PartState {
+  /** Share of current and slope that one of these parts carries, and how many there are. */
+  readonly share: number
+  readonly count: number
   /** Slope that `slopeLog` = ln(slope/a0) was taken at: the logarithm is the same in most evaluations. [A/s] */
   slope: number
   slopeLog: number
@@ -125,6 +131,8 @@ export interface PartState {
   /** At the blocking voltage. [A] */
   leakage: number
   channelResistance: number
+  /** Conduction power of one part in this period. [W] */
+  conducted: number
   /** V_F left its usable range and the chord stands in for it. */
   chord: boolean
 }

@@ -19,10 +19,10 @@ const recovered = { peakReverseCurrent: 0, timeToPeak: 0, tailTime: 0 }
  * The recovery of one part at one turn-on, written into `event`: lumped-charge model from the charge that the real
  * conduction interval built up, soft residue in discontinuous conduction, exactly nothing without stored charge.
  */
-export function recover(kernel: Kernel, state: PartState, share: number, slope: number, event: RecoveryEvent): void {
+export function recover(kernel: Kernel, state: PartState, event: RecoveryEvent): void {
   const instant = kernel.instant
-  event.slope = slope * share
-  event.current = Math.max(instant.valley, 0) * share
+  event.slope = kernel.turnOnSlope * state.share
+  event.current = Math.max(instant.valley, 0) * state.share
   if (!kernel.part.storesCharge) {
     clear(event, 'no-stored-charge')
     return
@@ -35,8 +35,13 @@ export function recover(kernel: Kernel, state: PartState, share: number, slope: 
   tail.voltageFall = kernel.voltageFall
   tail.tailTime = event.tailTime
   event.tailShare = tailShare(tail)
-  if (instant.discontinuous) recoverResidue(kernel, share, event)
-  else recoverHard(kernel, share, event)
+  if (instant.discontinuous) recoverResidue(kernel, state, event)
+  else {
+    placeStoredCharge(kernel, state, event)
+    placeRamp(event)
+    placeEnergies(kernel, event)
+    event.outcome = 'hard'
+  }
 }
 
 function placeLifetimes(kernel: Kernel, state: PartState, event: RecoveryEvent): void {
@@ -51,14 +56,17 @@ function placeLifetimes(kernel: Kernel, state: PartState, event: RecoveryEvent):
   event.tailTime = event.lifetime / (1 + Math.exp(state.ratioLog + c[5]! * logCurrent + c[6]! * logSlope))
 }
 
-function recoverHard(kernel: Kernel, share: number, event: RecoveryEvent): void {
+function placeStoredCharge(kernel: Kernel, state: PartState, event: RecoveryEvent): void {
   const instant = kernel.instant
   const synchronous = kernel.part.synchronous
   turnOff.current = event.current
-  turnOff.peakCurrent = synchronous ? event.current : instant.peak * share
+  turnOff.peakCurrent = synchronous ? event.current : instant.peak * state.share
   turnOff.conductionTime = synchronous ? kernel.part.deadBefore : instant.conductionShare / kernel.frequency
   turnOff.lifetime = event.lifetime
   event.storedCharge = chargeAtTurnOff(turnOff)
+}
+
+function placeRamp(event: RecoveryEvent): void {
   ramp.current = event.current
   ramp.slope = event.slope
   ramp.lifetime = event.lifetime
@@ -66,11 +74,14 @@ function recoverHard(kernel: Kernel, share: number, event: RecoveryEvent): void 
   ramp.storedCharge = event.storedCharge
   event.timeToPeak = timeToPeak(ramp)
   event.peakReverseCurrent = event.slope * event.timeToPeak
+}
+
+function placeEnergies(kernel: Kernel, event: RecoveryEvent): void {
   recovered.peakReverseCurrent = event.peakReverseCurrent
   recovered.timeToPeak = event.timeToPeak
   recovered.tailTime = event.tailTime
   event.charge = recoveredCharge(recovered)
-  energy.voltage = instant.blockingVoltage
+  energy.voltage = kernel.instant.blockingVoltage
   energy.current = event.current
   energy.timeToPeak = event.timeToPeak
   energy.peakReverseCurrent = event.peakReverseCurrent
@@ -78,13 +89,12 @@ function recoverHard(kernel: Kernel, share: number, event: RecoveryEvent): void 
   energy.tailShare = event.tailShare
   event.rectifierEnergy = rectifierEnergy(energy)
   event.switchAddedEnergy = switchAddedEnergy(energy)
-  event.outcome = 'hard'
 }
 
-function recoverResidue(kernel: Kernel, share: number, event: RecoveryEvent): void {
+function recoverResidue(kernel: Kernel, state: PartState, event: RecoveryEvent): void {
   const instant = kernel.instant
   const conductionTime = instant.conductionShare / kernel.frequency
-  const peak = instant.peak * share
+  const peak = instant.peak * state.share
   turnOff.current = 0
   turnOff.peakCurrent = peak
   turnOff.conductionTime = conductionTime

@@ -27,8 +27,9 @@ export interface PointEvent {
 export function pointEvent(kernel: Kernel): PointEvent {
   if (kernel.kind === 'mains-boost') placeEventAngle(kernel)
   const slope = slopeAt(kernel, Math.max(kernel.instant.valley, 0))
-  recover(kernel, kernel.hot, kernel.hotShare, slope, kernel.hotEvent)
-  if (kernel.parts > 1) recover(kernel, kernel.other, kernel.otherShare, slope, kernel.otherEvent)
+  kernel.turnOnSlope = slope
+  recover(kernel, kernel.hot, kernel.hotEvent)
+  if (kernel.parts > 1) recover(kernel, kernel.other, kernel.otherEvent)
   return {
     instant: { ...kernel.instant },
     hot: { ...kernel.hotEvent },
