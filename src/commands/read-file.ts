@@ -5,20 +5,14 @@ import { CommandFailure, failure } from './failure.ts'
 
 const largestFile = 64 * 1024 * 1024
 
-/** A file as it was at the moment of reading. */
-export interface FileBytes {
-  readonly path: string
-  readonly bytes: Buffer
-}
-
 /** Reads a regular file of at most 64 MB. Never waits: pipes and devices are refused before a byte is read. */
-export function readBytes(path: string): FileBytes {
+function readBytes(path: string): Buffer {
   try {
     // Non-blocking, or opening a named pipe that nobody writes to would wait for ever.
     const handle = openSync(path, constants.O_RDONLY | constants.O_NONBLOCK)
     try {
       refuseUnsuitable(path, handle)
-      return { path, bytes: readFileSync(handle) }
+      return readFileSync(handle)
     } finally {
       closeSync(handle)
     }
@@ -41,7 +35,7 @@ function refuseUnsuitable(path: string, handle: number): void {
 
 /** The text of a file; UTF-8 is required, a byte order mark is dropped. */
 export function readText(path: string): { readonly text: string; readonly sha256: string } {
-  const { bytes } = readBytes(path)
+  const bytes = readBytes(path)
   if (!isUtf8(bytes)) {
     const [line, column] = placeOfBrokenByte(bytes)
     throw failure({
@@ -58,7 +52,7 @@ export function readText(path: string): { readonly text: string; readonly sha256
 }
 
 /** Fingerprint of a file's bytes, in hexadecimal. */
-export function sha256(bytes: Buffer): string {
+function sha256(bytes: Buffer): string {
   return createHash('sha256').update(bytes).digest('hex')
 }
 
