@@ -19,7 +19,8 @@ export function clippedPeak(
   noise: number,
 ): FoundClipping | null {
   const sign = event.inverted ? -1 : 1
-  const lowest = sign * event.lowest
+  let lowest = current[event.crossing]!
+  for (let k = event.crossing; k < event.quarter; k++) if (sign * current[k]! < sign * lowest) lowest = current[k]!
   let run = 0
   let longest = 0
   for (let k = event.crossing; k < Math.min(event.last, event.quarter + 1); k++) {
@@ -34,14 +35,17 @@ export function clippedPeak(
 
 /** Samples in a row that noise would have moved. */
 const longRun = 12
+/** Of the swing: with less noise than this an unclipped plateau is flat, too. */
+const leastNoise = 1e-4
 
 /**
  * A run of samples at the record's extreme, without any noise, in a channel that is noisy elsewhere: noise would have
  * left the level on both sides. `side` is 1 for the highest reading, -1 for the lowest.
  */
 export function clippedPlateau(values: Float64Array, side: 1 | -1, noise: number, step: number): FoundClipping | null {
-  if (!(noise > 0.4 * step) || !(noise > 0)) return null
+  if (!(noise > 0.4 * step)) return null
   let extreme = Number.NEGATIVE_INFINITY
+  let other = Number.POSITIVE_INFINITY
   let run = 0
   let longest = 0
   for (let k = 0; k < values.length; k++) {
@@ -51,10 +55,11 @@ export function clippedPlateau(values: Float64Array, side: 1 | -1, noise: number
       run = 0
       longest = 0
     }
+    if (value < other) other = value
     run = value === extreme ? run + 1 : 0
     if (run > longest) longest = run
   }
-  return longest >= longRun ? { at: side * extreme, samples: longest } : null
+  return longest >= longRun && noise > leastNoise * (extreme - other) ? { at: side * extreme, samples: longest } : null
 }
 
 /** Step of the converter: the smallest difference between neighbouring samples that are not equal. */
@@ -72,10 +77,10 @@ export function channelQuantum(values: Float64Array): number {
   return quantum(values, 1, Math.min(values.length, 20_000))
 }
 
-/** Standard deviation of one raw sample from the differences of neighbours over a stretch that is quiet otherwise. */
+/** Standard deviation of one raw sample from second differences of neighbours, which no slope of the signal reaches. */
 export function sampleNoise(values: Float64Array, from: number, to: number): number {
   let sum = 0
-  const count = to - from - 1
-  for (let k = from + 1; k < to; k++) sum += (values[k]! - values[k - 1]!) ** 2
-  return count > 0 ? Math.sqrt(sum / count / 2) : 0
+  const count = to - from - 2
+  for (let k = from + 1; k + 1 < to; k++) sum += (values[k + 1]! - 2 * values[k]! + values[k - 1]!) ** 2
+  return count > 0 ? Math.sqrt(sum / count / 6) : 0
 }

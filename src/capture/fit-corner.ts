@@ -3,6 +3,9 @@ import { fitLeastSquares } from './fit-least-squares.ts'
 import { type FittedLine, lineAt } from './fit-line.ts'
 import { type RecoveryCurve, reverseCurrentAt } from './recovery-curve.ts'
 
+/** One standard deviation of ln tail time before the fit: only a fit lost in noise feels it. */
+const tailDoubt = 1.5
+
 /** What is known before the tail is fitted. */
 export interface CornerGuess {
   /** [s] */
@@ -47,7 +50,7 @@ export function fitCorner(
   for (let pass = 0; pass < 2; pass++) {
     best = fitLeastSquares({
       residuals: (p, out) => writeResiduals(window, line, from, to, guess, noise, p, out),
-      count: to - from + 2,
+      count: to - from + 3,
       start: best,
       steps: Float64Array.of(1e-3 * scale, 1e-3, 1e-3, 1e-3 * guess.baseDoubt + 1e-9),
       iterations: 40,
@@ -85,7 +88,8 @@ function writeResiduals(
     out[k - from] = (window.current[k]! - base + reverseCurrentAt(curve, window.time[k]!)) / noise
   }
   out[to - from] = (p[2]! - Math.log(guess.rounding)) / guess.roundingDoubt
-  out[to - from + 1] = (base - 0) / guess.baseDoubt
+  out[to - from + 1] = base / guess.baseDoubt
+  out[to - from + 2] = (p[1]! - Math.log(guess.tailTime)) / tailDoubt
 }
 
 function leftOver(window: EventWindow, line: FittedLine, from: number, to: number, p: Float64Array): number {

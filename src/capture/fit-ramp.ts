@@ -14,7 +14,7 @@ export interface FittedRamp {
   readonly plateau: FittedLine
   readonly line: FittedLine
   readonly fitted: FittedCorner
-  /** The curve with the stated bandwidth taken out; as fitted where none is stated. */
+  /** The curve with the stated bandwidth taken out; half of the rounding where none is stated. */
   readonly curve: RecoveryCurve
   /** Forward current at the start of the ramp. [A] */
   readonly current: number
@@ -79,35 +79,43 @@ function oneRound(
     (plateau.value - plateau.rise * plateau.at - line.value + line.rise * line.at) / (line.rise - plateau.rise)
   const current = lineAt(plateau, onset) - levels.base
   const guess = cornerGuess(window, marks, conditions, line, levels, previous, plateau.residual)
-  const from = Math.max(0, firstAfter(window, lineReaches(line, levels.base - 0.5 * levels.reverse)))
-  const fitted = fitCorner(window, line, from, tailEnd(window, guess.corner, guess.tailTime), guess)
+  const early = firstAfter(window, lineReaches(line, levels.base - 0.5 * levels.reverse))
+  const from = Math.min(early, window.time.length - fewestSamples)
+  const fitted = fitCorner(window, line, from, tailEnd(window, from, guess.corner, guess.tailTime), guess)
   const curve = withoutInstrument(fitted.curve, conditions.instrument)
   const delay = fitted.curve.rounding - curve.rounding
   return { plateau, line, fitted, curve, current, crossing: lineReaches(line, fitted.base) - delay, onset }
 }
 
-/** A stated bandwidth explains that much of the rounding; what is left is the rectifier's own. */
+/**
+ * A stated bandwidth explains that much of the rounding; what is left is the rectifier's own. Where none is stated, half of
+ * it is taken as the instrument's: either extreme would be wrong by as much, and the doubt reaches both.
+ */
 export function withoutInstrument(curve: RecoveryCurve, instrument: number | null): RecoveryCurve {
-  if (instrument === null) return curve
+  if (instrument === null) return { ...curve, rounding: 0.5 * curve.rounding }
   const rounding = curve.rounding < 1.5 * instrument ? 0 : curve.rounding - instrument
-  return { ...curve, rounding, amplitude: curve.amplitude }
+  return { ...curve, rounding }
 }
 
-/** `settled`: before this time the instrument still bends the start of the ramp. */
+/**
+ * Line through the samples from 0.5 I_F to −0.5 I_RM. A first line finds them by their values, which cuts noise off on
+ * one side at each end and tilts it; the second takes all samples between the times at which the first has those levels.
+ * `settled`: before this time the instrument still bends the start of the ramp.
+ */
 function rampLine(window: EventWindow, marks: WindowMarks, levels: Levels, settled: number): FittedLine {
-  const { current } = window
-  const limit = settled < window.time[Math.max(0, marks.crossing - 4)]! ? settled : Number.NEGATIVE_INFINITY
-  let share = 0.5
-  for (;;) {
+  const { time, current } = window
+  const limit = settled < time[Math.max(0, marks.crossing - 4)]! ? settled : Number.NEGATIVE_INFINITY
+  for (let share = 0.5; ; share += 0.1) {
     let from = marks.crossing
-    while (from > 0 && current[from - 1]! < levels.base + share * levels.forward && window.time[from - 1]! > limit)
-      from -= 1
+    while (from > 0 && current[from - 1]! < levels.base + share * levels.forward && time[from - 1]! > limit) from -= 1
     let to = marks.crossing
     while (to < marks.peak && current[to]! > levels.base - share * levels.reverse) to += 1
     // a ramp of a handful of samples: take in more of it
-    if (to - from >= 4 || share >= 0.9)
-      return fitLine(window.time, current, Math.min(from, to - 2), Math.max(to, from + 2))
-    share += 0.1
+    if (to - from < 4 && share < 0.9) continue
+    const first = fitLine(time, current, Math.min(from, to - 2), Math.max(to, from + 2))
+    const begin = firstAfter(window, Math.max(limit, lineReaches(first, levels.base + share * levels.forward)))
+    const end = firstAfter(window, lineReaches(first, levels.base - share * levels.reverse))
+    return first.rise < 0 && end - begin >= 4 ? fitLine(time, current, begin, end) : first
   }
 }
 
@@ -120,9 +128,11 @@ function plateauLine(window: EventWindow, marks: WindowMarks, line: FittedLine, 
   let from = Math.max(0, firstAfter(window, window.time[to]! - 8 * rampTime))
   // the rise into a plateau that has only just begun is not plateau
   if (from === 0) from = Math.min(Math.floor(0.1 * to), to - 2)
-  return to - from > 40
-    ? fitLine(window.time, window.current, from, to)
-    : fitLevel(window.time, window.current, Math.max(0, from), to)
+  const sloping = fitLine(window.time, window.current, Math.max(0, from), to)
+  // the droop of the inductor counts where it shows; the tilt that noise alone gives would only be extended
+  const tilt = Math.abs(sloping.rise) * (window.time[to - 1]! - window.time[Math.max(0, from)]!)
+  const byNoise = sloping.residual * Math.sqrt(12 / Math.max(1, to - from))
+  return tilt > 3 * byNoise ? sloping : fitLevel(window.time, window.current, Math.max(0, from), to)
 }
 
 function cornerGuess(
@@ -148,12 +158,12 @@ function cornerGuess(
   }
 }
 
+/** Samples that corner and tail need to be fitted at all. */
+const fewestSamples = 8
+
 /** The tail is followed over twelve of its times. */
-function tailEnd(window: EventWindow, corner: number, tailTime: number): number {
-  return Math.max(
-    firstAfter(window, corner) + 4,
-    Math.min(window.time.length, firstAfter(window, corner + 12 * tailTime)),
-  )
+function tailEnd(window: EventWindow, from: number, corner: number, tailTime: number): number {
+  return Math.max(from + fewestSamples, firstAfter(window, corner + 12 * tailTime))
 }
 
 /** First sample after a time; the number of samples when there is none. */

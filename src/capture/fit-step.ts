@@ -24,8 +24,8 @@ export interface FittedStep {
   readonly edgeEnd: number
 }
 
-/** A plateau lasts at least this share of the edge before it; a shorter one is the edge's own rounding. */
-const leastPlateau = 0.7
+/** A plateau lasts at least these shares of the edge before it and of the tail after it; a shorter one is rounding. */
+const leastPlateau = { edges: 0.7, tails: 0.12 }
 
 /** Plateaus, zero crossing, corner and tail; three rounds settle the levels, one from a fit nearby. `resolution` is the shortest time told apart. */
 export function fitStep(
@@ -68,7 +68,8 @@ function oneRound(
   const firstTail = Math.max(window.interval, ((marks.quarter - marks.half) * window.interval) / Math.LN2)
   const tailTime = previous?.fitted.curve.tailTime ?? firstTail
   const corner = previous?.fitted.curve.corner ?? window.time[marks.half]! - Math.LN2 * tailTime
-  const long = corner - edgeEnd > leastPlateau * Math.max(resolution, edgeTime)
+  const long =
+    corner - edgeEnd > Math.max(leastPlateau.edges * Math.max(resolution, edgeTime), leastPlateau.tails * tailTime)
   const plateau = long ? reverseLevel(window, edgeEnd, corner) : null
   const line = plateau ?? edge
   const guess = {

@@ -26,11 +26,34 @@ export interface LocatedEvent {
   readonly lowest: number
 }
 
+/** Width of the running mean for the second look, as share of the reversal: it blurs nothing that is looked for. */
+const blur = 1 / 14
+
 /**
  * Finds the first fall from forward conduction to reverse current by the record's largest swing.
- * Null where nothing falls: a record without an event.
+ * Null where nothing falls: a record without an event. A second look at running means keeps noise from setting the marks.
  */
 export function locateEvent(current: Float64Array): LocatedEvent | null {
+  const raw = locateIn(current)
+  if (raw === null) return null
+  const width = Math.floor(blur * (raw.half - raw.crossing))
+  return width < 2 ? raw : (locateIn(runningMean(current, width)) ?? raw)
+}
+
+function runningMean(values: Float64Array, width: number): Float64Array {
+  const out = new Float64Array(values.length)
+  const back = Math.floor(width / 2)
+  let sum = 0
+  for (let k = 0; k < values.length + back; k++) {
+    if (k < values.length) sum += values[k]!
+    if (k >= width) sum -= values[k - width]!
+    const at = k - back
+    if (at >= 0) out[at] = sum / Math.min(width, k + 1, values.length - k + width - 1)
+  }
+  return out
+}
+
+function locateIn(current: Float64Array): LocatedEvent | null {
   const down = largestFall(current, 1)
   const up = largestFall(current, -1)
   if (!(Math.max(down.size, up.size) > 0)) return null

@@ -2,6 +2,7 @@ import type { CaptureTrace, NothingMeasurable, ReducedCapture } from '../domain/
 import { type CaptureContext, instrumentTime, resolution } from './capture-context.ts'
 import { correctSkew } from './correct-skew.ts'
 import { type EventWindow, eventWindow } from './event-window.ts'
+import { channelQuantum } from './find-clipping.ts'
 import { lineAt } from './fit-line.ts'
 import { type FittedRamp, fitRamp, type WindowMarks } from './fit-ramp.ts'
 import { generalCaveats } from './general-caveats.ts'
@@ -90,14 +91,22 @@ function rampSpread(
     settings.recoveryTimeBy,
     settings.chargeUntil,
   )
+  const share = settings.bandwidth === null ? 1 : 0.5
   const ends = figures.chargeByEnd.map((row) => row.charge)
+  // what one step of the converter leaves open: no averaging of noise takes its unevenness away
+  const step = channelQuantum(context.waveform.current) / Math.sqrt(12)
+  const converter: Readonly<Record<string, number>> = {
+    current: step / figures.current,
+    slope: step / (figures.current + figures.peakReverseCurrent),
+    peakReverseCurrent: step / figures.peakReverseCurrent,
+  }
   const spread: Record<string, number> = {}
   for (const [name, value] of Object.entries(noise)) {
     const key = name as keyof typeof noise
-    const bandwidth = 0.5 * (without[key] / figures[key] - 1)
+    const bandwidth = share * (without[key] / figures[key] - 1)
     const end = key === 'charge' ? 0.5 * (1 - figures.charge / ends.at(-1)!) : timesEnd[key] ? figures.endDoubt : 0
     const settling = key === 'slope' ? unsettled(ramp) : 0
-    spread[name] = Math.hypot(value, bandwidth, end, settling)
+    spread[name] = Math.hypot(value, bandwidth, end, settling, converter[key] ?? 0)
   }
   if (energy !== null) spread.energy = Math.hypot(spread.charge!, 0.01)
   if (energy !== null) spread.voltage = 0.01

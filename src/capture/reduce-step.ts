@@ -1,6 +1,7 @@
 import type { CaptureTrace, NothingMeasurable, ReducedCapture } from '../domain/capture.ts'
 import { type CaptureContext, instrumentTime, resolution } from './capture-context.ts'
 import { type EventWindow, eventWindow } from './event-window.ts'
+import { channelQuantum } from './find-clipping.ts'
 import { type FittedStep, fitStep } from './fit-step.ts'
 import { generalCaveats } from './general-caveats.ts'
 import { reverseCurrentAt } from './recovery-curve.ts'
@@ -39,7 +40,10 @@ export function reduceStep(context: CaptureContext): ReducedCapture {
 /** Widths of the reverse lobe, in shortest times told apart, that a charge needs to be one: with and without plateau. */
 const needed = { plateau: 2, none: 6 }
 
-/** The fixture's own edge and the part's capacitance make a lobe as well: below these widths it cannot be told apart. */
+/**
+ * The fixture's own edge and the part's capacitance make a lobe as well: below these widths it cannot be told apart.
+ * The bound adds the charge that the shortest time told apart may hide.
+ */
 function nothingMeasurable(window: EventWindow, step: FittedStep, shortest: number): NothingMeasurable | null {
   const lobe = reverseLobe(window, step)
   const told = Math.max(shortest, step.edgeTime, 2 * window.interval)
@@ -50,7 +54,7 @@ function nothingMeasurable(window: EventWindow, step: FittedStep, shortest: numb
     fixture: 'step',
     current: step.current,
     peakReverseCurrent: lobe.peak,
-    chargeUpperBound: Math.max(lobe.charge, 0.5 * lobe.peak * told),
+    chargeUpperBound: lobe.charge + 0.5 * lobe.peak * told,
     timeUpperBound: Math.max(lobe.width, told),
   }
 }
@@ -68,14 +72,14 @@ function reverseLobe(window: EventWindow, step: FittedStep): { peak: number; wid
   for (let k = from; k < window.time.length && quiet < 4; k++) {
     const reverse = base - window.current[k]!
     quiet = above > 0 && reverse < Math.max(2 * noise, 0.02 * peak) ? quiet + 1 : 0
-    charge += reverse
+    charge += Math.max(0, reverse)
     count += 1
     if (reverse > 0.5 * peak) above += 1
   }
   return {
     peak,
     width: above * window.interval,
-    charge: (Math.max(0, charge) + 3 * noise * Math.sqrt(Math.max(1, count))) * window.interval,
+    charge: (charge + 3 * noise * Math.sqrt(Math.max(1, count))) * window.interval,
   }
 }
 
@@ -92,11 +96,12 @@ function stepSpread(
   const edge =
     0.15 *
     Math.max(step.edgeTime, context.settings.bandwidth === null ? window.interval : 0.35 / context.settings.bandwidth)
+  const converter = channelQuantum(context.waveform.current) / Math.sqrt(12)
   const model =
     figures.diffusionLifetime === null ? 0 : 0.5 * Math.abs(Math.log(figures.diffusionLifetime / figures.lifetime))
   return {
-    current: noise.current,
-    reverse: noise.reverse,
+    current: Math.hypot(noise.current, converter / figures.current),
+    reverse: Math.hypot(noise.reverse, converter / figures.reverse),
     ...(figures.storageTime === null ? {} : { storageTime: Math.hypot(noise.storageTime, edge / figures.storageTime) }),
     recoveryTime: Math.hypot(noise.recoveryTime, edge / figures.recoveryTime, figures.endDoubt),
     until: noise.reverse,

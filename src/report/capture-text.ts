@@ -38,7 +38,7 @@ export function understoodText(understood: CaptureDocument['understood']): strin
     understood.pairs_averaged === true ? 'lowest and highest of each interval averaged' : '',
     understood.time_evened === true ? 'times rounded in the file, evened' : '',
     understood.bandwidth_hz === null
-      ? 'bandwidth unknown, nothing corrected for it'
+      ? "bandwidth unknown: half of the rounding at the peak is taken as the instrument's"
       : `bandwidth ${quantity(understood.bandwidth_hz as number, 'Hz')} taken out`,
     understood.reference === null ? '' : `reference ${understood.reference}`,
   ].filter((note) => note !== '')
