@@ -72,6 +72,7 @@ export function createKernel({ stage, record, rectifier }: KernelSetup): Kernel 
       discontinuous: false,
       idleVoltage: 0.5,
     },
+    held: { temperatures: new Float64Array(3), crestCurrent: 0.5, current: 0.5 },
     turnOnSlope: 0.5,
     weight: 0.5,
     startCurrent: 0.5,

@@ -34,7 +34,7 @@ export function placeSensitivity(kernel: Kernel): void {
 /** Mean current times the drift of the drop at a typical current of the conduction interval. [W/K] */
 function conductionSensitivity({ coefficients: c, part, instant, hotShare, rows }: Kernel): number {
   const mean = rows[row.meanRectifierCurrent]!
-  if (part.synchronous) return 0
+  if (part.synchronous) return rows[row.conduction]! * part.channelPerKelvin
   const share = (0.5 * (Math.max(instant.valley, 0) + instant.peak) * hotShare) / part.ratedCurrent
   const logarithm = part.line ? 0 : Math.log(Math.max(share, 0.01))
   return mean * (c[11]! + c[12]! * logarithm + c[13]! * share)

@@ -40,6 +40,8 @@ export interface Kernel {
   other: PartState
   // Results of the last evaluation.
   instant: Instant
+  /** Where draws start from: the nominal solution. */
+  held: HeldStart
   /** Total turn-on di/dt of this period, and the period's weight in the line cycle. [A/s], [1] */
   turnOnSlope: number
   weight: number
@@ -170,6 +172,13 @@ export interface RecoveryEvent {
   rectifierEnergy: number
   switchAddedEnergy: number
   outcome: 'hard' | 'residual' | 'residual-gone' | 'no-stored-charge' | 'negative-valley'
+}
+
+/** A solution kept as the start of others: temperatures, crest of the line, mean inductor current. */
+export interface HeldStart {
+  readonly temperatures: Float64Array
+  crestCurrent: number
+  current: number
 }
 
 /** Gauss nodes over a quarter of the line period: sine values, weights adding up to 1. */
