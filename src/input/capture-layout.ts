@@ -48,7 +48,7 @@ export function cellsOf(line: string, delimiter: string): readonly string[] {
 /** "0,12,1,5" with decimal commas is 0.12 and 1.5. An odd cell is left alone, so that the row is refused later. */
 export function joinCells(cells: readonly string[], joined: boolean): readonly string[] {
   if (!joined || cells.length < 2 || !cells.some((cell) => /\d/.test(cell))) return cells
-  if (!cells.every((cell, k) => (k % 2 === 0 ? wholePart : fraction).test(clean(cell)))) return cells
+  if (!cells.every(isHalf)) return cells
   return Array.from({ length: Math.ceil(cells.length / 2) }, (_, k) =>
     2 * k + 1 < cells.length ? `${clean(cells[2 * k]!)},${clean(cells[2 * k + 1]!)}` : cells[2 * k]!,
   )
@@ -78,12 +78,9 @@ function decimalOf(
   const whole = delimiter === ',' && points === undefined && commas === undefined
   const pairs =
     whole &&
-    tail.every(
-      (row) =>
-        row.length % 2 === 0 &&
-        row.length === tail[0]!.length &&
-        row.every((cell, k) => (k % 2 === 0 ? wholePart : fraction).test(clean(cell))),
-    )
+    tail.length > 0 &&
+    tail[0]!.length / 2 >= furthestColumn(settings) &&
+    tail.every((row) => row.length % 2 === 0 && row.length === tail[0]!.length && row.every(isHalf))
   if (settings.decimal === 'comma') return { decimal: 'comma', joined: pairs }
   if (settings.decimal === 'point') return { decimal: 'point', joined: false }
   if (points !== undefined && commas !== undefined) {
@@ -93,6 +90,17 @@ function decimalOf(
   if (commas !== undefined) return { decimal: 'comma', joined: false }
   if (!pairs) return { decimal: 'point', joined: false }
   return decidedByHeader(tail[0]!.length, lines) ?? ambiguous(lines.at(-1)!)
+}
+
+/** Whole numbers in even places, digits in odd ones: two cells could be one number. */
+function isHalf(cell: string, k: number): boolean {
+  return (k % 2 === 0 ? wholePart : fraction).test(clean(cell))
+}
+
+/** Highest position that the settings ask for, counted from 1. */
+function furthestColumn({ time, current, voltage }: CaptureSettings): number {
+  const positions = [time, current, voltage].map((column) => (typeof column?.column === 'number' ? column.column : 1))
+  return Math.max(...positions)
 }
 
 /** As many names as cells: the commas part columns. Half as many: every other comma is a decimal sign. */

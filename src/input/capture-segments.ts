@@ -104,11 +104,17 @@ function pairMeans(values: Float64Array): Float64Array {
 /** The even grid behind times that rounding has made uneven. */
 function evenGrid(time: Float64Array): { start: number; interval: number; evened: boolean } | TableFault {
   const count = time.length
-  const start = time[0]!
-  const interval = (time[count - 1]! - start) / (count - 1)
+  const middle = 0.5 * (count - 1)
+  let mean = 0
+  for (let k = 0; k < count; k++) mean += time[k]! / count
+  let product = 0
+  for (let k = 0; k < count; k++) product += (k - middle) * (time[k]! - mean)
+  // a line through all times: rounding of the first and the last does not tilt it
+  const interval = (12 * product) / (count * (count * count - 1))
+  const start = mean - middle * interval
   if (!(interval > 0)) return malformed('the time column does not advance', 'rising times', 'check columns.time')
   let quantum = Number.POSITIVE_INFINITY
-  let furthest = 0
+  let furthest = Math.abs(time[0]! - start)
   for (let k = 1; k < count; k++) {
     const step = time[k]! - time[k - 1]!
     if (step > 1e-9 * interval && step < quantum) quantum = step
