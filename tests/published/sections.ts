@@ -5,6 +5,7 @@ import { conductionRows } from './conduction-rows.ts'
 import { energyRows } from './energy-rows.ts'
 import type { PublishedRow } from './figure.ts'
 import { heatRows } from './heat-rows.ts'
+import { honestySection } from './honesty-section.ts'
 import { recoveryRows } from './recovery-rows.ts'
 import { stageRows } from './stage-rows.ts'
 import { triangleRows } from './triangle-rows.ts'
@@ -40,6 +41,7 @@ export const sections: readonly ValidationSection[] = [
   section('Overlap, ripple and line cycle', 'What the stage adds around the rectifier.', stageRows),
   section('Heat and leakage', 'Junction temperature, runaway and derating.', heatRows),
   captureAccuracySection(),
+  honestySection(),
 ]
 
 /** Published rows without a case here, each with its reason. */
