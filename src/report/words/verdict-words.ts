@@ -40,9 +40,15 @@ function oddsText({ odds_best, odds_error }: CandidateResult): string {
   return odds_error !== null && odds_error >= 0.005 ? `${text} (±${odds_error.toFixed(2)})` : text
 }
 
+/** Below this share of the variance a measurement settles nothing, and saying otherwise would send people to the bench in vain. */
+const worthMeasuring = 0.1
+
 function advice(next: readonly MeasureNext[] | null): string {
   const first = next?.[0]
-  return first === undefined ? '' : `To settle it, ${measureWords(first)}.`
+  if (first === undefined) return ''
+  return first.share >= worthMeasuring
+    ? `To settle it, ${measureWords(first)}.`
+    : 'No single measurement would settle it: what is left is the spread between units and of the stage. Take them as equal and choose by other grounds.'
 }
 
 /** One measurement as an order for the bench: "measure the recovery of X at 8 A, 350 A/µs and 110 °C (…)". */
