@@ -48,13 +48,8 @@ export function appendRow(path: string, document: CaptureDocument, source: strin
 }
 
 function unknownId(path: string, id: string, known: readonly string[]) {
-  return failure({
-    code: 'id-unknown',
-    file: path,
-    found: id,
-    hint: didYouMean(id, known),
-    expected: `known: ${known.join(', ')}`,
-  })
+  const hint = [didYouMean(id, known), `known: ${known.join(', ')}`].filter((part) => part !== '').join('; ')
+  return failure({ code: 'id-unknown', file: path, found: id, hint })
 }
 
 function unusable(found: string, expected: string, hint = '') {
@@ -90,7 +85,7 @@ function rowTexts({ fixture, row, device, spread }: CaptureDocument, source: str
   const keys = fixture === 'ramp' ? rampKeys : stepKeys
   const figures = keys.flatMap(([name, key, unit, size]) => {
     const value = row[key]
-    return typeof value === 'number' ? [[name, `${Number((value / size).toPrecision(4))} ${unit}`] as const] : []
+    return typeof value === 'number' ? [[name, figureText(value, unit, size)] as const] : []
   })
   const by = fixture === 'ramp' ? [['trr_by', String(row.trr_by)] as const] : []
   return [
@@ -102,6 +97,12 @@ function rowTexts({ fixture, row, device, spread }: CaptureDocument, source: str
     ['spread', `${Number((100 * spread.row!).toPrecision(3))} %`],
     ['source', source],
   ]
+}
+
+/** Four digits; currents of a fixture in milliamperes. */
+function figureText(value: number, unit: string, size: number): string {
+  const small = unit === 'A' && value < 0.1
+  return `${Number((value / (small ? 1e-3 : size)).toPrecision(4))} ${small ? 'mA' : unit}`
 }
 
 const rampKeys = [
