@@ -7,7 +7,7 @@ import { latinHypercube } from '../numerics/latin-hypercube.ts'
 import { seededStream } from '../numerics/seeded-stream.ts'
 import { nominalCoefficients } from '../stage/create-kernel.ts'
 import { currentFloor } from '../stage/recover.ts'
-import { settle } from '../stage/thermal-balance.ts'
+import { holdStart, settle, settleFromHeld } from '../stage/thermal-balance.ts'
 import { type Candidate, placeTurnOn } from './candidate.ts'
 import { type NominalPoint, stageLossOf, totalLossOf } from './nominal-point.ts'
 import { conditionOf } from './point-condition.ts'
@@ -79,13 +79,16 @@ export function drawCandidate(
     leakageLog: new Float64Array(draws),
   }
   const voltageFall = kernel.voltageFall
+  // Every draw starts from the nominal solution, not from the draw before: it depends on itself alone.
+  const settleDraw = settle(kernel) ? settleFromHeld : settle
+  holdStart(kernel)
   for (let k = 0; k < draws; k++) {
     sampler(k, kernel.coefficients)
     kernel.slopeFactor = stageDraws.slope[k]!
     kernel.voltageFall = voltageFall * stageDraws.voltageFall[k]!
     kernel.thermal.factor = stageDraws.thermal[k]!
     if (candidate.turnOn !== null) placeDrawnTurnOn(candidate, stageDraws.turnOn[k]!)
-    const settled = settle(kernel)
+    const settled = settleDraw(kernel)
     out.stageLoss[k] = settled ? stageLossOf(candidate, kernel.rows) : Number.POSITIVE_INFINITY
     out.total[k] = settled ? totalLossOf(kernel.rows) : 0
     out.junction[k] = settled ? kernel.temperatures[0]! : 0
