@@ -56,7 +56,7 @@ function settledResult(
     evidence: gradeEvidence({ record, rectifier: candidate.rectifier, condition: conditionOf(candidate, point) }),
     point: pointResult(point.instant),
     event: eventResult(candidate, point.event, point.event.hot, point.junction, peak),
-    event_maximum: maximumEvent(candidate, point, peak),
+    event_maximum: maximumEvent(candidate, point),
     forward_v: forwardVoltage(candidate, point),
     losses_w: lossesResult(rows),
     junction_c: point.junction - celsiusZero,

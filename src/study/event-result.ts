@@ -3,7 +3,7 @@ import type { EventResult } from '../domain/result.ts'
 import { recoveryTimeFactor } from '../models/charge-control.ts'
 import { placeTemperatures } from '../stage/evaluate.ts'
 import type { RecoveryEvent } from '../stage/kernel.ts'
-import { type PointEvent, pointEvent } from '../stage/settled-point.ts'
+import { type PointEvent, peakReverseVoltage, pointEvent } from '../stage/settled-point.ts'
 import type { Candidate } from './candidate.ts'
 import { atMaximumRecovery, type NominalPoint } from './nominal-point.ts'
 
@@ -51,10 +51,12 @@ export function eventResult(
 }
 
 /** The same at the record's guaranteed maximum, at the nominal junction temperature; null without such a row. */
-export function maximumEvent(candidate: Candidate, point: NominalPoint, peak: number): EventResult | null {
+export function maximumEvent(candidate: Candidate, point: NominalPoint): EventResult | null {
+  const { kernel, rectifier } = candidate
   return atMaximumRecovery(candidate, () => {
-    placeTemperatures(candidate.kernel)
-    const event = pointEvent(candidate.kernel)
+    placeTemperatures(kernel)
+    const event = pointEvent(kernel)
+    const peak = peakReverseVoltage(kernel, event, rectifier.capacitance)
     return eventResult(candidate, event, event.hot, point.junction, peak)
   })
 }

@@ -2,7 +2,7 @@ import { judgeCandidate, type Rejection } from '../decision/accept.ts'
 import { celsiusZero } from '../domain/constants.ts'
 import type { CandidateResult, Reason } from '../domain/result.ts'
 import { type Kernel, row } from '../stage/kernel.ts'
-import { type PointEvent, peakReverseVoltage } from '../stage/settled-point.ts'
+import { peakReverseVoltage } from '../stage/settled-point.ts'
 import { settle } from '../stage/thermal-balance.ts'
 import { hasThermalPath, junctionLimitOf } from '../stage/thermal-network.ts'
 import type { Candidate } from './candidate.ts'
@@ -10,7 +10,7 @@ import { atInput, atMaximumLeakage, type NominalPoint, solvePoint, stageLossOf, 
 
 /** A candidate solved at the nominal parameters, and whether it may be used. */
 export interface Judgement {
-  /** Null without a stable temperature at one of the inputs, or without a thermal path. */
+  /** At the nominal input; null without a stable temperature there, or without a thermal path. */
   readonly point: NominalPoint | null
   readonly mains: CandidateResult['at_mains']
   /** Highest over the inputs; null without a temperature. [V] */
@@ -23,9 +23,13 @@ export function judge(candidate: Candidate): Judgement {
   const { stage, record, kernel } = candidate
   if (!hasThermalPath(stage, record)) return unsettled('thermal-path-missing')
   const point = solvePoint(candidate)
-  const mains = mainsPoints(candidate, point)
-  if (point === null || mains?.some(({ thermal }) => thermal === 'none')) return unsettled('no-stable-temperature')
-  const peak = highestPeakReverseVoltage(candidate, point)
+  if (point === null) return unsettled('no-stable-temperature')
+  const inputs = inputPoints(candidate, point)
+  const settled = inputs.flatMap((each) => each.point ?? [])
+  const lost = inputs.find((each) => each.point === null)
+  const peak = Math.max(
+    ...settled.map(({ event }) => peakReverseVoltage(kernel, event, candidate.rectifier.capacitance)),
+  )
   const rejections = judgeCandidate({
     peakReverseVoltage: peak,
     reverseVoltage: record.ratings.reverseVoltage,
@@ -33,13 +37,18 @@ export function judge(candidate: Candidate): Judgement {
     meanCurrent: point.rows[row.meanRectifierCurrent]!,
     averageCurrent: record.ratings.averageCurrent,
     parts: kernel.parts,
-    junction: Math.max(point.junction, ...(mains ?? []).map(({ junction_c }) => junction_c! + celsiusZero)),
+    junction: Math.max(...settled.map(({ junction }) => junction)),
     junctionLimit: junctionLimitOf(stage, record),
     thermal: 'settled',
-    settledAtMaximumLeakage: settlesAtMaximumLeakage(candidate),
-    recovery: recoveryFit(kernel, point),
+    settledAtMaximumLeakage: lost === undefined ? settlesAtMaximumLeakage(candidate) : null,
+    recovery: tightestRecovery(kernel, settled),
   })
-  return { point, mains, peakReverseVoltage: peak, reasons: rejections.map(reasonOf) }
+  const reasons = rejections.map(reasonOf)
+  if (lost !== undefined) {
+    reasons.push({ code: 'no-stable-temperature', text: '', value: lost.voltage, limit: null })
+  }
+  const mains = stage.input.kind === 'mains' ? inputs.map((each) => mainsResult(candidate, each)) : null
+  return { point, mains, peakReverseVoltage: peak, reasons }
 }
 
 function unsettled(code: 'thermal-path-missing' | 'no-stable-temperature'): Judgement {
@@ -53,20 +62,32 @@ function reasonOf({ code, value, limit }: Rejection): Reason {
   return { code, text: '', value: edge(value), limit: edge(limit) }
 }
 
-function mainsPoints(candidate: Candidate, nominal: NominalPoint | null): CandidateResult['at_mains'] {
+interface InputPoint {
+  readonly voltage: number
+  readonly point: NominalPoint | null
+}
+
+/** The point at every input that the part has to bear: the one of a dc stage, least, nominal and highest mains. */
+function inputPoints(candidate: Candidate, nominal: NominalPoint): InputPoint[] {
   const { input } = candidate.stage
-  if (input.kind !== 'mains') return null
+  if (input.kind !== 'mains') return [{ voltage: input.voltage, point: nominal }]
   return [1 - input.tolerance, 1, 1 + input.tolerance].map((factor) => {
     const voltage = input.voltage * factor
-    const point = factor === 1 ? nominal : atInput(candidate, voltage, () => solvePoint(candidate))
-    return {
-      mains_v: voltage,
-      total_w: point === null ? null : totalLossOf(point.rows),
-      stage_loss_w: point === null ? null : stageLossOf(candidate, point.rows),
-      junction_c: point === null ? null : point.junction - celsiusZero,
-      thermal: point === null ? 'none' : point.outcome,
-    }
+    return { voltage, point: factor === 1 ? nominal : atInput(candidate, voltage, () => solvePoint(candidate)) }
   })
+}
+
+function mainsResult(
+  candidate: Candidate,
+  { voltage, point }: InputPoint,
+): NonNullable<CandidateResult['at_mains']>[number] {
+  return {
+    mains_v: voltage,
+    total_w: point === null ? null : totalLossOf(point.rows),
+    stage_loss_w: point === null ? null : stageLossOf(candidate, point.rows),
+    junction_c: point === null ? null : point.junction - celsiusZero,
+    thermal: point === null ? 'none' : point.outcome,
+  }
 }
 
 function settlesAtMaximumLeakage(candidate: Candidate): boolean {
@@ -79,20 +100,15 @@ function settlesAtMaximumLeakage(candidate: Candidate): boolean {
   )
 }
 
-function highestPeakReverseVoltage(candidate: Candidate, point: NominalPoint): number {
-  const { kernel, stage, rectifier } = candidate
-  const peakHere = (event: PointEvent): number => peakReverseVoltage(kernel, event, rectifier.capacitance)
-  const nominal = peakHere(point.event)
-  if (stage.input.kind !== 'mains') return nominal
-  const high = atInput(candidate, stage.input.voltage * (1 + stage.input.tolerance), () => solvePoint(candidate))
-  return high === null ? nominal : Math.max(nominal, peakHere(high.event))
-}
-
-function recoveryFit(kernel: Kernel, point: NominalPoint): { readonly value: number; readonly limit: number } | null {
-  const { hot } = point.event
-  if (hot.outcome !== 'hard') return null
-  return {
-    value: hot.current / hot.slope + hot.timeToPeak + 3 * hot.tailTime,
-    limit: point.event.instant.duty / kernel.frequency,
-  }
+/** The recovery that fills most of its on-time: high mains shortens the interval, low mains lengthens the recovery. */
+function tightestRecovery(
+  { frequency }: Kernel,
+  points: readonly NominalPoint[],
+): { readonly value: number; readonly limit: number } | null {
+  const fits = points.flatMap(({ event: { hot, instant } }) =>
+    hot.outcome === 'hard'
+      ? [{ value: hot.current / hot.slope + hot.timeToPeak + 3 * hot.tailTime, limit: instant.duty / frequency }]
+      : [],
+  )
+  return fits.sort((a, b) => b.value / b.limit - a.value / a.limit)[0] ?? null
 }

@@ -18,6 +18,8 @@ export interface NominalPoint {
   /** Share of the line cycle in continuous conduction; 1 or 0 for dc. */
   readonly continuousShare: number
   readonly outcome: Exclude<ThermalOutcome, 'none'>
+  /** The chord stands in for a forward curve that left its usable range. */
+  readonly chord: boolean
 }
 
 /** Solves the kernel where it stands; null when no stable temperature exists (or no power: `delivers` tells). */
@@ -35,6 +37,7 @@ export function solvePoint(candidate: Candidate): NominalPoint | null {
     event: pointEvent(kernel),
     continuousShare: kernel.kind === 'mains-boost' ? kernel.line.continuousShare : instant.discontinuous ? 0 : 1,
     outcome: junction > junctionLimitOf(stage, record) ? 'over-limit' : 'settled',
+    chord: kernel.hot.chord,
   }
 }
 

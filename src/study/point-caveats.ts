@@ -27,7 +27,7 @@ export function pointCaveats({ candidate, point, peakReverseVoltage }: Assessmen
   if (peakReverseVoltage === point.event.instant.blockingVoltage && !hasOvershootData(candidate)) {
     add('overshoot-not-included', { voltage: peakReverseVoltage })
   }
-  if (candidate.kernel.hot.chord) add('forward-chord', {})
+  if (point.chord) add('forward-chord', {})
   currentCaveats(candidate, point, add)
   timeCaveats(candidate, point, add)
   softnessCaveats(candidate, point, add)

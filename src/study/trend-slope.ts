@@ -26,25 +26,38 @@ export interface SlopeInput {
  * knee, the largest admissible slope and what sets it, and an interior optimum only where there is one.
  */
 export function studySlope(input: SlopeInput): SlopeStudy {
-  const { stage, record, solver, axis } = input
-  const largest = largestAdmissible(input)
-  const best = largest === null ? null : solver.spotAt(record, largest.at)
-  const now = statedSlope(stage, best)
-  const here = now === null ? null : solver.spotAt(record, now)
-  const optimum = largest === null ? null : interiorOptimum(input, largest.at)
+  const { record, solver, spots } = input
+  const admissible = admissibleRange(input)
+  if (admissible === null) {
+    return {
+      id: record.id,
+      knee_a_per_s: null,
+      largest_a_per_s: null,
+      largest_because: inadmissible(input, spots[0]!) ?? 'range',
+      gain_w: null,
+      optimum_a_per_s: null,
+      optimum_because: null,
+    }
+  }
+  const best = solver.spotAt(record, admissible.to).stageLoss
+  const optimum = interiorOptimum(input, admissible)
   return {
     id: record.id,
-    knee_a_per_s: largest === null ? null : kneeBelow(input, largest.at),
-    largest_a_per_s: largest?.at ?? null,
-    largest_because: largest?.because ?? inadmissible(solver.spotAt(record, axis[0]!)) ?? 'range',
-    gain_w: best?.stageLoss != null && here?.stageLoss != null ? here.stageLoss - best.stageLoss : null,
+    knee_a_per_s: kneeWithin(input, admissible),
+    largest_a_per_s: admissible.to,
+    largest_because: admissible.because,
+    gain_w: minus(solver.spotHere(record).stageLoss, best),
     optimum_a_per_s: optimum?.at ?? null,
     optimum_because: optimum?.because ?? null,
   }
 }
 
+function minus(a: number | null, b: number | null): number | null {
+  return a === null || b === null ? null : a - b
+}
+
 /** First rule that a slope breaks: loop, saturation, voltage, temperature; null where it is admissible. */
-function inadmissible({ candidate, judgement }: TrendSpot): string | null {
+function inadmissible({ stage }: SlopeInput, { candidate, judgement }: TrendSpot): string | null {
   const { kernel } = candidate
   const { point } = judgement
   if (point === null) return 'temperature'
@@ -55,7 +68,8 @@ function inadmissible({ candidate, judgement }: TrendSpot): string | null {
     statedSlopeAt(kernel, current) > event.instant.blockingVoltage / kernel.loopInductance
   )
     return 'loop'
-  const gate = candidate.stage.switch.slope.kind === 'gate' ? candidate.stage.switch.slope : null
+  // Along the axis the slope is given; the gate that bounds the current is the stage's own.
+  const gate = stage.switch.slope.kind === 'gate' ? stage.switch.slope : null
   if (gate !== null && current + event.hot.peakReverseCurrent > gate.transconductance * (gate.drive - gate.threshold))
     return 'saturation'
   const codes = judgement.reasons.map(({ code }) => code)
@@ -65,17 +79,25 @@ function inadmissible({ candidate, judgement }: TrendSpot): string | null {
     : null
 }
 
-function largestAdmissible({
-  axis,
-  spots,
-  solver,
-  record,
-}: SlopeInput): { readonly at: number; readonly because: string } | null {
-  if (inadmissible(spots[0]!) !== null) return null
-  const first = spots.findIndex((spot) => inadmissible(spot) !== null)
-  if (first < 0) return { at: axis[axis.length - 1]!, because: 'range' }
-  const at = solver.edge((value) => inadmissible(solver.spotAt(record, value)) === null, axis[first - 1]!, axis[first]!)
-  return { at, because: inadmissible(spots[first]!)! }
+/** Slopes that a part bears, and what sets the upper end. */
+interface AdmissibleRange {
+  readonly from: number
+  readonly to: number
+  readonly because: string
+}
+
+/** From the last admissible position down and up to where a rule breaks: too slow a turn-on can be too hot as well. */
+function admissibleRange(input: SlopeInput): AdmissibleRange | null {
+  const { axis, spots, solver, record } = input
+  const holds = (value: number): boolean => inadmissible(input, solver.spotAt(record, value)) === null
+  const admitted = spots.map((spot) => inadmissible(input, spot) === null)
+  const last = admitted.lastIndexOf(true)
+  if (last < 0) return null
+  const below = admitted.lastIndexOf(false, last)
+  const from = below < 0 ? axis[0]! : solver.edge(holds, axis[below + 1]!, axis[below]!)
+  if (last === axis.length - 1) return { from, to: axis[last]!, because: 'range' }
+  const to = solver.edge(holds, axis[last]!, axis[last + 1]!)
+  return { from, to, because: inadmissible(input, spots[last + 1]!)! }
 }
 
 /** The three energies of the turn-on as watts: overlap, rectifier's and switch's share of recovery. */
@@ -85,20 +107,22 @@ function turnOnLoss({ judgement }: TrendSpot): number {
   return rows[row.turnOnBase]! + rows[row.recoveryRectifier]! + rows[row.recoverySwitch]!
 }
 
-function kneeBelow({ axis, solver, record }: SlopeInput, largest: number): number | null {
-  const goal = turnOnLoss(solver.spotAt(record, largest)) * (1 + kneeShare)
+function kneeWithin({ solver, record }: SlopeInput, { from, to }: AdmissibleRange): number | null {
+  const goal = turnOnLoss(solver.spotAt(record, to)) * (1 + kneeShare)
   const excess = (value: number): number => turnOnLoss(solver.spotAt(record, value)) - goal
-  if (!(excess(axis[0]!) > 0)) return axis[0]!
-  return solver.crossing(excess, axis[0]!, largest)
+  if (!(excess(from) > 0)) return from
+  return solver.crossing(excess, from, to)
 }
 
 function interiorOptimum(
   { axis, spots, solver, record }: SlopeInput,
-  largest: number,
+  { from, to }: AdmissibleRange,
 ): { readonly at: number; readonly because: string } | null {
-  const inside = axis
-    .map((at, k) => ({ at, loss: spots[k]!.stageLoss }))
-    .filter(({ at, loss }) => at <= largest && loss !== null)
+  const inside = [
+    { at: from, loss: solver.spotAt(record, from).stageLoss },
+    ...axis.map((at, k) => ({ at, loss: spots[k]!.stageLoss })).filter(({ at }) => at > from && at < to),
+    { at: to, loss: solver.spotAt(record, to).stageLoss },
+  ]
   let lowest = 0
   inside.forEach(({ loss }, k) => {
     if (loss! < inside[lowest]!.loss!) lowest = k
@@ -125,9 +149,4 @@ function isothermalLoss(solver: TrendSolver, record: RectifierRecord, at: number
   kernel.temperatures[2] = held.junction
   evaluate(kernel)
   return kernel.rows[row.turnOnBase]! + kernel.rows[row.recoveryRectifier]! + kernel.rows[row.recoverySwitch]!
-}
-
-function statedSlope(stage: Stage, spot: TrendSpot | null): number | null {
-  if (stage.switch.slope.kind === 'given') return stage.switch.slope.slope
-  return spot?.judgement.point?.event.slope ?? null
 }

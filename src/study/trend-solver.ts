@@ -18,6 +18,8 @@ export interface TrendSpot {
 /** Solves any candidate anywhere along one axis; the temperature is settled anew each time. */
 export interface TrendSolver {
   readonly spotAt: (record: RectifierRecord, value: number) => TrendSpot
+  /** The stage as it is stated, wherever that lies. */
+  readonly spotHere: (record: RectifierRecord) => TrendSpot
   /** Position where a function of the spot changes sign between two values, to 1e-6 of the axis. */
   readonly crossing: (f: (value: number) => number, low: number, high: number) => number | null
   /** Last position from `low` on at which `holds` is still true, when it is false at `high`. */
@@ -33,14 +35,15 @@ export function trendSolver(
   over: TrendQuantity,
   span: number,
 ): TrendSolver {
-  const spotAt = (record: RectifierRecord, value: number): TrendSpot => {
-    const candidate = prepareCandidate(stageAt(stage, over, value), record, records)
+  const solve = (varied: Stage, record: RectifierRecord): TrendSpot => {
+    const candidate = prepareCandidate(varied, record, records)
     const judgement = deliversCold(candidate.kernel) ? judge(candidate) : nothing
     const { point } = judgement
     return { candidate, judgement, stageLoss: point === null ? null : stageLossOf(candidate, point.rows) }
   }
   return {
-    spotAt,
+    spotAt: (record, value) => solve(stageAt(stage, over, value), record),
+    spotHere: (record) => solve(stage, record),
     crossing: (f, low, high) =>
       findRoot({ f, low, high, tolerance: axisTolerance * span, maxIterations: 200 })?.root ?? null,
     edge: (holds, low, high) => {

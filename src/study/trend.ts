@@ -13,7 +13,7 @@ import { notCovered } from './not-covered.ts'
 import { pointCaveats, stageCaveats } from './point-caveats.ts'
 import { originsAt } from './point-condition.ts'
 import { chooseCandidates, documentHead, placeRanks, stageResult, warningsOf } from './rank.ts'
-import { documentValue, stageAt, trendKeys } from './stage-variation.ts'
+import { documentValue, presentValue, stageAt, trendKeys } from './stage-variation.ts'
 import { axisValues } from './trend-axis.ts'
 import { findCrossings } from './trend-crossings.ts'
 import { findLimits } from './trend-limits.ts'
@@ -38,7 +38,10 @@ export function trend(
   const solver = trendSolver(stage, records, over, request.to - request.from)
   const spots = axis.map((value) => parts.map((record) => solver.spotAt(record, value)))
   if (spots.every((line) => line.every(({ judgement }) => judgement.point === null))) refuseEmpty(stage, spots)
-  const present = parts.map((record) => assessCandidate(solver.spotAt(record, presentOr(stage, request)).candidate))
+  const at = presentValueWithin(stage, request)
+  const present = parts.map((record) =>
+    assessCandidate((at === null ? solver.spotHere(record) : solver.spotAt(record, at)).candidate),
+  )
   return {
     ...documentHead(settings),
     over: trendKeys[over],
@@ -86,17 +89,10 @@ function trendCandidate(spot: TrendSpot): TrendCandidate {
   }
 }
 
-/** The stage itself, for warnings: where it stands if that lies on the axis, else the nearer end. */
-function presentOr(stage: Stage, { over, from, to }: TrendRequest): number {
-  const present = {
-    frequency: stage.frequency,
-    load: 1,
-    slope: stage.switch.slope.kind === 'given' ? stage.switch.slope.slope : from,
-    ambient: stage.cooling.kind === 'case' ? from : stage.cooling.ambientTemperature,
-    input: stage.input.voltage,
-    inductance: stage.inductor.inductance,
-  }[over]
-  return Math.min(Math.max(present, from), to)
+/** Where the stage stands, for warnings: on the axis, else at the nearer end; null where a gate drive sets the slope. */
+function presentValueWithin(stage: Stage, { over, from, to }: TrendRequest): number | null {
+  const present = presentValue(stage, over)
+  return present === null ? null : Math.min(Math.max(present, from), to)
 }
 
 /** Over the input the highest value decides what is hazardous. */

@@ -1,5 +1,5 @@
 import { adviseMeasurement, type MeasurementEffect, type MeasurementOption } from '../decision/measure-next.ts'
-import { countOdds } from '../decision/odds.ts'
+import { countOdds, type Odds } from '../decision/odds.ts'
 import { type GapInput, regressGap } from '../decision/regress-gap.ts'
 import { shareVariance } from '../decision/sensitivity.ts'
 import { intervalLevel, summariseDraws } from '../decision/summarise-draws.ts'
@@ -16,6 +16,8 @@ import { conditionOf } from './point-condition.ts'
 export interface DrawnStage {
   readonly shared: StageDraws
   readonly parts: readonly PartDraws[]
+  /** In the order of the parts. */
+  readonly odds: readonly Odds[]
 }
 
 /** Solves every candidate in the same draws of the stage. */
@@ -25,7 +27,7 @@ export function drawAll(stage: Stage, assessments: readonly Assessment[], seed: 
   for (const { candidate, point, result } of assessments) {
     if (point !== null) parts.push(drawCandidate(candidate, point, result.accepted, shared, seed))
   }
-  return { shared, parts }
+  return { shared, parts, odds: countOdds(parts) }
 }
 
 /** A candidate's result with what the draws say of it. */
@@ -33,7 +35,7 @@ export function withDraws(result: CandidateResult, drawn: DrawnStage): Candidate
   const own = drawn.parts.find(({ id }) => id === result.id)
   if (own === undefined) return { ...result, odds_best: 0, odds_error: 0 }
   const summary = summariseDraws(own)
-  const odds = countOdds(drawn.parts).find(({ id }) => id === result.id)!
+  const odds = drawn.odds.find(({ id }) => id === result.id)!
   return {
     ...result,
     interval_w: summary.total === null ? null : { ...summary.total, level: intervalLevel },

@@ -20,7 +20,7 @@ export const reasonWords: Readonly<Record<ReasonCode, string>> = {
   'junction-over-limit':
     'The junction reaches [{value:C_}|more than its limit][, above the limit of {limit:C_}]: improve the cooling or take a part with less loss.',
   'no-stable-temperature':
-    'No stable junction temperature exists: loss rises faster with temperature than heat leaves. ' +
+    'No stable junction temperature exists[ at {value:V} mains]: loss rises faster with temperature than heat leaves. ' +
     'Improve the cooling or take another part; no loss is stated because none would hold.',
   'runaway-at-maximum-leakage':
     'A part at the upper end of leakage runs away[: {value:A} at the operating voltage, where {limit:A} is the edge]. ' +
