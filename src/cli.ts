@@ -75,6 +75,10 @@ function describeStudies(program: Command, settle: Settle): void {
     .action((stage, options) =>
       settle(import('./commands/swap.ts').then(({ runSwap }) => runSwap(stage, options, session))),
     )
+  studyCommand(program, 'review', 'write the document for a design review: -o review.html or -o review.md').action(
+    (stage: string, options: StudyOptions) =>
+      settle(import('./commands/review.ts').then(({ runReview }) => runReview(stage, options, session))),
+  )
 }
 
 /** A command that studies one stage takes the same options as the others. */

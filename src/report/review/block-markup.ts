@@ -1,0 +1,72 @@
+import { escapeText } from '../charts/svg.ts'
+import type { Cell, Column } from '../view-types.ts'
+import type { ReviewBlock, TableBlock } from './review-types.ts'
+
+/** One block as HTML. All text is escaped; drawings are markup already. */
+export function blockMarkup(block: ReviewBlock): string {
+  switch (block.kind) {
+    case 'text':
+      return `<p${block.lead ? ' class="lead"' : ''}>${prose(block.text)}</p>`
+    case 'facts':
+      return `<dl>${block.items.map(({ label, text }) => `<dt>${escapeText(label)}</dt><dd>${prose(text)}</dd>`).join('')}</dl>`
+    case 'list':
+      return `${block.heading === null ? '' : `<h3>${escapeText(block.heading)}</h3>`}<ul class="${block.tone}">${block.items.map(itemMarkup).join('')}</ul>`
+    case 'table':
+      return tableMarkup(block)
+    case 'figure':
+      return `<figure><div class="drawing" tabindex="0" role="group" aria-label="${escapeText(block.caption)}">${block.svg}</div><figcaption>${escapeText(block.caption)}</figcaption></figure>`
+    case 'methods':
+      return `<ul class="methods">${block.items
+        .map(
+          ({ name, equation, source, note }) =>
+            `<li><strong>${escapeText(name)}</strong><span class="equation">${escapeText(equation)}</span>${escapeText(note)} <span class="quiet">Source: ${escapeText(source)}.</span></li>`,
+        )
+        .join('')}</ul>`
+  }
+}
+
+/** Mentions of a section become links to it. */
+function prose(text: string): string {
+  return escapeText(text).replace(/\bsection (\d{1,2})\b/g, '<a href="#section-$1">section $1</a>')
+}
+
+function itemMarkup({ lead, text }: { readonly lead: string | null; readonly text: string }): string {
+  return `<li>${lead === null ? '' : `<strong>${escapeText(lead)}:</strong> `}${prose(text)}</li>`
+}
+
+/** A table in a region of its own that scrolls and can be focused; its first text column names the row. */
+function tableMarkup({ heading, table, note, exact = false, long = false }: TableBlock): string {
+  const { columns, rows } = table
+  const naming = Math.max(
+    0,
+    columns.findIndex(({ key, numeric }) => key && !numeric),
+  )
+  const heads = columns
+    .map((column) => `<th scope="col"${numberClass(column)}>${escapeText(headText(column))}</th>`)
+    .join('')
+  const body = rows.map(
+    (row) =>
+      `<tr>${row.map((cell, index) => cellMarkup(cell, columns[index]!, index === naming, exact)).join('')}</tr>`,
+  )
+  return (
+    `<div class="scroll${long ? ' long' : ''}" tabindex="0" role="region" aria-label="${escapeText(heading)}"><table><caption>${escapeText(heading)}</caption>` +
+    `<thead><tr>${heads}</tr></thead>\n<tbody>${body.join('\n')}</tbody></table></div>` +
+    (note === null ? '' : `<p class="note">${prose(note)}</p>`)
+  )
+}
+
+function cellMarkup({ text, value }: Cell, column: Column, naming: boolean, exact: boolean): string {
+  const whole = exact && column.numeric && typeof value === 'number'
+  const shown = whole ? `<data value="${value}">${escapeText(text)}</data>` : escapeText(text)
+  const name = naming ? 'th scope="row"' : 'td'
+  return `<${name}${numberClass(column)}>${shown}</${naming ? 'th' : 'td'}>`
+}
+
+function numberClass({ numeric }: Column): string {
+  return numeric ? ' class="number"' : ''
+}
+
+function headText({ title, unit }: Column): string {
+  const plain = title.replaceAll('\u00AD', '')
+  return unit === null ? plain : `${plain} (${unit})`
+}
