@@ -56,6 +56,11 @@ export function statedSlopeAt(kernel: Kernel, current: number): number {
 export function bookInstant(kernel: Kernel, weight: number): void {
   kernel.weight = weight
   kernel.turnOnSlope = slopeAt(kernel, Math.max(kernel.instant.valley, 0))
+  // The gate drive cannot bring the switch to this current: it stays out of its ohmic region.
+  if (!(kernel.turnOnSlope > 0)) {
+    kernel.delivers = false
+    return
+  }
   bookPart(kernel, kernel.hot, kernel.hotEvent, row.hotPart)
   if (kernel.parts > 1) bookPart(kernel, kernel.other, kernel.otherEvent, row.otherPart)
   bookSwitch(kernel)

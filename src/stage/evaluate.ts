@@ -56,6 +56,11 @@ export function placeConditions(kernel: Kernel): void {
   kernel.blockingLog = Math.log(instant.blockingVoltage / kernel.part.ratedVoltage)
   kernel.startCurrent = 0
   if (kernel.kind === 'mains-boost') {
+    // From the surroundings' temperature: the nodes must not depend on what was solved before.
+    const { temperatures, thermal } = kernel
+    temperatures[0] = thermal.reference
+    temperatures[2] = thermal.reference
+    if (thermal.switchSolved) temperatures[1] = thermal.reference
     placeTemperatures(kernel)
     layLineGrid(kernel)
   }
