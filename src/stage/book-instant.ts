@@ -180,6 +180,5 @@ export function turnOnBase(kernel: Kernel, slope: number): number {
   if (turnOn.current === 0) return here
   base.voltage = turnOn.voltage
   base.current = turnOn.current
-  base.slope = slopeAt(kernel, turnOn.current)
   return (turnOn.energy * here) / baseEnergy(base)
 }

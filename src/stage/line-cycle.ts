@@ -134,6 +134,7 @@ function bookLine(kernel: Kernel): void {
     const weight = line.weight[k]!
     mean += ((instant.valley + instant.peak) / 2) * instant.conductionShare * weight
     bookInstant(kernel, weight)
+    if (!kernel.delivers) return
   }
   line.bookedMean = mean
   kernel.rows[row.meanRectifierCurrent] = kernel.outputCurrent

@@ -43,12 +43,12 @@ export function placeTurnOn(kernel: Kernel, stage: Stage, reading: TurnOnReading
 function turnOnOf(stage: Stage, records: readonly RectifierRecord[], kernel: Kernel): TurnOnMeaning | null {
   const given = stage.switch.turnOn
   if (given === null) return null
-  const record = records.find(({ id }) => id === given.rectifier)
+  const slope = slopeAt(kernel, given.current)
+  // A gate drive that cannot reach the test current says nothing about what the test rectifier did there.
+  const record = slope > 0 ? records.find(({ id }) => id === given.rectifier) : undefined
   const testRectifier = record === undefined ? null : calibrate({ record, blockingVoltage: given.voltage }).rectifier
-  return turnOnMeaning({
-    given,
-    testRectifier,
-    slope: slopeAt(kernel, given.current),
-    voltageFall: stage.switch.voltageFall,
-  })
+  const meaning = turnOnMeaning({ given, testRectifier, slope, voltageFall: stage.switch.voltageFall })
+  if (given.rectifier === null || record !== undefined) return meaning
+  const missing: Caveat = { code: 'turn-on-rectifier-missing', candidate: '', data: { rectifier: given.rectifier } }
+  return { ...meaning, caveats: [...meaning.caveats, missing] }
 }
