@@ -92,8 +92,8 @@ function studyCommand(program: Command, name: string, summary: string): Command 
     .option('--csv', 'print CSV, units in the header')
     .option('--markdown', 'print a Markdown table')
     .option('-o, --output <file>', 'write to a file; its ending decides the form (.html .md .csv .json .svg .txt)')
-    .option('--records <path>', 'rectifier records, a file or a folder; may be repeated', collect, [])
-    .option('--only <id>', 'consider this candidate; may be repeated', collect, [])
+    .option('--records <path>', 'rectifier records, a file or a folder; may be repeated', collect)
+    .option('--only <id>', 'consider this candidate; may be repeated', collect)
     .option('--mapping <file>', 'which column of a CSV catalogue is which property')
     .option('--seed <n>', 'start of the random draws', wholeNumber(0, 2 ** 32 - 1), 1)
     .option('--draws <n>', 'number of random draws', wholeNumber(1, 1e6), 1000)
@@ -137,7 +137,7 @@ function describeFiles(program: Command, settle: Settle): void {
     )
 }
 
-function collect(value: string, earlier: readonly string[]): readonly string[] {
+function collect(value: string, earlier: readonly string[] = []): readonly string[] {
   return [...earlier, value]
 }
 

@@ -88,6 +88,24 @@ describe('-o', () => {
   })
 })
 
+describe('review', () => {
+  it('writes one file, the same bytes from any folder', () => {
+    const cwd = smallStage()
+    expect(ebbwatt(['review', 'stage.yaml', '-o', 'review.html'], { cwd })).toMatchObject({ code: 0, out: '' })
+    const first = readFileSync(join(cwd, 'review.html'), 'utf8')
+    ebbwatt(['review', join(cwd, 'stage.yaml'), '-o', join(cwd, 'again.html')], { cwd: '/' })
+    expect(readFileSync(join(cwd, 'again.html'), 'utf8')).toBe(first)
+    expect(first).toMatch(/qualified persons/)
+    expect(first).not.toMatch(/(src|href)="(https?:)?\/\//)
+  })
+
+  it('asks for the name of the file', () => {
+    const { code, err } = ebbwatt(['review', 'stage.yaml'], { cwd: smallStage() })
+    expect(code).toBe(2)
+    expect(err).toBe('command line  option-unusable  -o: no file is named; wanted is -o review.html or -o review.md\n')
+  })
+})
+
 describe('start', () => {
   it('writes files that pass the check and rank as they are', () => {
     const cwd = scratchFolder()
