@@ -1,4 +1,5 @@
 import { readdirSync, readFileSync } from 'node:fs'
+import { dirname, join } from 'node:path'
 import type { RectifierRecord } from '../../src/domain/rectifier.ts'
 import type { CandidateResult, RankResult } from '../../src/domain/result.ts'
 import { readRecords } from '../../src/input/read-records.ts'
@@ -14,11 +15,14 @@ function listYaml(folder: string): readonly string[] {
     .map((file) => `${folder}/${file}`)
 }
 
-export const records: readonly RectifierRecord[] = recordFiles.flatMap((file) => {
-  const reading = readRecords(readFileSync(file, 'utf8'), file)
-  if (reading.value === null) throw new Error(`${file} does not read: ${JSON.stringify(reading.problems)}`)
+export const records: readonly RectifierRecord[] = recordFiles.flatMap(recordsIn)
+
+function recordsIn(path: string): readonly RectifierRecord[] {
+  if (!path.endsWith('.yaml')) return listYaml(path).flatMap(recordsIn)
+  const reading = readRecords(readFileSync(path, 'utf8'), path)
+  if (reading.value === null) throw new Error(`${path} does not read: ${JSON.stringify(reading.problems)}`)
   return reading.value
-})
+}
 
 export function recordOf(id: string): RectifierRecord {
   const found = records.find((record) => record.id === id)
@@ -34,7 +38,8 @@ export function rankDemo(
   const file = `catalogs-demo/stages/${name}.yaml`
   const reading = readStage(readFileSync(file, 'utf8'), file)
   if (reading.value === null) throw new Error(`${file} does not read: ${JSON.stringify(reading.problems)}`)
-  return rank(reading.value.stage, records.map(change), { seed: 1, draws: 1000, version: '0', inputs: [] })
+  const ofStage = reading.value.records.flatMap((path) => recordsIn(join(dirname(file), path)))
+  return rank(reading.value.stage, ofStage.map(change), { seed: 1, draws: 1000, version: '0', inputs: [] })
 }
 
 export function candidateOf(result: RankResult, id: string): CandidateResult {

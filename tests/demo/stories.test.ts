@@ -69,6 +69,20 @@ describe('each demonstration stage tells its story', () => {
     expect([verdict.best, ...verdict.tied]).toEqual(expect.arrayContaining(['aspen-60v-40a-channel', 'sedge-60v-15a']))
   })
 
+  it('the pulse fixture alone leaves a wider band than the sheet, and little is left to gain from both', () => {
+    const pump = rankDemo('fixture-or-sheet')
+    const [both, fixture, sheet] = ['both', 'fixture-alone', 'sheet-alone'].map((judged) => {
+      const { high, low } = candidateOf(pump, `medlar-${judged}`).interval_w!
+      return high / low
+    })
+    expect(fixture).toBeGreaterThan(sheet!)
+    expect(sheet).toBeGreaterThan(both!)
+  })
+
+  it('the unit from the bench is cheapest by its headline, and not decided', () => {
+    expect(rankDemo('bench-unit').verdict).toMatchObject({ best: 'bench-unit-3', decided: false })
+  })
+
   it('where the frost sensors are undecided, the advised measurement narrows the gap', () => {
     const before = rankDemo('frost-sensor-boost')
     const advice = before.verdict.measure_next![0]!
