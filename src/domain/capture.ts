@@ -114,7 +114,7 @@ export interface CaptureTrace {
 }
 
 /** One relative standard deviation by figure name. */
-export type CaptureSpread = Readonly<Record<string, number>>
+type CaptureSpread = Readonly<Record<string, number>>
 
 /** No stored charge can be told from the fixture's own response. */
 export interface NothingMeasurable {
@@ -131,7 +131,7 @@ export interface NothingMeasurable {
 }
 
 /** Figures of a commutation at a set slope. */
-export interface ReducedRamp {
+interface ReducedRamp {
   readonly kind: 'ramp'
   /** [A] */
   readonly current: number
@@ -157,7 +157,7 @@ export interface ReducedRamp {
 }
 
 /** Figures of a resistor-limited reversal. */
-export interface ReducedStep {
+interface ReducedStep {
   readonly kind: 'step'
   /** [A] */
   readonly current: number

@@ -104,7 +104,12 @@ const plain = /^[A-Za-z0-9.+-][A-Za-z0-9.+\-/% ]*$/
 function rewritten(document: Document.Parsed<ParsedNode>, record: YAMLMap.Parsed, row: RowTexts): string {
   const node = document.createNode(Object.fromEntries(row), { flow: true })
   const list = record.get('recovery', true) as unknown
+  const comment = isScalar(list) ? list.comment : null
   if (isSeq(list)) list.items.push(node)
-  else record.set('recovery' as never, document.createNode([node]) as never)
+  else {
+    const opened = document.createNode([node])
+    if (comment != null) opened.commentBefore = comment
+    record.set('recovery' as never, opened as never)
+  }
   return document.toString({ lineWidth: 0, flowCollectionPadding: false })
 }

@@ -41,7 +41,7 @@ export function captureLayout(lines: readonly string[], settings: CaptureSetting
   return columnsOf(rows, { delimiter, ...decimal }, settings)
 }
 
-export function cellsOf(line: string, delimiter: string): readonly string[] {
+function cellsOf(line: string, delimiter: string): readonly string[] {
   return Papa.parse<string[]>(line, { delimiter }).data[0] ?? ['']
 }
 

@@ -101,7 +101,7 @@ export function rampTruth(part: RampTruth) {
 }
 
 /** True current of a commutation: exactly the charge-control waveform. */
-export function rampCourse(part: RampTruth): Course {
+function rampCourse(part: RampTruth): Course {
   const { peakReverseCurrent, timeToPeak } = rampTruth(part)
   return (time) => {
     if (time < -part.current / part.slope) return part.current
@@ -111,7 +111,7 @@ export function rampCourse(part: RampTruth): Course {
 }
 
 /** Reverse voltage: a drop while it conducts, then straight to the blocking voltage from the peak on. */
-export function voltageCourse(part: RampTruth): Course {
+function voltageCourse(part: RampTruth): Course {
   const { timeToPeak } = rampTruth(part)
   return (time) => part.voltage * Math.min(1, Math.max(0, (time - timeToPeak) / Math.max(part.voltageFall, 1e-12)))
 }

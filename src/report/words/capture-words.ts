@@ -4,7 +4,7 @@ import { sentence } from './sentence.ts'
 import { cautionText } from './words.ts'
 
 /** One sentence per defect: what is the matter, the numbers, what to do next (pattern language: sentence.ts). */
-export const captureWarningWords: Readonly<Record<CaptureCaveatCode, string>> = {
+const captureWarningWords: Readonly<Record<CaptureCaveatCode, string>> = {
   'bandwidth-too-low':
     'The stated bandwidth rises in {rise:s}, too slow for a peak reached {timeToPeak:s} after the zero crossing: the peak is read low and late. ' +
     'Use a faster probe or oscilloscope, or a lower slope.',
