@@ -53,6 +53,7 @@ export const caveatCodes = [
   'order-differs-at-load',
   'thermal-lost',
   'profile-unsettled',
+  'odds-beyond-list',
 ] as const
 
 export type CaveatCode = (typeof caveatCodes)[number]

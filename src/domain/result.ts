@@ -171,10 +171,21 @@ export interface DocumentHead {
   readonly inputs: readonly { readonly path: string; readonly sha256: string }[]
 }
 
+/** What became of the parts that a ranking of very many does not list. */
+export interface NotListed {
+  readonly count: number
+  /** Their stage loss is above that of the last one listed; they were not judged further. */
+  readonly costlier: number
+  /** Each part once, under the first rule it was found to break. */
+  readonly rejected: readonly { readonly code: string; readonly count: number }[]
+}
+
 /** Result of `rank`. */
 export interface RankResult extends DocumentHead {
   readonly stage: StageResult
   readonly candidates: readonly CandidateResult[]
+  /** Null where all candidates are listed. */
+  readonly not_listed: NotListed | null
   readonly verdict: Verdict
   readonly warnings: readonly Warning[]
   readonly cautions: readonly Caution[]

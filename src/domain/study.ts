@@ -4,6 +4,8 @@ import type { CandidateResult, Caution, DocumentHead, RankResult, StageResult, V
 export interface StudySettings {
   readonly seed: number
   readonly draws: number
+  /** At most so many candidates are listed and drawn; left out: 50. */
+  readonly top?: number
   /** Version of the tool, printed in every document. */
   readonly version: string
   /** Every file read, path as reached from the stage file, sorted. */

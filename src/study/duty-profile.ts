@@ -18,14 +18,13 @@ export interface ProfileResult {
   readonly losses: readonly (number | null)[]
 }
 
-/** Solves a candidate at every load of a profile, each with its own temperature. */
+/** Solves a candidate at every load of a profile, each with its own temperature; equal ones once. */
 export function runProfile(
   candidate: Candidate,
   profile: readonly DutyPoint[],
   records: readonly RectifierRecord[],
 ): ProfileResult {
-  const byInput = new Map<number, Candidate>()
-  const losses = profile.map((load) => lossAt(candidateAtInput(candidate, load.input, byInput, records), load))
+  const losses = lossesOver(candidate, profile, records)
   let hours = 0
   let wattHours: number | null = 0
   profile.forEach((load, index) => {
@@ -40,34 +39,76 @@ export function runProfile(
   }
 }
 
-/** The same part at another input: its calibration belongs to the voltage it blocks, so it is prepared anew once. */
-function candidateAtInput(
+function lossesOver(
   candidate: Candidate,
-  input: number | null,
-  known: Map<number, Candidate>,
+  profile: readonly DutyPoint[],
   records: readonly RectifierRecord[],
-): Candidate {
-  const { stage } = candidate
-  if (input === null || input === stage.input.voltage) return candidate
-  let found = known.get(input)
-  if (found === undefined) {
-    found = prepareCandidate({ ...stage, input: { ...stage.input, voltage: input } }, candidate.record, records)
-    known.set(input, found)
+): readonly (number | null)[] {
+  const losses = new Array<number | null>(profile.length).fill(null)
+  for (const [input, places] of placesByInput(candidate.stage, profile)) {
+    // One store at a time: a year may have hundreds of inputs.
+    const at = candidateAtInput(candidate, input, records)
+    const known = new Map<string, number | null>()
+    for (const place of places) {
+      const load = profile[place]!
+      const key = `${load.load} ${load.ambient}`
+      let loss = known.get(key)
+      if (loss === undefined) {
+        loss = lossAt(at, load)
+        known.set(key, loss)
+      }
+      losses[place] = loss
+    }
+    restore(at)
   }
-  return found
+  return losses
+}
+
+/** Positions in the profile of each input, as it is in the stage where the profile does not say. */
+function placesByInput(stage: Stage, profile: readonly DutyPoint[]): ReadonlyMap<number, readonly number[]> {
+  const places = new Map<number, number[]>()
+  profile.forEach(({ input }, index) => {
+    const voltage = input ?? stage.input.voltage
+    const known = places.get(voltage)
+    if (known === undefined) places.set(voltage, [index])
+    else known.push(index)
+  })
+  return places
+}
+
+/**
+ * The same part at another input. Its calibration belongs to the voltage it blocks: where that is the output's, the part
+ * is moved there; elsewhere it is prepared anew.
+ */
+function candidateAtInput(candidate: Candidate, input: number, records: readonly RectifierRecord[]): Candidate {
+  const { stage, kernel, record } = candidate
+  if (input === stage.input.voltage) return candidate
+  if (stage.kind === 'boost' || stage.kind === 'mains-boost') {
+    kernel.inputVoltage = input
+    return candidate
+  }
+  return prepareCandidate({ ...stage, input: { ...stage.input, voltage: input } }, record, records)
 }
 
 function lossAt(candidate: Candidate, load: DutyPoint): number | null {
   const { kernel, stage } = candidate
-  const reference = kernel.thermal.reference
   kernel.outputCurrent = stage.output.current * Math.max(load.load, leastLoad)
-  if (load.ambient !== null) kernel.thermal.reference = load.ambient
+  kernel.thermal.reference = load.ambient ?? stageReference(stage)
   placeConditions(kernel)
-  const loss = settle(kernel) ? stageLossOf(candidate, kernel.rows) : null
+  return settle(kernel) ? stageLossOf(candidate, kernel.rows) : null
+}
+
+/** Temperature of the surroundings, or of a case that is held. [K] */
+function stageReference({ cooling }: Stage): number {
+  return cooling.kind === 'case' ? cooling.caseTemperature : cooling.ambientTemperature
+}
+
+/** Puts the store back to the stage's own conditions. */
+function restore({ kernel, stage }: Candidate): void {
+  kernel.inputVoltage = stage.input.voltage
   kernel.outputCurrent = stage.output.current
-  kernel.thermal.reference = reference
+  kernel.thermal.reference = stageReference(stage)
   placeConditions(kernel)
-  return loss
 }
 
 /** Stage with its output current changed; everything else as it is. */

@@ -24,9 +24,10 @@ export function orderCaveats(
   // A ranking that flips means another best part; lower places swapping at light load would only be noise.
   const flips = new Set<string>()
   stage.dutyProfile?.forEach(({ load }, index) => {
+    const cheapest = cheapestAt(ranked, profiles, index)
+    if (cheapest === order[0] || cheapest === undefined || flips.has(cheapest)) return
+    flips.add(cheapest)
     const there = orderBy(ranked, (part) => profiles.get(part.id)?.losses[index] ?? null)
-    if (there[0] === order[0] || there[0] === undefined || flips.has(there[0])) return
-    flips.add(there[0])
     found.push({ code: 'order-differs-at-load', candidate: '', data: { load, order: there.join(', ') } })
   })
   for (const part of candidates) {
@@ -35,6 +36,24 @@ export function orderCaveats(
       found.push({ code: 'thermal-lost', candidate: part.id, data: { share: part.thermal_lost_share! } })
   }
   return found
+}
+
+/** Id of the part with the least loss at one load: a year of quarter-hours is not sorted load by load. */
+function cheapestAt(
+  ranked: readonly CandidateResult[],
+  profiles: ReadonlyMap<string, ProfileResult>,
+  index: number,
+): string | undefined {
+  let best: string | undefined
+  let least = Number.POSITIVE_INFINITY
+  for (const { id } of ranked) {
+    const loss = profiles.get(id)?.losses[index] ?? Number.POSITIVE_INFINITY
+    if (best === undefined || loss < least || (loss === least && compareIds(id, best) < 0)) {
+      best = id
+      least = loss
+    }
+  }
+  return best
 }
 
 function orderBy(parts: readonly CandidateResult[], loss: (part: CandidateResult) => number | null): string[] {

@@ -9,12 +9,15 @@ import { blockingVoltageOf } from '../stage/create-kernel.ts'
 import { type Assessment, assessCandidate } from './assess-candidate.ts'
 import { prepareCandidate } from './candidate.ts'
 import { stageCautions } from './cautions.ts'
-import { type ProfileResult, runProfile } from './duty-profile.ts'
+import { drawListed } from './draw-listed.ts'
+import type { ProfileResult } from './duty-profile.ts'
+import { listParts, usualListing } from './list-parts.ts'
 import { deliversCold } from './nominal-point.ts'
 import { notCovered } from './not-covered.ts'
 import { orderCaveats } from './order-caveats.ts'
+import { askFor, doAllSteps, type PartSteps, type PartWork } from './part-work.ts'
 import { pointCaveats, sortCaveats, stageCaveats } from './point-caveats.ts'
-import { drawAll, verdictOf, withDraws } from './uncertainty.ts'
+import { verdictOf, withDraws } from './uncertainty.ts'
 
 /** Named in every result: which event the energies belong to. */
 export const lossModel = 'charge control; voltage moves after the peak'
@@ -27,13 +30,27 @@ export const lossModel = 'charge control; voltage moves after the peak'
  * @throws StudyRefusal When there is no candidate, or the stage cannot deliver its power.
  */
 export function rank(stage: Stage, records: readonly RectifierRecord[], settings: StudySettings): RankResult {
-  const parts = chooseCandidates(stage, records)
-  const assessments = assessAll(stage, parts, records)
-  const profiles = profileAll(stage, assessments, records)
-  const drawn = settings.draws > 0 ? drawAll(stage, assessments, settings.seed, settings.draws) : null
-  const verdict = drawn === null ? nominalVerdict(assessments) : verdictOf(stage, assessments, drawn)
+  return doAllSteps(rankSteps(stage, records, settings))
+}
+
+/** {@link rank} step by step: who goes through the steps decides where the work on the parts is done. */
+export function* rankSteps(
+  stage: Stage,
+  records: readonly RectifierRecord[],
+  settings: StudySettings,
+): PartSteps<RankResult> {
+  const { seed, draws, top = usualListing } = settings
+  const testRectifiers = records.filter(({ id }) => id === stage.switch.turnOn?.rectifier)
+  const competing = { stage, parts: chooseCandidates(stage, records), testRectifiers, seed, draws }
+  const listing = yield* listParts(competing, top)
+  const { parts } = listing
+  const work = { ...competing, parts }
+  const assessments = assessAll(stage, parts, testRectifiers)
+  const profiles = yield* profileAll(work, assessments)
+  const listed = draws > 0 ? yield* drawListed(work, assessments, listing) : null
+  const verdict = listed === null ? nominalVerdict(assessments) : verdictOf(stage, assessments, listed.drawn)
   const results = assessments.map(({ result }) => ({
-    ...(drawn === null ? result : withDraws(result, drawn)),
+    ...(listed === null ? result : withDraws(result, listed.drawn)),
     ...profileFields(profiles.get(result.id)),
   }))
   const candidates = placeRanks(results)
@@ -41,12 +58,14 @@ export function rank(stage: Stage, records: readonly RectifierRecord[], settings
     ...documentHead(settings),
     stage: stageResult(stage, assessments, candidates),
     candidates,
+    not_listed: listing.notListed,
     verdict,
     warnings: warningsOf([
       ...assessments.flatMap((each) => candidateCaveats(each)),
       ...stageCaveats(assessments),
-      ...incumbentCaveats(stage, parts),
+      ...incumbentCaveats(stage, competing.parts),
       ...orderCaveats(stage, candidates, profiles),
+      ...(listed?.caveats ?? []),
     ]),
     cautions: stageCautions(stage, parts),
     not_covered: notCovered(stage),
@@ -154,15 +173,15 @@ function nominalVerdict(assessments: readonly Assessment[]): Verdict {
   }
 }
 
-function profileAll(
-  stage: Stage,
+function* profileAll(
+  work: Omit<PartWork, 'kind'>,
   assessments: readonly Assessment[],
-  records: readonly RectifierRecord[],
-): Map<string, ProfileResult> {
-  const profile = stage.dutyProfile
-  if (profile === null) return new Map()
+): PartSteps<ReadonlyMap<string, ProfileResult>> {
+  if (work.stage.dutyProfile === null) return new Map()
   const settled = assessments.filter(({ point }) => point !== null)
-  return new Map(settled.map(({ candidate, result }) => [result.id, runProfile(candidate, profile, records)]))
+  const parts = settled.map(({ candidate }) => candidate.record)
+  const profiles = yield* askFor({ ...work, kind: 'profile', parts })
+  return new Map(profiles.map((profile, index) => [parts[index]!.id, profile]))
 }
 
 function profileFields(

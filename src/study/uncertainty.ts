@@ -53,7 +53,7 @@ export function verdictOf(stage: Stage, assessments: readonly Assessment[], draw
   return {
     best: decision.best,
     decided: decision.decided,
-    tied: decision.tied,
+    tied: decision.tied.filter((id) => assessments.some(({ result }) => result.id === id)),
     runner_up: decision.runnerUp,
     gap_w: decision.gap,
     gap_low_w: decision.gapInterval?.low ?? null,

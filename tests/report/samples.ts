@@ -173,6 +173,7 @@ export function rankSample(): RankResult {
       assumed: [{ path: 'switch.voltage_fall', value: '20 ns' }],
     },
     candidates: [base, second, rejected, lost],
+    not_listed: null,
     verdict: {
       best: base.id,
       decided: false,
