@@ -17,6 +17,9 @@ export interface EventWindow {
 /** Averaged samples across the shorter of rise to the peak and width of the reversal; more bring nothing. */
 const enough = { ramp: 150, step: 400 }
 
+/** Samples below which a window holds no event that could be fitted. */
+export const leastWindow = 16
+
 /** Cuts the event out: plateau before it, tail and quiet end after it. */
 export function eventWindow(
   waveform: Waveform,

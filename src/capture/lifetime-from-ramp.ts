@@ -1,5 +1,6 @@
 import { chargeAtTurnOff, timeToPeak } from '../models/charge-control.ts'
 import { findRoot } from '../numerics/find-root.ts'
+import { allPositive } from './is-sound.ts'
 
 /** Carrier lifetime whose steady charge gives the measured time to the peak; null where none does. [s] */
 export function lifetimeFromRamp(input: {
@@ -9,6 +10,7 @@ export function lifetimeFromRamp(input: {
   readonly tailTime: number
 }): number | null {
   const { current, slope, tailTime } = input
+  if (!allPositive([current, slope, tailTime, input.timeToPeak])) return null
   const gap = (logarithm: number) => {
     const lifetime = Math.exp(logarithm)
     return timeToPeak({ current, slope, lifetime, tailTime, storedCharge: lifetime * current }) - input.timeToPeak

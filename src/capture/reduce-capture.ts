@@ -16,7 +16,7 @@ export interface CaptureInput {
   readonly refits: number
 }
 
-/** Reduces a capture to its figures; null where the record holds no fall from forward to reverse current. */
+/** Reduces a capture to its figures; null where no fall from forward to reverse current can be fitted. */
 export function reduceCapture(input: CaptureInput): ReducedCapture | null {
   const { waveform, fixture } = subtractReference(input.waveform, input.reference)
   const event = locateEvent(waveform.current)

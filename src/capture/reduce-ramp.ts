@@ -1,11 +1,12 @@
 import type { CaptureTrace, NothingMeasurable, ReducedCapture } from '../domain/capture.ts'
 import { type CaptureContext, instrumentTime, resolution } from './capture-context.ts'
 import { correctSkew } from './correct-skew.ts'
-import { type EventWindow, eventWindow } from './event-window.ts'
+import { type EventWindow, eventWindow, leastWindow } from './event-window.ts'
 import { channelQuantum } from './find-clipping.ts'
 import { lineAt } from './fit-line.ts'
 import { type FittedRamp, fitRamp, type WindowMarks } from './fit-ramp.ts'
 import { generalCaveats } from './general-caveats.ts'
+import { allPositive, knownDoubts } from './is-sound.ts'
 import { rampDefects } from './ramp-defects.ts'
 import { type RampFigures, rampFigures } from './ramp-figures.ts'
 import { reverseCurrentAt } from './recovery-curve.ts'
@@ -16,24 +17,29 @@ import { signOfVoltage } from './sign-of-voltage.ts'
 import { marksIn } from './window-marks.ts'
 
 /** Reduces a commutation at a set slope (PHYSICS: measured captures). */
-export function reduceRamp(given: CaptureContext): ReducedCapture {
+export function reduceRamp(given: CaptureContext): ReducedCapture | null {
   const voltageSign = signOfVoltage(given)
   const context = { ...given, waveform: correctSkew(given.waveform, given.settings.currentDelay) }
   const { settings } = context
   const window = eventWindow(context.waveform, context.event, 'ramp', voltageSign)
+  if (window.time.length < leastWindow) return null
   const marks = marksIn(window, context)
   const conditions = { instrument: instrumentTime(settings) }
   const ramp = fitRamp(window, marks, conditions)
+  const { fitted, curve, crossing } = ramp
+  if (!allPositive([ramp.current, curve.slope, curve.tailTime, fitted.noise]) || !Number.isFinite(crossing)) return null
   const figures = rampFigures(window, ramp, settings.recoveryTimeBy, settings.chargeUntil)
   const energy = recoveryEnergy(window, ramp)
   const shared = { offset: ramp.fitted.base, noise: ramp.fitted.noise, trace: traceOf(window, ramp) }
   const nothing = nothingMeasurable(context, ramp, figures)
+  if (nothing !== null && !allPositive([nothing.chargeUpperBound, nothing.timeUpperBound])) return null
   if (nothing !== null)
     return { figures: nothing, spread: {}, rowSpread: 0, caveats: generalCaveats(context, voltageSign), ...shared }
-  const { endDoubt: _, ...plain } = figures
+  const { endDoubt: _, chargeByEnd, ...plain } = figures
+  if (!allPositive([...Object.values(plain), ...chargeByEnd.map((row) => row.charge)])) return null
   const spread = rampSpread(context, window, marks, ramp, figures, energy)
   return {
-    figures: { kind: 'ramp', ...plain, voltage: energy?.voltage ?? null, energy: energy?.energy ?? null },
+    figures: { kind: 'ramp', ...plain, chargeByEnd, voltage: energy?.voltage ?? null, energy: energy?.energy ?? null },
     spread,
     rowSpread: rowSpread([spread.recoveryTime!, spread.charge!, spread.peakReverseCurrent!]),
     caveats: [...generalCaveats(context, voltageSign), ...rampDefects(context, window, ramp, figures, energy)],
@@ -110,7 +116,7 @@ function rampSpread(
   }
   if (energy !== null) spread.energy = Math.hypot(spread.charge!, 0.01)
   if (energy !== null) spread.voltage = 0.01
-  return spread
+  return knownDoubts(spread)
 }
 
 /** Share of the slope that the instrument still lacks where the line through zero begins. */
@@ -134,8 +140,9 @@ function traceOf(window: EventWindow, ramp: FittedRamp): CaptureTrace {
     current: Float64Array.from(kept, (k) => window.current[k]! - base),
     fitted: Float64Array.from(kept, (k) => {
       const t = window.time[k]!
-      if (t < ramp.onset) return lineAt(ramp.plateau, t) - base
-      return t < curve.corner ? lineAt(ramp.line, t) - base : -reverseCurrentAt(curve, t)
+      const tail = t < curve.corner ? lineAt(ramp.line, t) - base : -reverseCurrentAt(curve, t)
+      const drawn = t < ramp.onset ? lineAt(ramp.plateau, t) - base : tail
+      return Number.isFinite(drawn) ? drawn : window.current[k]! - base
     }),
     voltage: window.voltage === null ? null : Float64Array.from(kept, (k) => window.voltage![k]!),
   }

@@ -1,9 +1,10 @@
 import type { CaptureTrace, NothingMeasurable, ReducedCapture } from '../domain/capture.ts'
 import { type CaptureContext, instrumentTime, resolution } from './capture-context.ts'
-import { type EventWindow, eventWindow } from './event-window.ts'
+import { type EventWindow, eventWindow, leastWindow } from './event-window.ts'
 import { channelQuantum } from './find-clipping.ts'
 import { type FittedStep, fitStep } from './fit-step.ts'
 import { generalCaveats } from './general-caveats.ts'
+import { allPositive, knownDoubts } from './is-sound.ts'
 import { reverseCurrentAt } from './recovery-curve.ts'
 import { resampleStep } from './resample-step.ts'
 import { rowSpread } from './row-spread.ts'
@@ -13,21 +14,27 @@ import { type StepFigures, stepFigures } from './step-figures.ts'
 import { marksIn } from './window-marks.ts'
 
 /** Reduces a resistor-limited reversal (PHYSICS: measured captures, step fixture). */
-export function reduceStep(context: CaptureContext): ReducedCapture {
+export function reduceStep(context: CaptureContext): ReducedCapture | null {
   const { settings } = context
   const voltageSign = signOfVoltage(context)
   const window = eventWindow(context.waveform, context.event, 'step', voltageSign)
+  if (window.time.length < leastWindow) return null
   const marks = marksIn(window, context)
   const conditions = { instrument: instrumentTime(settings) }
   const shortest = Math.max(resolution(context), context.fixture?.edgeTime ?? 0)
   const step = fitStep(window, marks, conditions, shortest)
+  const { fitted, curve, crossing } = step
+  if (!allPositive([step.current, curve.tailTime, fitted.noise]) || !Number.isFinite(crossing + curve.corner))
+    return null
   const shared = { offset: step.fitted.base, noise: step.fitted.noise, trace: traceOf(window, step) }
   const nothing = nothingMeasurable(window, step, shortest)
+  if (nothing !== null && !allPositive([nothing.chargeUpperBound, nothing.timeUpperBound])) return null
   if (nothing !== null)
     return { figures: nothing, spread: {}, rowSpread: 0, caveats: generalCaveats(context, 1), ...shared }
   const figures = stepFigures(window, step, settings.recoveryTimeBy)
-  const spread = stepSpread(context, window, step, figures, shortest)
   const { endDoubt: _, ...plain } = figures
+  if (!allPositive(Object.values(plain).filter((value) => value !== null))) return null
+  const spread = stepSpread(context, window, step, figures, shortest)
   return {
     figures: { kind: 'step', ...plain },
     spread,
@@ -99,7 +106,7 @@ function stepSpread(
   const converter = channelQuantum(context.waveform.current) / Math.sqrt(12)
   const model =
     figures.diffusionLifetime === null ? 0 : 0.5 * Math.abs(Math.log(figures.diffusionLifetime / figures.lifetime))
-  return {
+  return knownDoubts({
     current: Math.hypot(noise.current, converter / figures.current),
     reverse: Math.hypot(noise.reverse, converter / figures.reverse),
     ...(figures.storageTime === null ? {} : { storageTime: Math.hypot(noise.storageTime, edge / figures.storageTime) }),
@@ -107,7 +114,7 @@ function stepSpread(
     until: noise.reverse,
     lifetime: Math.hypot(noise.lifetime, model),
     tailTime: noise.tailTime,
-  }
+  })
 }
 
 function traceOf(window: EventWindow, step: FittedStep): CaptureTrace {
@@ -127,8 +134,11 @@ function traceOf(window: EventWindow, step: FittedStep): CaptureTrace {
     fitted: Float64Array.from(kept, (k) => {
       const t = window.time[k]!
       // the edge has no model: it is drawn as it was sampled
-      if (Math.abs(t - step.crossing) < 1.5 * step.edgeTime) return window.current[k]! - base
-      return t < step.crossing ? step.forward.value - base : -reverseCurrentAt(curve, t)
+      const sampled = window.current[k]! - base
+      if (Math.abs(t - step.crossing) < 1.5 * step.edgeTime) return sampled
+      const drawn = t < step.crossing ? step.forward.value - base : -reverseCurrentAt(curve, t)
+      // a fit that means nothing (none measurable) may run out of numbers
+      return Number.isFinite(drawn) ? drawn : sampled
     }),
     voltage: window.voltage === null ? null : Float64Array.from(kept, (k) => window.voltage![k]!),
   }

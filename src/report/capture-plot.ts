@@ -10,7 +10,7 @@ const rows = 15
  */
 export function capturePlot(trace: CaptureTrace, width: number): readonly string[] {
   const { time, current, fitted } = trace
-  if (time.length < 2) return []
+  if (time.length < 2 || !(time[time.length - 1]! > time[0]!)) return []
   const columns = Math.max(16, Math.min(width - 10, 100))
   const [low, high] = extentOf(current, fitted)
   const [size, prefix] = prefixFor(Math.max(Math.abs(low), Math.abs(high)), 'A')

@@ -40,8 +40,12 @@ export function reduce(input: ReduceInput): ReduceResult {
   const uniform = seededStream('reduce', seed, settings.file).uniform
   const reduced = reduceCapture({ settings, waveform, reference, uniform, refits })
   if (reduced === null) {
-    const found = 'the current never falls from forward to reverse'
-    throw new StudyRefusal('range-outside', { found, expected: 'a record with a recovery event', path: 'file' })
+    const found = 'no fall from forward to reverse current can be fitted'
+    throw new StudyRefusal('range-outside', {
+      found,
+      expected: 'a record with one, its plateau and its tail',
+      path: 'file',
+    })
   }
   return { document: documentOf(input, reduced), trace: reduced.trace }
 }

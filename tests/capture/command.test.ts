@@ -123,7 +123,7 @@ describe('ebbwatt reduce', () => {
     writeFileSync(csv, '')
     expect(await refusal('clean', {})).toContain('file-empty')
     writeFileSync(csv, lines.map((line, k) => (k < 6 ? line : line.replace(/^([^,]*),.*/, '$1,0,0'))).join('\n'))
-    expect(await refusal('clean', {})).toContain('the current never falls from forward to reverse')
+    expect(await refusal('clean', {})).toContain('no fall from forward to reverse current can be fitted')
   })
 })
 
