@@ -10,6 +10,9 @@ const currents = [0.25, 1]
 const slopes = [1, 5]
 const rises = [0, 100]
 
+/** Slow parts saturate at tau I, where one row's rounding can turn the exponent a hair below zero: that is no contradiction. */
+const noticeable = 0.05
+
 /** Quantities with which the posterior-mean charge falls somewhere in the usual range: stored charge does not do that. */
 export function findFalling(rectifier: CalibratedRectifier): Caveat[] {
   const { recovery } = rectifier
@@ -21,7 +24,7 @@ export function findFalling(rectifier: CalibratedRectifier): Caveat[] {
     }
   }
   return (['current', 'slope', 'temperature'] as const)
-    .filter((quantity) => least[quantity] < 0)
+    .filter((quantity) => least[quantity] < -noticeable)
     .map((quantity) => ({ code: 'evidence-falls', candidate: rectifier.id, data: { quantity } }))
 }
 

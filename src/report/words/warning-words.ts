@@ -21,7 +21,7 @@ export const warningWords: Readonly<Record<CaveatCode, string>> = {
   'maximum-below-typical':
     'A maximum figure is below the typical one[ of the same property ({property})][: {maximum} against {typical}]. Check the grades of the rows.',
   'charge-computed':
-    'Qrr in [{row}|a recovery row] is exactly trr times I_RM over 2, so it was computed and not measured. It is not counted as a third reading.',
+    'Qrr in [{row}|a recovery row] is trr times I_RM over 2 within rounding, so it was most likely computed and not measured. It is not counted as a third reading.',
   'implausible-for-class':
     '[{property}|A figure][ in {row}] is far from what its class shows[ ({value} against {expected})]. ' +
     'Check the value, its unit and the class; the figure is used as it stands.',
@@ -67,8 +67,8 @@ export const warningWords: Readonly<Record<CaveatCode, string>> = {
     '[{what}|A thermal resistance] is not given and [{value:K/W} is assumed|a usual value is assumed]. Add it from the data sheet or the mounting.',
   // stage: the operating point
   'overshoot-not-included':
-    'Neither loop inductance nor capacitance is known, so the peak reverse voltage holds no overshoot: it is the blocking voltage alone. ' +
-    'State loop_inductance, or measure the peak, before the voltage margin is trusted.',
+    'Loop inductance or capacitance of the part is not known, so the peak reverse voltage holds no overshoot: it is the blocking voltage alone. ' +
+    'State loop_inductance and capacitance, or measure the peak, before the voltage margin is trusted.',
   'slope-limited':
     'The stated slope[ of {stated:A/us}] cannot be reached: voltage over loop inductance allows [{allowed:A/us}|less], which is used. ' +
     'Check the loop inductance or the slope.',
