@@ -52,10 +52,11 @@ Exit codes: 0 done, 1 internal fault, 2 input cannot be used, 3 no candidate is 
 First steps: ebbwatt start my-stage && ebbwatt rank my-stage/stage.yaml`
 
 function describeStudies(program: Command, settle: Settle): void {
-  studyCommand(program, 'rank', 'rank the candidate rectifiers of a stage: losses, temperature, margin, odds').action(
-    (stage: string, options: StudyOptions) =>
+  studyCommand(program, 'rank', 'rank the candidate rectifiers of a stage: losses, temperature, margin, odds')
+    .option('--top <n>', 'list at most so many; the others are counted', wholeNumber(2, 1e6), 50)
+    .action((stage: string, options: StudyOptions) =>
       settle(import('./commands/rank.ts').then(({ runRank }) => runRank(stage, options, session))),
-  )
+    )
   studyCommand(
     program,
     'trend',

@@ -19,6 +19,7 @@ export interface StudyOptions extends OutputOptions, RecordOptions {
   readonly only?: readonly string[]
   readonly seed: number
   readonly draws: number
+  readonly top?: number
 }
 
 /** Everything a study needs, read and checked. */
@@ -37,11 +38,17 @@ export async function readStudy(stagePath: string, options: StudyOptions, sessio
   settleDesk(desk, options.quiet === true, session)
   if (stage === null) throw new Error('a stage without a value and without a problem')
   const only = [...new Set(options.only ?? [])]
-  const { seed, draws } = options
+  const { seed, draws, top } = options
   return {
     stage: only.length === 0 ? stage : { ...stage, candidates: only },
     records,
-    settings: { seed, draws, version: session.version, inputs: inputsOf(desk, stagePath) },
+    settings: {
+      seed,
+      draws,
+      ...(top === undefined ? {} : { top }),
+      version: session.version,
+      inputs: inputsOf(desk, stagePath),
+    },
     files: [...desk.texts.keys()],
   }
 }

@@ -4,6 +4,7 @@ import { significant } from './format.ts'
 import { rankColumns } from './rank-columns.ts'
 import { type ColumnSpec, tableOf, textColumn } from './table-view.ts'
 import type { Block, ReportView } from './view-types.ts'
+import { type ReasonCode, shortReasons } from './words/reason-words.ts'
 import { measureWords } from './words/verdict-words.ts'
 
 /** Everything `rank` shows, in order. */
@@ -15,6 +16,7 @@ export function rankView(result: RankResult): ReportView {
     blocks.push({ kind: 'table', heading: 'Ranking', table: tableOf(columns, ranked), note: tableNote(ranked) })
   blocks.push(
     ...rejectedBlock(result.candidates),
+    ...notListedBlock(result.not_listed),
     { kind: 'text', heading: 'Verdict', text: result.verdict.text },
     ...doubtBlocks(result),
     ...closingBlocks(result),
@@ -30,6 +32,20 @@ function tableNote(ranked: readonly CandidateResult[]): string {
       ? ''
       : ` Low and high hold ${significant(level * 100)} % of the draws; Tj high is the 95th percentile.`
   return `Ranked by stage loss. Total is the sum of the six loss rows.${interval}`
+}
+
+/** The rest of very many, in numbers. */
+function notListedBlock(rest: RankResult['not_listed']): Block[] {
+  if (rest === null) return []
+  const costlier = {
+    lead: null,
+    text: `${rest.costlier} cost more than the last one listed; they were not judged further. --top lists more.`,
+  }
+  const rejected = rest.rejected.map(({ code, count }) => ({
+    lead: null,
+    text: `${count} rejected: ${shortReasons[code as ReasonCode] ?? code}.`,
+  }))
+  return listBlock(`Not listed: ${rest.count} parts`, 'plain', [...(rest.costlier > 0 ? [costlier] : []), ...rejected])
 }
 
 /** What carries the doubt and what to measure. */

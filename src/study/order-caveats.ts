@@ -15,11 +15,11 @@ export function orderCaveats(
   const found: Caveat[] = []
   const byTotal = orderBy(ranked, (part) => part.losses_w.total)
   if (differs(order, byTotal))
-    found.push({ code: 'order-by-total-differs', candidate: '', data: { order: byTotal.join(', ') } })
+    found.push({ code: 'order-by-total-differs', candidate: '', data: { order: inWords(byTotal) } })
   ranked[0]?.at_mains?.forEach(({ mains_v }, index) => {
     const there = orderBy(ranked, (part) => part.at_mains?.[index]?.stage_loss_w ?? null)
     if (differs(order, there))
-      found.push({ code: 'order-differs-at-mains', candidate: '', data: { mains: mains_v, order: there.join(', ') } })
+      found.push({ code: 'order-differs-at-mains', candidate: '', data: { mains: mains_v, order: inWords(there) } })
   })
   // A ranking that flips means another best part; lower places swapping at light load would only be noise.
   const flips = new Set<string>()
@@ -28,7 +28,7 @@ export function orderCaveats(
     if (cheapest === order[0] || cheapest === undefined || flips.has(cheapest)) return
     flips.add(cheapest)
     const there = orderBy(ranked, (part) => profiles.get(part.id)?.losses[index] ?? null)
-    found.push({ code: 'order-differs-at-load', candidate: '', data: { load, order: there.join(', ') } })
+    found.push({ code: 'order-differs-at-load', candidate: '', data: { load, order: inWords(there) } })
   })
   for (const part of candidates) {
     if (profiles.get(part.id)?.energy === null) found.push({ code: 'profile-unsettled', candidate: part.id, data: {} })
@@ -54,6 +54,11 @@ function cheapestAt(
     }
   }
   return best
+}
+
+/** Of a long order its beginning. */
+function inWords(order: readonly string[]): string {
+  return order.length > 8 ? `${order.slice(0, 8).join(', ')}, then ${order.length - 8} more` : order.join(', ')
 }
 
 function orderBy(parts: readonly CandidateResult[], loss: (part: CandidateResult) => number | null): string[] {

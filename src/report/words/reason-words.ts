@@ -31,3 +31,14 @@ export const reasonWords: Readonly<Record<ReasonCode, string>> = {
   'thermal-path-missing':
     'The record gives no thermal resistance that this cooling can be reckoned with: add junction_to_case or junction_to_ambient.',
 }
+
+/** The same in a few words, for counts of many parts. */
+export const shortReasons: Readonly<Record<ReasonCode, string>> = {
+  'voltage-margin': 'too little voltage margin',
+  'average-current': 'mean current above the rating',
+  'junction-over-limit': 'junction above its limit',
+  'no-stable-temperature': 'no stable junction temperature',
+  'runaway-at-maximum-leakage': 'runs away at the upper end of leakage',
+  'recovery-too-slow': 'recovery does not fit its interval',
+  'thermal-path-missing': 'no thermal path for this cooling',
+}

@@ -75,8 +75,12 @@ function rejectedCount(result: RankResult): string {
   return count === 1 ? 'One is rejected, with its reason.' : `${count} are rejected, each with its reason.`
 }
 
+/** So many names read as a sentence; of more the first are told, and how many more there are. */
+const mostNames = 8
+
 /** "A", "A and B", "A, B and C". */
 function list(names: readonly string[]): string {
+  if (names.length > mostNames) return `${names.slice(0, mostNames).join(', ')} and ${names.length - mostNames} more`
   if (names.length < 2) return names.join('')
   return `${names.slice(0, -1).join(', ')} and ${names[names.length - 1]}`
 }
