@@ -124,7 +124,8 @@ function withProfile(changed: readonly WhatIfControl[]): Stage {
 
 function showIssued(): void {
   const again = exactValues(rank(inputs.stage, inputs.records, settings))
-  const printed = [...document.querySelectorAll('section[id^="section-"] data')].map(({ value }) => Number(value))
+  const cells = [...document.querySelectorAll('section[id^="section-"] [data-value]')]
+  const printed = cells.map(({ dataset }) => Number(dataset.value))
   const worst = printed.reduce((most, value, index) => Math.max(most, distance(value, again[index])), 0)
   const agrees = printed.length === again.length && worst <= agreement
   const found = agrees

@@ -1,7 +1,7 @@
 import { createHash } from 'node:crypto'
 import { readFileSync } from 'node:fs'
 import { dirname, relative, sep } from 'node:path'
-import type { RectifierRecord } from '../domain/rectifier.ts'
+import type { RectifierRecord, RowPlace } from '../domain/rectifier.ts'
 import type { ReviewResult } from '../domain/review.ts'
 import { type ReviewInputs, renderReviewHtml } from '../report/review/render-review-html.ts'
 import { renderReviewMarkdown } from '../report/review/render-review-markdown.ts'
@@ -28,9 +28,9 @@ export async function runReview(stagePath: string, options: StudyOptions, sessio
   const { format } = chooseDelivery(options, ['html', 'markdown'])
   const { stage, records: read, settings, files } = await readStudy(stagePath, options, session)
   if (target !== undefined) checkTarget(target, files)
-  const records = read.map((record) => seenFromStage(record, stagePath))
+  const records = withPlaces(read, (place) => ({ ...place, file: seenFrom(stagePath, place.file) }))
   const result = await studyStage(stagePath, session, () => review(stage, records, settings))
-  const inputs = { stage, records: embedded(records, result, stage), settings }
+  const inputs = { stage, records: embedded(records, result, stage), settings: { ...settings, inputs: [] } }
   const text = format === 'html' ? htmlOf(result, inputs, session) : renderReviewMarkdown(result)
   if (target === undefined) session.print(text)
   else replaceFile(target, text, files)
@@ -46,26 +46,32 @@ function htmlOf(result: ReviewResult, inputs: ReviewInputs, { root }: Session): 
   })
 }
 
-/** The candidates and the rectifier of a measured turn-on: what the document needs to recalculate, and no more. */
+/**
+ * The candidates and the rectifier of a measured turn-on: what the document needs to recalculate, and no more. The
+ * names of rows stay, as figures are traced by them; where each stands in which file is printed once, in the ledger.
+ */
 function embedded(
   records: readonly RectifierRecord[],
   { rank }: ReviewResult,
   { switch: { turnOn } }: ReviewInputs['stage'],
 ): readonly RectifierRecord[] {
   const wanted = new Set([...rank.candidates.map(({ id }) => id), turnOn?.rectifier ?? ''])
-  return records.filter(({ id }) => wanted.has(id))
+  const kept = records.filter(({ id }) => wanted.has(id))
+  return withPlaces(kept, ({ name }) => ({ name, file: '', line: 0, column: 0 }))
 }
 
 /** Places by their path from the stage file, so that the document does not depend on the folder it was made from. */
-function seenFromStage<T>(value: T, stagePath: string): T {
-  if (Array.isArray(value)) return value.map((each) => seenFromStage(each, stagePath)) as T
+function seenFrom(stagePath: string, file: string): string {
+  return relative(dirname(stagePath), file).split(sep).join('/')
+}
+
+/** The same data with every place in it replaced. */
+function withPlaces<T>(value: T, replace: (place: RowPlace) => RowPlace): T {
+  if (Array.isArray(value)) return value.map((each) => withPlaces(each, replace)) as T
   if (value === null || typeof value !== 'object') return value
-  return Object.fromEntries(
-    Object.entries(value).map(([key, each]) => [
-      key,
-      key === 'file' && typeof each === 'string'
-        ? relative(dirname(stagePath), each).split(sep).join('/')
-        : seenFromStage(each, stagePath),
-    ]),
-  ) as T
+  const entries = Object.entries(value).map(([key, each]) => [
+    key,
+    key === 'place' ? replace(each as RowPlace) : withPlaces(each, replace),
+  ])
+  return Object.fromEntries(entries) as T
 }

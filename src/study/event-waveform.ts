@@ -3,7 +3,7 @@ import type { EventWaveform } from '../domain/review.ts'
 
 /** Points on each piece of the waveform. */
 const rampPoints = 24
-const tailPoints = 60
+const tailPoints = 40
 /** The tail is drawn for this many time constants. */
 const tailLength = 6
 
@@ -28,7 +28,9 @@ export function eventWaveform(id: string, event: EventResult | null, voltageFall
   const end = peakAt + Math.max(tailLength * tailTime, 1.5 * voltageFall)
   const time: number[] = [-lead]
   for (let k = 0; k <= rampPoints; k++) time.push((peakAt * k) / rampPoints)
-  for (let k = 1; k <= tailPoints; k++) time.push(peakAt + ((end - peakAt) * k) / tailPoints)
+  const tail = Array.from({ length: tailPoints }, (_, k) => peakAt + ((end - peakAt) * (k + 1)) / tailPoints)
+  // The moment the voltage stands still is a corner, which evenly spaced points would cut off.
+  time.push(...[...tail, peakAt + voltageFall].toSorted((a, b) => a - b))
   const currentAt = (t: number): number => {
     if (t <= 0) return current
     return t <= peakAt ? current - slope * t : -peak * Math.exp(-(t - peakAt) / tailTime)

@@ -7,7 +7,7 @@ import { trend } from './trend.ts'
 
 /** Parts whose curves are drawn along the axes, best first: more would hide each other. */
 const tracedParts = 6
-const steps = 21
+const steps = 17
 /** Draws that give a crossing its interval; solving every draw at every position is what takes the time. */
 const crossingDraws = 200
 
@@ -39,13 +39,13 @@ function requestOf(stage: Stage, ranked: RankResult, over: ReviewTrendQuantity):
     case 'frequency':
       return { over, from: stage.frequency / 3, to: stage.frequency * 3, steps, logarithmic: true }
     case 'load':
-      return { over, from: 0.1, to: 1, steps: 19, logarithmic: false }
+      return { over, from: 0.1, to: 1, steps: 10, logarithmic: false }
     case 'slope':
       return slope > 0 ? { over, from: slope / 4, to: slope * 4, steps, logarithmic: true } : null
     case 'ambient': {
       if (stage.cooling.kind === 'case') return null
       const { ambientTemperature: here } = stage.cooling
-      return { over, from: here - 40, to: here + 60, steps, logarithmic: false }
+      return { over, from: here - 40, to: here + 60, steps: 21, logarithmic: false }
     }
   }
 }

@@ -1,5 +1,6 @@
 import { escapeText } from '../charts/svg.ts'
 import type { Cell, Column } from '../view-types.ts'
+import { compactDrawing } from './compact-drawing.ts'
 import type { ReviewBlock, TableBlock } from './review-types.ts'
 
 /** One block as HTML. All text is escaped; drawings are markup already. */
@@ -14,7 +15,7 @@ export function blockMarkup(block: ReviewBlock): string {
     case 'table':
       return tableMarkup(block)
     case 'figure':
-      return `<figure><div class="drawing" tabindex="0" role="group" aria-label="${escapeText(block.caption)}">${block.svg}</div><figcaption>${escapeText(block.caption)}</figcaption></figure>`
+      return `<figure><div class="drawing" tabindex="0" role="group" aria-label="${escapeText(block.caption)}">${compactDrawing(block.svg)}</div><figcaption>${escapeText(block.caption)}</figcaption></figure>`
     case 'methods':
       return `<ul class="methods">${block.items
         .map(
@@ -25,9 +26,13 @@ export function blockMarkup(block: ReviewBlock): string {
   }
 }
 
-/** Mentions of a section become links to it. */
+/** Mentions of a section become links to it; a number and its unit stay on one line. */
 function prose(text: string): string {
-  return escapeText(text).replace(/\bsection (\d{1,2})\b/g, '<a href="#section-$1">section $1</a>')
+  const held = escapeText(text).replace(
+    /(\d) (?=(?:°C|%|[kMmµnp]?(?:W|V|A|Hz|F|C|J|s|Ω|K|H))(?![\p{L}\d]))/gu,
+    '$1\u00A0',
+  )
+  return held.replace(/\bsection (\d{1,2})\b/g, '<a href="#section-$1">section $1</a>')
 }
 
 function itemMarkup({ lead, text }: { readonly lead: string | null; readonly text: string }): string {
@@ -41,29 +46,31 @@ function tableMarkup({ heading, table, note, exact = false, long = false }: Tabl
     0,
     columns.findIndex(({ key, numeric }) => key && !numeric),
   )
+  const spoken = columns.every(({ numeric }) => !numeric)
   const heads = columns
-    .map((column) => `<th scope="col"${numberClass(column)}>${escapeText(headText(column))}</th>`)
+    .map((column) => `<th scope="col"${textClass(column)}>${escapeText(headText(column))}</th>`)
     .join('')
   const body = rows.map(
     (row) =>
-      `<tr>${row.map((cell, index) => cellMarkup(cell, columns[index]!, index === naming, exact)).join('')}</tr>`,
+      `<tr>${row.map((cell, index) => cellMarkup(cell, columns[index]!, index === naming, exact, spoken)).join('')}</tr>`,
   )
   return (
-    `<div class="scroll${long ? ' long' : ''}" tabindex="0" role="region" aria-label="${escapeText(heading)}"><table><caption>${escapeText(heading)}</caption>` +
+    `<div class="scroll${long ? ' long' : ''}" tabindex="0" role="region" aria-label="${escapeText(heading)}"><table${spoken ? ' class="words"' : ''}><caption>${escapeText(heading)}</caption>` +
     `<thead><tr>${heads}</tr></thead>\n<tbody>${body.join('\n')}</tbody></table></div>` +
     (note === null ? '' : `<p class="note">${prose(note)}</p>`)
   )
 }
 
-function cellMarkup({ text, value }: Cell, column: Column, naming: boolean, exact: boolean): string {
-  const whole = exact && column.numeric && typeof value === 'number'
-  const shown = whole ? `<data value="${value}">${escapeText(text)}</data>` : escapeText(text)
-  const name = naming ? 'th scope="row"' : 'td'
-  return `<${name}${numberClass(column)}>${shown}</${naming ? 'th' : 'td'}>`
+function cellMarkup({ text, value }: Cell, column: Column, naming: boolean, exact: boolean, spoken: boolean): string {
+  const shown = escapeText(text)
+  if (naming) return `<th scope="row">${shown}</th>`
+  const whole = exact && column.numeric && typeof value === 'number' ? ` data-value="${value}"` : ''
+  return `<td${whole}${spoken ? '' : textClass(column)}>${shown}</td>`
 }
 
-function numberClass({ numeric }: Column): string {
-  return numeric ? ' class="number"' : ''
+/** Numbers are what most cells hold, so texts are the ones that are marked. */
+function textClass({ numeric }: Column): string {
+  return numeric ? '' : ' class="t"'
 }
 
 function headText({ title, unit }: Column): string {

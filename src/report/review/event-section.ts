@@ -1,9 +1,8 @@
 import type { EventWaveform, EvidenceCurve, ReviewResult, RowComparison } from '../../domain/review.ts'
 import { lineChart } from '../charts/line-chart.ts'
 import { waveformChart } from '../charts/waveform-chart.ts'
-import { celsius, quantity, significant } from '../format.ts'
+import { celsius, quantity } from '../format.ts'
 import { type ColumnSpec, numberColumn, tableOf, textColumn } from '../table-view.ts'
-import { figureWords } from '../words/review-words.ts'
 import { timeUnit } from './operating-waveform.ts'
 import { type ReviewBlock, type ReviewSection, type TableBlock, tableBlock } from './review-types.ts'
 
@@ -87,26 +86,52 @@ function evidenceFigure(curve: EvidenceCurve): ReviewBlock {
   }
 }
 
-const scales = {
-  qrr_c: ['event.qrr_c', 'C'],
-  peak_reverse_a: ['event.peak_reverse_a', 'A'],
-  trr_s: ['event.trr_s', 's'],
-} as const
+interface RowLine {
+  readonly row: RowComparison
+  readonly given: ReadonlyMap<RowComparison['figure'], RowComparison>
+}
+
+/** One line a row, however many figures it states. */
+function rowLines(rows: readonly RowComparison[]): readonly RowLine[] {
+  const lines = new Map<string, { row: RowComparison; given: Map<RowComparison['figure'], RowComparison> }>()
+  for (const row of rows) {
+    const key = JSON.stringify([row.id, row.row])
+    const line = lines.get(key) ?? { row, given: new Map() }
+    line.given.set(row.figure, row)
+    lines.set(key, line)
+  }
+  return [...lines.values()]
+}
+
+const figures = [
+  ['qrr_c', 'Qrr', 'nC', 1e9],
+  ['peak_reverse_a', 'I_RM', 'A', 1],
+  ['trr_s', 'trr', 'ns', 1e9],
+] as const
 
 function rowTable(rows: readonly RowComparison[]): TableBlock {
-  const columns: readonly ColumnSpec<RowComparison>[] = [
-    textColumn('part', 'key', ({ id }) => id, true),
-    textColumn('row', 'row', ({ row }) => row),
-    textColumn('grade', 'row', ({ grade }) => grade),
-    numberColumn('current', 'A', 'row', ({ current_a }) => current_a),
-    numberColumn('slope', 'A/µs', 'row', ({ slope_a_per_s }) => slope_a_per_s, { scale: 1e-6 }),
-    numberColumn('junction', '°C', 'row', ({ junction_c }) => junction_c, { decimals: 0 }),
-    textColumn('figure', 'row', ({ figure }) => figureWords[scales[figure][0]] ?? figure),
-    textColumn('given', 'row', ({ figure, given }) => quantity(given, scales[figure][1])),
-    textColumn('fit', 'row', ({ figure, model }) => quantity(model, scales[figure][1])),
-    textColumn('fit over given', 'row', ({ given, model }) => significant(model / given)),
+  const columns: readonly ColumnSpec<RowLine>[] = [
+    textColumn('part', 'key', ({ row }) => row.id, true),
+    textColumn('row', 'row', ({ row }) => row.row.replace('recovery ', '')),
+    textColumn('grade', 'row', ({ row }) => row.grade),
+    textColumn(
+      'read at',
+      'row',
+      ({ row }) =>
+        `${quantity(row.current_a, 'A')}, ${quantity(row.slope_a_per_s, 'A/us')}, ${celsius(row.junction_c)}`,
+    ),
+    ...figures.flatMap(([figure, name, unit, scale]): readonly ColumnSpec<RowLine>[] => [
+      numberColumn(`${name} given`, unit, 'row', ({ given }) => given.get(figure)?.given ?? null, {
+        scale,
+        family: name,
+      }),
+      numberColumn(`${name} fit`, unit, 'row', ({ given }) => given.get(figure)?.model ?? null, {
+        scale,
+        family: name,
+      }),
+    ]),
   ]
-  return tableBlock('Given rows beside the fit', tableOf(columns, rows), {
+  return tableBlock('Given rows beside the fit', tableOf(columns, rowLines(rows)), {
     long: true,
     note: 'The fit under the condition of the row itself. It is not forced through a row: rows carry reading errors, and the class weighs in where rows are few. A row of grade maximum lies above the typical fit.',
   })

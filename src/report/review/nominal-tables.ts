@@ -22,6 +22,11 @@ export function kelvinColumn(title: string, value: (row: CandidateResult) => num
   return numberColumn(title, '°C', title, value, { decimals: 0, words: noTemperature })
 }
 
+/** A limit stands whether or not a part has a temperature. */
+export const limitColumn: Spec = numberColumn('limit', '°C', 'limit', ({ junction_limit_c }) => junction_limit_c, {
+  decimals: 0,
+})
+
 function noTemperature({ thermal }: CandidateResult): string | null {
   return thermal === 'none' ? 'none' : null
 }
@@ -77,7 +82,7 @@ const stageColumns: readonly Spec[] = [
 
 const heatColumns: readonly Spec[] = [
   kelvinColumn('junction', ({ junction_c }) => junction_c),
-  kelvinColumn('limit', ({ junction_limit_c }) => junction_limit_c),
+  limitColumn,
   numberColumn('ambient margin', 'K', 'heat', ({ ambient_margin_k }) => ambient_margin_k, { decimals: 0 }),
   kelvinColumn('switch junction', (row) => row.switch.junction_c),
   numberColumn('efficiency', '%', 'heat', ({ efficiency }) => efficiency, { scale: 100, decimals: 2 }),

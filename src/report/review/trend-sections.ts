@@ -3,7 +3,7 @@ import type { ReviewResult } from '../../domain/review.ts'
 import type { TrendResult } from '../../domain/study.ts'
 import { quantity } from '../format.ts'
 import { numberColumn, tableOf } from '../table-view.ts'
-import { kelvinColumn, partColumns } from './nominal-tables.ts'
+import { kelvinColumn, limitColumn, partColumns } from './nominal-tables.ts'
 import { type ReviewBlock, type ReviewSection, tableBlock } from './review-types.ts'
 import { efficiency, junction, sharesFigure, stageLoss, total, trendFigure, trendMarks } from './trend-figures.ts'
 import { crossingsList, limitsList, pointsTable, slopeItem } from './trend-tables.ts'
@@ -21,7 +21,7 @@ export function temperatureSection({ rank, trends }: ReviewResult): ReviewSectio
         ...partColumns,
         kelvinColumn('junction', ({ junction_c }) => junction_c),
         kelvinColumn('junction high', ({ junction_high_c }) => junction_high_c),
-        kelvinColumn('limit', ({ junction_limit_c }) => junction_limit_c),
+        limitColumn,
         numberColumn<CandidateResult>('ambient margin', 'K', 'heat', ({ ambient_margin_k }) => ambient_margin_k, {
           decimals: 0,
         }),
@@ -75,8 +75,7 @@ export function frequencySection({ trends: { frequency } }: ReviewResult): Revie
 
 export function frequencyBlocks(trend: TrendResult): ReviewBlock[] {
   return [
-    trendFigure(trend, 'Stage loss', 'stage loss (W)', stageLoss, trendMarks(trend)),
-    trendFigure(trend, 'Total loss caused by the rectifier', 'total (W)', total),
+    trendFigure(trend, 'Total loss of the stage', 'stage loss (W)', stageLoss, trendMarks(trend)),
     crossingsList(trend),
     limitsList(trend),
     pointsTable(trend, 'Stage loss along the frequency', 'W', stageLoss),

@@ -1,11 +1,12 @@
-import type { CandidateResult, RankResult } from '../../domain/result.ts'
+import type { CandidateResult, RankResult, Reason } from '../../domain/result.ts'
 import type { ReviewTrendQuantity } from '../../domain/review.ts'
 import type { TrendResult } from '../../domain/study.ts'
 import { lossBars } from '../charts/render-chart.ts'
 import { quantity } from '../format.ts'
 import { type ColumnSpec, numberColumn, tableOf, textColumn } from '../table-view.ts'
 import { visibleDeep } from '../visible.ts'
-import { words } from '../words/words.ts'
+import { reasonWords } from '../words/reason-words.ts'
+import { sentence } from '../words/sentence.ts'
 import { blockMarkup } from './block-markup.ts'
 import { nominalTables } from './nominal-tables.ts'
 import { operatingWaveform } from './operating-waveform.ts'
@@ -33,11 +34,10 @@ export function exactValues(result: RankResult): readonly number[] {
 
 /** The recalculated ranking beside the issued one. */
 export function whatIfMarkup(now: RankResult, issued: RankResult): string {
-  words(now)
   const leader = now.candidates.find(({ point }) => point !== null)
   const drawn = now.candidates.some(({ losses_w }) => losses_w.total !== null)
   const blocks: ReviewBlock[] = [
-    { kind: 'text', text: sentence(now, issued) },
+    { kind: 'text', text: decision(now, issued) },
     comparison(now, issued),
     ...(drawn
       ? [
@@ -62,7 +62,7 @@ export function whatIfMarkup(now: RankResult, issued: RankResult): string {
   return blocks.map((block) => blockMarkup(visibleDeep(block))).join('\n')
 }
 
-function sentence({ candidates }: RankResult, issued: RankResult): string {
+function decision({ candidates }: RankResult, issued: RankResult): string {
   const best = candidates[0]
   if (best === undefined || !best.accepted) return 'At these values no candidate is acceptable.'
   const before = issued.candidates[0]
@@ -89,9 +89,18 @@ function comparison(now: RankResult, issued: RankResult): ReviewBlock {
     }),
     numberColumn('junction', '°C', 'v', (row) => row.now.junction_c, { decimals: 0 }),
     numberColumn('junction as issued', '°C', 'v', (row) => row.issued?.junction_c ?? null, { decimals: 0 }),
-    textColumn('why not', 'v', (row) => row.now.reasons.map(({ text }) => text).join(' ') || null),
+    textColumn('why not', 'v', (row) => row.now.reasons.map(reasonText).join(' ') || null),
   ]
   return tableBlock('Ranking at the moved values, beside the issued one', tableOf(columns, rows))
+}
+
+function reasonText({ code, value, limit }: Reason): string {
+  const numbers = { ...(value === null ? {} : { value }), ...(limit === null ? {} : { limit }) }
+  return isReason(code) ? sentence(reasonWords[code], numbers) : code
+}
+
+function isReason(code: string): code is keyof typeof reasonWords {
+  return Object.hasOwn(reasonWords, code)
 }
 
 function difference(one: number | null, other: number | null | undefined): number | null {
