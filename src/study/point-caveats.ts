@@ -1,6 +1,6 @@
 import type { Caveat, CaveatCode } from '../domain/caveat.ts'
 import type { SentenceData } from '../domain/result.ts'
-import { recoveryTimeFactor, timeToPeak } from '../models/charge-control.ts'
+import { chargeAtTurnOff, recoveryTimeFactor, timeToPeak } from '../models/charge-control.ts'
 import { statedSlopeAt } from '../stage/book-instant.ts'
 import type { RecoveryEvent } from '../stage/kernel.ts'
 import { assumedCaseToSink, assumedJunctionToCase, assumedResistances } from '../stage/thermal-network.ts'
@@ -60,18 +60,9 @@ function currentCaveats({ kernel }: Candidate, { event }: NominalPoint, add: Add
 
 function timeCaveats({ kernel }: Candidate, { event }: NominalPoint, add: Add): void {
   const { hot, instant } = event
-  if (hot.outcome === 'residual') {
+  if (hot.outcome === 'residual' || hot.outcome === 'residual-gone') {
     const idle = Math.max(1 - instant.duty - instant.conductionShare, 0) / kernel.frequency
-    const slopeOfDecay = (instant.peak * kernel.hotShare * kernel.frequency) / instant.conductionShare
-    const needed =
-      timeToPeak({
-        current: 0,
-        slope: slopeOfDecay,
-        lifetime: hot.lifetime,
-        tailTime: hot.tailTime,
-        storedCharge: hot.storedCharge,
-      }) +
-      3 * hot.tailTime
+    const needed = idleNeeded(kernel, instant, hot)
     if (idle < needed) add('idle-too-short', { idle, needed })
     return
   }
@@ -89,6 +80,20 @@ function timeCaveats({ kernel }: Candidate, { event }: NominalPoint, add: Add): 
     if (time > longShare * available)
       add('recovery-share-of-interval', { interval, time, available, share: time / available })
   }
+}
+
+/** Time in which a part that recovers softly into the inductor becomes empty: ta,s + 3 tau_rr (PHYSICS 1). [s] */
+function idleNeeded(
+  { frequency, hotShare }: Candidate['kernel'],
+  { peak, conductionShare }: NominalPoint['instant'],
+  { lifetime, tailTime }: RecoveryEvent,
+): number {
+  const peakCurrent = peak * hotShare
+  const conductionTime = conductionShare / frequency
+  const storedCharge = chargeAtTurnOff({ peakCurrent, current: 0, conductionTime, lifetime })
+  return (
+    timeToPeak({ current: 0, slope: peakCurrent / conductionTime, lifetime, tailTime, storedCharge }) + 3 * tailTime
+  )
 }
 
 /** Abrupt recovery at the point, and at a tenth of its current, where many parts are worse. */

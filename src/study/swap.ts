@@ -157,10 +157,13 @@ function savingOf(from: CandidateResult, to: CandidateResult, drawn: DrawnStage 
   }
 }
 
-/** A swap is justified when the new part may be used and saves with the odds that decide a ranking. */
+/**
+ * A swap is justified when the new part may be used and saves with the odds that decide a ranking; and whatever it
+ * costs, when the part in use may not be used at all.
+ */
 function verdictOfSwap(from: CandidateResult, to: CandidateResult, odds: number | null): string {
   if (!to.accepted || from.id === to.id) return 'not-justified'
-  if (from.thermal === 'none') return 'justified'
+  if (!from.accepted) return 'justified'
   if (odds === null) return (from.stage_loss_w ?? 0) > (to.stage_loss_w ?? 0) ? 'not-settled' : 'not-justified'
   if (odds >= decidedOdds) return 'justified'
   return odds <= 1 - decidedOdds ? 'not-justified' : 'not-settled'

@@ -4,7 +4,7 @@ import { calibrate } from '../../src/evidence/calibrate.ts'
 import { recoveryAt } from '../../src/evidence/recovery-at.ts'
 import { ringingPeakVoltage } from '../../src/models/peak-reverse-voltage.ts'
 import { rank } from '../../src/study/rank.ts'
-import { rampRow, record } from '../evidence/records.ts'
+import { record } from '../evidence/records.ts'
 import { capacitive, hardEvent, storedCharge } from '../stage/by-hand.ts'
 import { carbide, kelvin, silicon, stage } from '../stage/samples.ts'
 import { alone, ranked, settings, warningCodes } from './settings.ts'
@@ -119,8 +119,14 @@ describe('the slope', () => {
   })
 
   it('without a gate, I_RM above 3 I + 5 A is said', () => {
-    const slow = silicon({ class: 'fast', recovery: [rampRow({ charge: 900e-9, peakReverseCurrent: 9 })] })
-    const light = stage({ cooling: cold, output: { current: 1.2 }, switch: { slope: { kind: 'given', slope: 3e9 } } })
+    const slow = silicon({ class: 'standard', recovery: [] })
+    const light = stage({
+      cooling: cold,
+      frequency: 50e3,
+      input: { voltage: 24 },
+      output: { voltage: 48, current: 1 },
+      switch: { slope: { kind: 'given', slope: 3e9 } },
+    })
     const { candidates, ...result } = ranked(light, slow)
     const { peak_reverse_a, current_a } = candidates[0]!.event!
     expect(peak_reverse_a).toBeGreaterThan(3 * current_a + 5)

@@ -48,7 +48,9 @@ export function swapVerdictWords(result: SwapResult): string {
   const saving = savingWords(result)
   switch (result.verdict) {
     case 'justified':
-      return `${change} is justified: ${saving}${oddsWords(result)}.`
+      return from.accepted
+        ? `${change} is justified: ${saving}${oddsWords(result)}.`
+        : `${change} is justified: ${from.id} is not acceptable in this stage; ${saving}${oddsWords(result)}.`
     case 'not-justified':
       return to.accepted
         ? `${change} is not justified: ${saving}${oddsWords(result)}.`
