@@ -9,7 +9,7 @@ import { createLineGrid } from './line-cycle.ts'
 import { thermalNetwork } from './thermal-network.ts'
 
 /** Junction at which the switch's resistance is taken when its temperature is not solved. [K] */
-export const assumedSwitchJunction = celsiusZero + 100
+const assumedSwitchJunction = celsiusZero + 100
 
 /** Where one kernel stands: a stage, a part, and what a sweep or a load changes. */
 export interface KernelSetup {
@@ -92,7 +92,7 @@ export function createKernel({ stage, record, rectifier }: KernelSetup): Kernel 
 }
 
 /** After a change of conditions or of the calibration: coefficients, capacitance at the blocking voltage, line nodes. */
-export function refreshKernel(kernel: Kernel, rectifier: CalibratedRectifier): void {
+function refreshKernel(kernel: Kernel, rectifier: CalibratedRectifier): void {
   kernel.coefficients.set(nominalCoefficients(rectifier))
   placeConditions(kernel)
   const voltage = kernel.instant.blockingVoltage

@@ -2,7 +2,7 @@ import type { StageKind } from '../domain/stage.ts'
 
 /**
  * The working store of one part at one operating point. Everything the solvers touch is allocated once here and
- * overwritten in place: a draw, a sweep point or a profile row costs no allocation (tests/bench/points.bench.ts).
+ * overwritten in place: a draw, a sweep point or a profile row costs no allocation (tests/bench/points.ts).
  */
 export interface Kernel {
   // Conditions of the stage, changed by sweeps and draws between solutions.
@@ -61,7 +61,7 @@ export interface Kernel {
   line: LineGrid
 }
 
-export interface GateDrive {
+interface GateDrive {
   readonly drive: number
   readonly resistance: number
   readonly inputCapacitance: number
@@ -72,7 +72,7 @@ export interface GateDrive {
 }
 
 /** A measured turn-on energy reduced to its base at the test condition; 0 energy when none was given. */
-export interface MeasuredBase {
+interface MeasuredBase {
   current: number
   voltage: number
   /** Energy without any rectifier at the test condition. [J] */
@@ -175,7 +175,7 @@ export interface RecoveryEvent {
 }
 
 /** A solution kept as the start of others: temperatures, crest of the line, mean inductor current. */
-export interface HeldStart {
+interface HeldStart {
   readonly temperatures: Float64Array
   crestCurrent: number
   current: number

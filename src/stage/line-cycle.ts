@@ -7,7 +7,7 @@ import { offVoltageHere, onVoltageAt, placeContinuous, placeDiscontinuous } from
 const farNodes = gaussLegendre(4)
 const layerNodes = gaussLegendre(8)
 const continuousNodes = gaussLegendre(12)
-export const lineNodeCount = 24
+const lineNodeCount = 24
 
 export function createLineGrid(): LineGrid {
   return {

@@ -104,7 +104,7 @@ function placeResidual(kernel: Kernel): void {
 }
 
 /** Junction temperatures that the present losses would cause. [K] */
-export function heatTargets(kernel: Kernel, out: Float64Array): void {
+function heatTargets(kernel: Kernel, out: Float64Array): void {
   const { thermal, rows, parts } = kernel
   const heat = switchPower(rows)
   const hot = rows[row.hotPart]!
