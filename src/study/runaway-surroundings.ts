@@ -1,7 +1,11 @@
+import { ambientForJunction } from '../stage/ambient-for-junction.ts'
 import { settle } from '../stage/thermal-balance.ts'
 import { hasThermalPath } from '../stage/thermal-network.ts'
 import type { Candidate } from './candidate.ts'
 import { atMaximumLeakage, deliversCold, highestSurroundings } from './nominal-point.ts'
+
+/** [K] */
+const rounding = 1e-6
 
 /**
  * Ambient (or case) temperature above which a part at maximum leakage has no stable junction temperature any more.
@@ -10,7 +14,12 @@ import { atMaximumLeakage, deliversCold, highestSurroundings } from './nominal-p
 export function runawaySurroundings(candidate: Candidate): number | null {
   const { kernel, stage, record, rectifier } = candidate
   if (rectifier.leakage === null || !hasThermalPath(stage, record) || !deliversCold(kernel)) return null
-  const edge = atMaximumLeakage(candidate, () => highestSurroundings(kernel, kernel.thermal.ceiling))
+  const { ceiling } = kernel.thermal
+  const edge = atMaximumLeakage(candidate, () => {
+    const highest = highestSurroundings(kernel, ceiling)
+    // Still rising where the search ends: hotter surroundings only make a hotter part.
+    return highest === null || ambientForJunction(kernel, ceiling) >= highest - rounding ? null : highest
+  })
   settle(kernel)
   return edge
 }

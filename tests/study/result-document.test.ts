@@ -130,3 +130,39 @@ describe('the other documents', () => {
     }
   })
 })
+
+/** The keys of INTERFACE that every candidate has, whatever became of it. */
+const candidateKeys =
+  'id rank accepted reasons class evidence point event event_maximum losses_w interval_w odds_best odds_error ' +
+  'thermal_lost_share junction_c junction_high_c thermal ambient_margin_k voltage_margin efficiency stage_loss_w switch ' +
+  'inductor_w snubber_w at_mains line weighted_w energy_kwh_per_year provenance'
+const innerKeys: Readonly<Record<string, string>> = {
+  point: 'duty mean_a ripple_a valley_a peak_a mode',
+  event:
+    'current_a slope_a_per_s blocking_v junction_c tau_s tau_rr_s stored_c peak_reverse_a ta_s trr_s qrr_c softness ' +
+    'rectifier_j switch_added_j base_j peak_reverse_v none',
+  losses_w: 'conduction recovery_rectifier recovery_switch capacitive leakage forward_recovery total',
+  interval_w: 'low high level',
+  switch: 'conduction_w turn_on_base_w turn_off_w stored_w junction_c',
+}
+
+it.each([
+  ['dc', stage()],
+  ['mains', mainsStage()],
+])('%s: every key of the interface is present in every candidate, the rejected ones included', (_, at) => {
+  const result = rank(at, parts, settings(20))
+  expect(result.candidates.map(({ accepted, thermal }) => [accepted, thermal])).toContainEqual([false, 'none'])
+  for (const candidate of result.candidates) {
+    const held = candidate as unknown as Record<string, Record<string, unknown> | null>
+    expect(Object.keys(held), candidate.id).toEqual(expect.arrayContaining(candidateKeys.split(' ')))
+    for (const [key, keys] of Object.entries(innerKeys)) {
+      if (held[key] !== null)
+        expect(Object.keys(held[key]!), `${candidate.id}: ${key}`).toEqual(expect.arrayContaining(keys.split(' ')))
+    }
+    expect(Object.keys(candidate.losses_w), 'no further loss rows').toEqual(innerKeys.losses_w!.split(' '))
+  }
+  const top = 'format tool seed draws inputs stage candidates verdict warnings cautions not_covered'
+  expect(Object.keys(result)).toEqual(expect.arrayContaining(top.split(' ')))
+  const verdict = 'best decided tied gap_w gap_low_w gap_high_w text sensitivity measure_next'
+  expect(Object.keys(result.verdict)).toEqual(expect.arrayContaining(verdict.split(' ')))
+})

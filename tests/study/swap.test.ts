@@ -3,6 +3,7 @@ import type { DutyPoint, Stage } from '../../src/domain/stage.ts'
 import { StudyRefusal } from '../../src/domain/study-refusal.ts'
 import { rank } from '../../src/study/rank.ts'
 import { swap } from '../../src/study/swap.ts'
+import { leakageRow } from '../evidence/records.ts'
 import { capacitive } from '../stage/by-hand.ts'
 import { carbide, kelvin, mainsStage, numbersIn, silicon, stage } from '../stage/samples.ts'
 import { linearPart, linearStage } from './linear-parts.ts'
@@ -161,6 +162,29 @@ describe('a swap', () => {
       settings(40),
     )
     expect(away).toMatchObject({ verdict: 'justified', saves_w: { median: null }, junction_change_k: null })
+  })
+
+  it('names the ambient at which the new part runs away at maximum leakage, and none where none does', () => {
+    const leaky = carbide({
+      id: 'leaky',
+      class: 'schottky',
+      leakage: [leakageRow({ voltage: 600, current: 30e-3, junction: kelvin(125) })],
+    })
+    const at = (to: string, celsius: number) =>
+      swap(
+        stage({
+          loopInductance: 0,
+          cooling: { kind: 'sink', ambientTemperature: kelvin(celsius), sinkToAmbient: 2, shared: false },
+        }),
+        [silicon(), carbide(), leaky],
+        { from: 'silicon', to },
+        settings(0),
+      )
+    const edge = at('leaky', 40).runaway_ambient_c!
+    const runsAway = (celsius: number) => at('leaky', celsius).to.reasons.map(({ code }) => code)
+    expect(runsAway(edge - 0.01)).not.toContain('runaway-at-maximum-leakage')
+    expect(runsAway(edge + 0.01)).toContain('runaway-at-maximum-leakage')
+    expect(at('carbide', 40).runaway_ambient_c, 'silicon carbide only gets hotter').toBeNull()
   })
 
   it('brings the cautions that belong to it', () => {
