@@ -35,6 +35,8 @@ export function clippedPeak(
 
 /** Samples in a row that noise would have moved. */
 const longRun = 12
+/** Of a converter's step: a quiet level between two codes flickers with half a step and may sit still on another code. */
+const twoCodes = 0.6
 /** Of the swing: with less noise than this an unclipped plateau is flat, too. */
 const leastNoise = 1e-4
 
@@ -43,7 +45,7 @@ const leastNoise = 1e-4
  * left the level on both sides. `side` is 1 for the highest reading, -1 for the lowest.
  */
 export function clippedPlateau(values: Float64Array, side: 1 | -1, noise: number, step: number): FoundClipping | null {
-  if (!(noise > 0.4 * step)) return null
+  if (!(noise > twoCodes * step)) return null
   let extreme = Number.NEGATIVE_INFINITY
   let other = Number.POSITIVE_INFINITY
   let run = 0

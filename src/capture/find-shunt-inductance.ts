@@ -21,5 +21,5 @@ export function inductiveJump(window: EventWindow, ramp: FittedRamp): number | n
   const noise = ramp.plateau.residual
   const jump = best / slope
   const span = ramp.current + ramp.curve.amplitude
-  return best > Math.max(4 * noise, 0.015 * span) && jump > 1.2 * window.interval ? jump : null
+  return best > Math.max(2.5 * noise, 0.01 * span) && jump > 1.2 * window.interval ? jump : null
 }

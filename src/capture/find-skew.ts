@@ -3,8 +3,9 @@ import type { FittedRamp } from './fit-ramp.ts'
 
 /**
  * Time from the corner of the current to the onset of the reverse voltage. [s]
- * The junction empties at the current's peak, and only then does the voltage move (charge control). The onset is the
- * line through 5 and 25 % of the final voltage, extended to the voltage of conduction. Null without a voltage that rises.
+ * The junction empties at the current's peak, and only then does the voltage move (charge control). The onset is read from
+ * the times of 5, 25 and 50 % of the final voltage: extended back along a line where the rise begins straight, along a
+ * parabola where it begins gently, and between the two by how the three times are spaced. Null without a voltage that rises.
  */
 export function voltageOnsetAfterPeak(
   window: EventWindow,
@@ -14,12 +15,21 @@ export function voltageOnsetAfterPeak(
 ): number | null {
   const volts = window.voltage
   if (volts === null || !(blocking - conducting > 5 * Math.max(1, Math.abs(conducting)))) return null
-  const early = reaches(window, volts, conducting + 0.05 * (blocking - conducting))
-  const late = reaches(window, volts, conducting + 0.25 * (blocking - conducting))
-  if (early === null || late === null) return null
-  const onset = early - (late - early) / 4
-  return onset - (ramp.fitted.curve.corner + ramp.fitted.curve.rounding)
+  const at = (share: number) => reaches(window, volts, conducting + share * (blocking - conducting))
+  const early = at(0.05)
+  const late = at(0.25)
+  const middle = at(0.5)
+  if (early === null || late === null || middle === null || !(late > early)) return null
+  const ratio = (middle - late) / (late - early)
+  const gentle = Math.min(1, Math.max(0, (spacing.straight - ratio) / (spacing.straight - spacing.gentle)))
+  const back = backward.straight + gentle * (backward.gentle - backward.straight)
+  return early - back * (late - early) - (ramp.fitted.curve.corner + ramp.fitted.curve.rounding)
 }
+
+/** (t50 − t25)/(t25 − t5) of a line and of a parabola: 25/20 and (7.07 − 5)/(5 − 2.24). */
+const spacing = { straight: 1.25, gentle: 0.75 }
+/** (t5 − t0)/(t25 − t5) of a line and of a parabola: 5/20 and 2.24/(5 − 2.24). */
+const backward = { straight: 0.25, gentle: 0.81 }
 
 /** Last crossing upwards before the voltage has reached half: noise on the flat part cannot fool it. */
 function reaches(window: EventWindow, volts: Float64Array, level: number): number | null {

@@ -54,19 +54,59 @@ function runningMean(values: Float64Array, width: number): Float64Array {
 }
 
 function locateIn(current: Float64Array): LocatedEvent | null {
-  const down = largestFall(current, 1)
-  const up = largestFall(current, -1)
-  if (!(Math.max(down.size, up.size) > 0)) return null
-  const inverted = up.size > 1.05 * down.size || (up.size > 0.97 * down.size && up.length < 0.3 * down.length)
+  const inverted = isInverted(current)
   const sign = inverted ? -1 : 1
-  const fall = inverted ? up : down
-  const levels = roughLevels(current, sign, fall)
-  return findFirst(current, sign, levels, inverted)
+  const fall = largestFall(current, sign)
+  return fall.size > 0 ? findFirst(current, sign, roughLevels(current, sign, fall), inverted) : null
+}
+
+/** A reading this much smaller than the opposite one is no reversal, only what the larger one leaves. */
+const oneSided = 0.05
+
+/** A direction that much faster than the other is the fall, whatever the record begins with. */
+const clearlyFaster = 3
+
+/**
+ * Forward conduction comes before the reversal, so the extreme that is reached first is the forward one. A record that
+ * begins in the middle of things is told by speed: the fall is one ramp, the way back goes through tail and quiet time.
+ */
+function isInverted(current: Float64Array): boolean {
+  const from = Math.floor(0.95 * current.length)
+  let base = 0
+  for (let k = from; k < current.length; k++) base += current[k]! / (current.length - from)
+  let low = base
+  let high = base
+  for (const value of current) {
+    if (value < low) low = value
+    if (value > high) high = value
+  }
+  if (Math.min(high - base, base - low) < oneSided * Math.max(high - base, base - low)) return base - low > high - base
+  const upper = base + 0.5 * (high - base)
+  const lower = base - 0.5 * (base - low)
+  const falling = fastestPass(current, 1, upper, lower)
+  const rising = fastestPass(current, -1, -lower, -upper)
+  if (falling * clearlyFaster < rising) return false
+  if (rising * clearlyFaster < falling) return true
+  return current.find((value) => value >= upper || value <= lower)! <= lower
+}
+
+/** Fewest samples from at least `upper` to at most `lower`; infinite where that never happens. */
+function fastestPass(current: Float64Array, sign: 1 | -1, upper: number, lower: number): number {
+  let lastHigh = -1
+  let fastest = Number.POSITIVE_INFINITY
+  for (let k = 0; k < current.length; k++) {
+    const value = sign * current[k]!
+    if (value >= upper) lastHigh = k
+    else if (value <= lower && lastHigh >= 0) {
+      fastest = Math.min(fastest, k - lastHigh)
+      lastHigh = -1
+    }
+  }
+  return fastest
 }
 
 interface Fall {
   readonly size: number
-  readonly length: number
   readonly high: number
   readonly low: number
 }
@@ -74,15 +114,13 @@ interface Fall {
 /** Largest drop from a maximum to a later minimum of sign × current. */
 function largestFall(current: Float64Array, sign: 1 | -1): Fall {
   let high = Number.NEGATIVE_INFINITY
-  let highIndex = 0
-  let best: Fall = { size: 0, length: 0, high: 0, low: 0 }
+  let best: Fall = { size: 0, high: 0, low: 0 }
   for (let k = 0; k < current.length; k++) {
     const value = sign * current[k]!
     if (value >= high) {
       high = value
-      highIndex = k
     } else if (high - value > best.size) {
-      best = { size: high - value, length: k - highIndex, high, low: value }
+      best = { size: high - value, high, low: value }
     }
   }
   return best

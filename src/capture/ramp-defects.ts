@@ -41,27 +41,27 @@ export function rampDefects(
   if (samples < fewestSamples) add('samples-too-few', { samples, wanted: fewestSamples })
   const clipped = clipping(context, ramp)
   if (clipped !== null) add('clipping', clipped)
-  // a jump or a cut peak bends the fit: what it says of baseline, ringing and skew is not to be believed
-  const jump = inductiveJump(window, ramp)
-  const span = figures.current + figures.peakReverseCurrent
-  if (jump === null && Math.abs(ramp.fitted.base) > offsetShare * span)
-    add('residual-offset', { offset: ramp.fitted.base, share: Math.abs(ramp.fitted.base) / span })
-  const ringing = jump === null && clipped === null ? tailRinging(window, ramp.fitted) : null
-  if (ringing !== null) add('ringing', { frequency: ringing.frequency, amplitude: ringing.amplitude })
-  const skew =
-    energy === null || jump !== null || clipped !== null
-      ? null
-      : voltageOnsetAfterPeak(window, ramp, energy.conducting, energy.voltage)
-  if (skew !== null && Math.abs(skew) > skewLimit(context, window, figures)) add('skew', { skew })
-  if (jump !== null)
-    add('shunt-inductance', {
-      jump,
-      error: jump * figures.slope,
-      inductance: jump * (context.settings.current.shunt ?? 0),
-    })
   const followed = window.time[window.time.length - 1]! - ramp.fitted.curve.corner
   const wanted = ramp.fitted.curve.tailTime * Math.log(1 / context.settings.chargeUntil)
-  if (followed < 0.9 * wanted) add('tail-truncated', { followed, wanted })
+  const truncated = followed < 0.9 * wanted
+  // a jump, a cut peak, a cut tail or a ringing bends the fit: what it then says of the other defects is not believed
+  const jump = inductiveJump(window, ramp)
+  const ringing = jump === null && clipped === null ? tailRinging(window, ramp.fitted) : null
+  const span = figures.current + figures.peakReverseCurrent
+  const offset = Math.abs(ramp.fitted.base)
+  const believed = jump === null && !truncated && offset > (ringing?.amplitude ?? 0)
+  if (believed && offset > offsetShare * span)
+    add('residual-offset', { offset: ramp.fitted.base, share: offset / span })
+  if (ringing !== null) add('ringing', { frequency: ringing.frequency, amplitude: ringing.amplitude })
+  const timed = energy !== null && jump === null && clipped === null && ringing === null
+  const skew = timed ? voltageOnsetAfterPeak(window, ramp, energy.conducting, energy.voltage) : null
+  if (skew !== null && Math.abs(skew) > skewLimit(context, window, figures)) add('skew', { skew })
+  const { shunt } = context.settings.current
+  if (jump !== null) {
+    const inductance = shunt === null ? {} : { inductance: jump * shunt }
+    add('shunt-inductance', { jump, error: jump * figures.slope, ...inductance })
+  }
+  if (truncated) add('tail-truncated', { followed, wanted })
   const lifetime = lifetimeFromRamp({ ...figures, tailTime: ramp.fitted.curve.tailTime })
   const conduction = (context.event.edge - context.event.first) * context.waveform.interval
   if (context.event.startVisible && lifetime !== null && chargedShare(conduction, lifetime) < chargedEnough)
@@ -71,7 +71,7 @@ export function rampDefects(
 
 function skewLimit(context: CaptureContext, window: EventWindow, figures: RampFigures): number {
   return Math.max(
-    0.06 * figures.timeToPeak,
+    0.08 * figures.timeToPeak,
     1.5 * window.interval,
     0.7 * resolution(context),
     2 * (instrumentTime(context.settings) ?? 0),

@@ -52,7 +52,7 @@ const leastPeak = 0.02
 
 function nothingMeasurable(context: CaptureContext, ramp: FittedRamp, figures: RampFigures): NothingMeasurable | null {
   const seen = figures.peakReverseCurrent > Math.max(5 * ramp.fitted.noise, leastPeak * figures.current)
-  const lasts = figures.timeToPeak + ramp.fitted.curve.tailTime > 1.5 * resolution(context)
+  const lasts = figures.timeToPeak + ramp.fitted.curve.tailTime > resolution(context)
   if (seen && lasts) return null
   const peak = Math.max(figures.peakReverseCurrent, 5 * ramp.fitted.noise)
   const time = Math.max(resolution(context), figures.timeToPeak + 2 * ramp.fitted.curve.tailTime)
