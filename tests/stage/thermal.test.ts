@@ -52,6 +52,36 @@ function checkRoot(kernel: Kernel, found: number | null): number | null {
   return gain
 }
 
+/** T ← T_ref + R_th P(T) until nothing moves (true) or a junction passes the search's end (false). */
+function iterated(kernel: Kernel): boolean | 'slow' {
+  const { thermal, temperatures, rows, parts } = kernel
+  temperatures.fill(thermal.reference)
+  for (let round = 0; round < 4000; round++) {
+    evaluate(kernel)
+    if (!kernel.delivers || temperatures[0]! > thermal.ceiling || temperatures[1]! > 1500) return false
+    const inSwitch = [
+      row.switchConduction,
+      row.turnOnBase,
+      row.turnOff,
+      row.stored,
+      row.recoverySwitch,
+      row.capacitive,
+    ].reduce((sum, k) => sum + rows[k]!, 0)
+    const hot = rows[row.hotPart]!
+    const other = rows[row.otherPart]!
+    const sink = thermal.reference + thermal.common * (inSwitch + hot + (parts - 1) * other)
+    const next = [
+      sink + thermal.junctionSelf * hot,
+      sink + thermal.switchSelf * inSwitch,
+      sink + thermal.junctionSelf * other,
+    ]
+    const moved = Math.max(...next.map((t, k) => (k === 2 && parts === 1 ? 0 : Math.abs(t - temperatures[k]!))))
+    temperatures.set(next)
+    if (moved < 1e-8) return true
+  }
+  return 'slow'
+}
+
 const hotPart = (microamps: number): RectifierRecord =>
   carbide({
     id: 'leaky',
@@ -115,6 +145,44 @@ describe('the junction settles at the lowest root of the heat balance', () => {
       { seed: 5, numRuns: 12 },
     )
     expect(Math.max(...gains), 'a root close to the edge met').toBeGreaterThan(0.8)
+  })
+
+  it('several junctions on one sink settle where plain iteration from below ends, or nowhere as it does', () => {
+    const seen = { settled: 0, none: 0 }
+    const drawn = fc.record({
+      sink: between(0.3, 8),
+      ambient: fc.integer({ min: 0, max: 80 }),
+      leak: fc.integer({ min: 0, max: 400 }).map((k) => 10 ** (1 + k / 100)),
+      parts: fc.integer({ min: 1, max: 3 }),
+      stores: fc.boolean(),
+    })
+    fc.assert(
+      fc.property(drawn, ({ sink, ambient, leak, parts, stores }) => {
+        const cooling = {
+          kind: 'sink',
+          ambientTemperature: kelvin(ambient),
+          sinkToAmbient: sink,
+          shared: true,
+        } as const
+        const at = stage({ cooling, parallel: { parts, imbalance: parts > 1 ? 0.2 : 0 } })
+        const kernel = kernelOf(at, stores ? silicon() : hotPart(leak))
+        const settled = settle(kernel)
+        const found = kernel.temperatures.slice()
+        const ended = iterated(kernel)
+        if (ended === 'slow') return
+        expect(settled, 'one outcome').toBe(ended)
+        if (!settled) {
+          seen.none++
+          return
+        }
+        seen.settled++
+        const junctions = parts > 1 ? [0, 1, 2] : [0, 1]
+        for (const k of junctions)
+          expect(Math.abs(found[k]! - kernel.temperatures[k]!), `junction ${k}`).toBeLessThan(1e-3)
+      }),
+      { seed: 9, numRuns: 80 },
+    )
+    expect(Math.min(seen.settled, seen.none), 'both outcomes met').toBeGreaterThan(5)
   })
 
   it('a shared sink carries both: temperatures are where the network puts the heat', () => {
