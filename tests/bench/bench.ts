@@ -48,12 +48,12 @@ if (!Number.isFinite(referenceSink())) throw new Error('the reference loop left 
 
 process.stdout.write(process.argv.includes('--json') ? `${JSON.stringify(figures, null, 2)}\n` : table())
 
-/** As many rounds, up to nine, as fit into a quarter of a minute on this machine as it is loaded now. */
+/** As many rounds, up to nine, as fit into some eight seconds on this machine as it is loaded now. */
 function startUpRounds(): number {
   const begun = performance.now()
   measureStartUp(1)
   const perRound = (performance.now() - begun) / 2e3
-  return Math.min(Math.max(Math.floor(15 / perRound), 1), 9)
+  return Math.min(Math.max(Math.floor(8 / perRound), 1), 9)
 }
 
 function table(): string {
