@@ -4,7 +4,7 @@ import type { RectifierRecord } from '../../src/domain/rectifier.ts'
 import type { Stage } from '../../src/domain/stage.ts'
 import { evaluate } from '../../src/stage/evaluate.ts'
 import { type Kernel, row } from '../../src/stage/kernel.ts'
-import { settle } from '../../src/stage/thermal-balance.ts'
+import { holdStart, settle, settleFromHeld } from '../../src/stage/thermal-balance.ts'
 import { leakageRow } from '../evidence/records.ts'
 import { between, carbide, kelvin, kernelOf, mainsStage, silicon, stage } from './samples.ts'
 
@@ -145,6 +145,45 @@ describe('the junction settles at the lowest root of the heat balance', () => {
       { seed: 5, numRuns: 12 },
     )
     expect(Math.max(...gains), 'a root close to the edge met').toBeGreaterThan(0.8)
+  })
+
+  it.each([
+    ['dc', stage],
+    ['mains', mainsStage],
+  ] as const)('%s: a neighbouring solution as the start changes neither outcome nor root', (_, make) => {
+    const seen = { settled: 0, none: 0 }
+    const drawn = fc.record({
+      sink: between(0.5, 10),
+      leak: fc.integer({ min: 0, max: 300 }).map((k) => 10 ** (1 + k / 100)),
+      shared: fc.boolean(),
+      shifts: fc.array(between(-2.5, 2.5), { minLength: 6, maxLength: 6 }),
+      stores: fc.boolean(),
+    })
+    fc.assert(
+      fc.property(drawn, ({ sink, leak, shared, shifts, stores }) => {
+        const cooling = { kind: 'sink', ambientTemperature: kelvin(50), sinkToAmbient: sink, shared } as const
+        const kernel = kernelOf(make({ cooling }), stores ? silicon() : hotPart(leak))
+        if (!settle(kernel)) return
+        holdStart(kernel)
+        const nominal = kernel.coefficients.slice()
+        for (const shift of shifts) {
+          kernel.coefficients.set(nominal)
+          kernel.coefficients[stores ? 0 : 14]! += shift * (stores ? 0.5 : 1)
+          kernel.coefficients[8]! *= 1 + shift / 20
+          const near = settleFromHeld(kernel)
+          const found = kernel.temperatures[0]!
+          const below = settle(kernel)
+          expect(near, 'one outcome').toBe(below)
+          if (!below) seen.none++
+          else {
+            seen.settled++
+            expect(Math.abs(found - kernel.temperatures[0]!), 'one root').toBeLessThan(1e-3)
+          }
+        }
+      }),
+      { seed: 4, numRuns: 60 },
+    )
+    expect(Math.min(seen.settled, seen.none), 'both outcomes met').toBeGreaterThan(5)
   })
 
   it('several junctions on one sink settle where plain iteration from below ends, or nowhere as it does', () => {
