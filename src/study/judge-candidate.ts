@@ -7,6 +7,7 @@ import { settle } from '../stage/thermal-balance.ts'
 import { hasThermalPath, junctionLimitOf } from '../stage/thermal-network.ts'
 import type { Candidate } from './candidate.ts'
 import { atInput, atMaximumLeakage, type NominalPoint, solvePoint, stageLossOf, totalLossOf } from './nominal-point.ts'
+import { runawaySurroundings } from './runaway-surroundings.ts'
 
 /** A candidate solved at the nominal parameters, and whether it may be used. */
 export interface Judgement {
@@ -43,7 +44,9 @@ export function judge(candidate: Candidate): Judgement {
     settledAtMaximumLeakage: lost === undefined ? settlesAtMaximumLeakage(candidate) : null,
     recovery: tightestRecovery(kernel, settled),
   })
-  const reasons = rejections.map(reasonOf)
+  const reasons = rejections.map((rejection) =>
+    rejection.code === 'runaway-at-maximum-leakage' ? runawayReason(candidate, inputs) : reasonOf(rejection),
+  )
   if (lost !== undefined) {
     reasons.push({ code: 'no-stable-temperature', text: '', value: lost.voltage, limit: null })
   }
@@ -60,6 +63,17 @@ function reasonOf({ code, value, limit }: Rejection): Reason {
   const offset = code === 'junction-over-limit' ? celsiusZero : 0
   const edge = (figure: number | null): number | null => (figure === null ? null : figure - offset)
   return { code, text: '', value: edge(value), limit: edge(limit) }
+}
+
+/** How warm the surroundings are, and how warm they may be at maximum leakage. */
+function runawayReason(candidate: Candidate, inputs: readonly InputPoint[]): Reason {
+  const edges = inputs.flatMap(({ voltage }) => atInput(candidate, voltage, () => runawaySurroundings(candidate)) ?? [])
+  return {
+    code: 'runaway-at-maximum-leakage',
+    text: '',
+    value: candidate.kernel.thermal.reference - celsiusZero,
+    limit: edges.length === 0 ? null : Math.min(...edges) - celsiusZero,
+  }
 }
 
 interface InputPoint {

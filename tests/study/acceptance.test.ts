@@ -1,4 +1,5 @@
 import { describe, expect, it } from 'vitest'
+import type { Stage } from '../../src/domain/stage.ts'
 import { rank } from '../../src/study/rank.ts'
 import { leakageRow, rampRow } from '../evidence/records.ts'
 import { carbide, kelvin, mainsStage, silicon, stage } from '../stage/samples.ts'
@@ -68,6 +69,15 @@ describe('each acceptance rule, on both sides of its edge', () => {
     expect(only.length, 'between accepted and lost lies runaway at maximum leakage').toBeGreaterThan(0)
     expect(only[0]).toMatchObject({ thermal: 'settled', accepted: false })
     expect(only[0]!.junction_c).not.toBeNull()
+    const { value, limit } = only[0]!.reasons[0]!
+    expect(value, 'the surroundings, in degrees Celsius').toBeCloseTo(85, 9)
+    expect(limit, 'the edge lies below them').toBeLessThan(85)
+    const cooler = {
+      ...hot,
+      cooling: { ...hot.cooling, ambientTemperature: kelvin(limit! - 0.01) } as Stage['cooling'],
+    }
+    const accepted = part.indexOf(only[0]!)
+    expect(alone(cooler, leaky([5, 8, 13, 21, 34, 55, 89, 144, 233, 377][accepted]!)).accepted).toBe(true)
     const lost = part.at(-1)!
     expect(lost).toMatchObject({ thermal: 'none', junction_c: null, stage_loss_w: null, ambient_margin_k: null })
     expect(reasonCodes(lost)).toEqual(['no-stable-temperature'])

@@ -23,7 +23,7 @@ export const reasonWords: Readonly<Record<ReasonCode, string>> = {
     'No stable junction temperature exists[ at {value:V} mains]: loss rises faster with temperature than heat leaves. ' +
     'Improve the cooling or take another part; no loss is stated because none would hold.',
   'runaway-at-maximum-leakage':
-    'A part at the upper end of leakage runs away[: {value:A} at the operating voltage, where {limit:A} is the edge]. ' +
+    'A part at the upper end of leakage runs away[: the surroundings are at {value:C_}, and {limit:C_} is the edge]. ' +
     'Improve the cooling, or take a higher voltage rating or another class.',
   'recovery-too-slow':
     'Recovery needs [at least {value:s}|longer] and does not fit its interval[ of {limit:s}]: its loss is a lower bound. ' +
