@@ -13,15 +13,15 @@ const apartKelvin = 20
 export function compareRows(record: RectifierRecord): Caveat[] {
   const ramps = record.recovery.filter((row): row is RampRow => row.fixture === 'ramp')
   return [
-    ...firstOf(pairs(ramps), (one, other) => hotBelowCold(record.id, one, other)),
-    ...firstOf(pairs(record.leakage), (one, other) => hotLeakageBelowCold(record.id, one, other)),
-    ...firstOf(pairs(ramps), (one, other) => maximumRecovery(record.id, one, other)),
-    ...firstOf(pairs(record.leakage), (one, other) =>
+    ...firstOf(ramps, (one, other) => hotBelowCold(record.id, one, other)),
+    ...firstOf(record.leakage, (one, other) => hotLeakageBelowCold(record.id, one, other)),
+    ...firstOf(ramps, (one, other) => maximumRecovery(record.id, one, other)),
+    ...firstOf(record.leakage, (one, other) =>
       alike(one.voltage, other.voltage, sameVoltage)
         ? maximumBelow(record.id, one, other, 'leakage', [one.current, other.current], (value) => `${value} A`)
         : null,
     ),
-    ...firstOf(pairs(record.forward), (one, other) =>
+    ...firstOf(record.forward, (one, other) =>
       alike(one.current, other.current, sameVoltage)
         ? maximumBelow(record.id, one, other, 'forward voltage', [one.drop, other.drop], (value) => `${value} V`)
         : null,
@@ -118,15 +118,14 @@ function below(one: number | null, other: number | null): boolean {
   return one !== null && other !== null && one < other
 }
 
-function pairs<R>(rows: readonly R[]): [R, R][] {
-  return rows.flatMap((row, index) => rows.slice(index + 1).map((other): [R, R] => [row, other]))
-}
-
 /** One caveat of a kind is enough to send the reader back to the record. */
-function firstOf<R>(list: readonly [R, R][], check: (one: R, other: R) => Caveat | null): Caveat[] {
-  for (const [one, other] of list) {
-    const found = check(one, other)
-    if (found) return [found]
+function firstOf<R>(rows: readonly R[], check: (one: R, other: R) => Caveat | null): Caveat[] {
+  for (const [index, one] of rows.entries()) {
+    // A list of all pairs would not fit into memory for a record of thousands of rows.
+    for (let next = index + 1; next < rows.length; next++) {
+      const found = check(one, rows[next]!)
+      if (found) return [found]
+    }
   }
   return []
 }
