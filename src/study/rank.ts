@@ -20,7 +20,7 @@ import { pointCaveats, sortCaveats, stageCaveats } from './point-caveats.ts'
 import { verdictOf, withDraws } from './uncertainty.ts'
 
 /** Named in every result: which event the energies belong to. */
-export const lossModel = 'charge control; voltage moves after the peak'
+const lossModel = 'charge control; voltage moves after the peak'
 
 /**
  * The main job: every candidate's losses, temperature, efficiency and margins at the stage's operating point, judged,

@@ -258,7 +258,14 @@ describe('parts in parallel', () => {
     const uneven = alone(stage({ parallel: { parts: 2, imbalance: 0.1 } }), silicon())
     expect(uneven.junction_c, 'the hot part is hotter').toBeGreaterThan(even.junction_c!)
     expect(uneven.event!.current_a).toBeCloseTo(0.55 * uneven.point!.valley_a, 9)
-    expect(uneven.losses_w.capacitive).toBeGreaterThanOrEqual(0)
+    const kernel = rowsAt(stage({ parallel: { parts: 2, imbalance: 0.1 } }), linear, 1)
+    const { valley, peak, conductionShare } = kernel.instant
+    const square = (valley * valley + valley * peak + peak * peak) / 3
+    const shares = 0.55 * 0.55 + 0.45 * 0.45
+    expect(kernel.rows[row.conduction], 'conduction of unequal shares').toBeCloseTo(
+      conductionShare * ((0.9 * (valley + peak)) / 2 + 0.1 * square * shares),
+      6,
+    )
   })
 })
 

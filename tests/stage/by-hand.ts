@@ -73,7 +73,7 @@ interface Ramp {
 }
 
 /** ta by bisection of its equation. */
-export function timeToPeak({ current, slope, tau, tail, charge }: Ramp): number {
+function timeToPeak({ current, slope, tau, tail, charge }: Ramp): number {
   const missing = (ta: number): number =>
     (tau - tail) *
       (1 - Math.exp(-(current / slope + ta) / tau) * (1 + (tau * current - charge) / (slope * tau * tau))) -

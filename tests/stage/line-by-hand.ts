@@ -65,7 +65,7 @@ export function angleAt(
 }
 
 /** Mean over a quarter of the line period, by the midpoint rule. */
-export function lineMean(angles: number, f: (angle: number) => number): number {
+function lineMean(angles: number, f: (angle: number) => number): number {
   let sum = 0
   for (let k = 0; k < angles; k++) sum += f(((k + 0.5) / angles) * (Math.PI / 2))
   return sum / angles

@@ -1,5 +1,4 @@
 import fc from 'fast-check'
-import { celsiusZero } from '../../src/domain/constants.ts'
 import type { RectifierRecord } from '../../src/domain/rectifier.ts'
 import type { Stage } from '../../src/domain/stage.ts'
 import { calibrate } from '../../src/evidence/calibrate.ts'
@@ -8,7 +7,7 @@ import { evaluate } from '../../src/stage/evaluate.ts'
 import type { Kernel } from '../../src/stage/kernel.ts'
 import { forwardRow, kelvin, leakageRow, place, rampRow, record } from '../evidence/records.ts'
 
-export { celsiusZero, kelvin }
+export { kelvin }
 
 type StageFields = Partial<Omit<Stage, 'input' | 'output' | 'inductor' | 'switch'>> & {
   readonly input?: Partial<Stage['input']>
