@@ -1,12 +1,13 @@
 /** The engine inside the review document: recalculates from the embedded inputs and fills the what-if box. */
 import type { RankResult } from './domain/result.ts'
-import type { ReviewTrendQuantity } from './domain/review.ts'
+import type { EventWaveform, ReviewTrendQuantity } from './domain/review.ts'
 import type { Stage } from './domain/stage.ts'
 import { StudyRefusal } from './domain/study-refusal.ts'
 import type { ReviewInputs } from './report/review/render-review-html.ts'
 import { sliderSteps } from './report/review/what-if-panel.ts'
 import { type WhatIfControl, whatIfControls, whatIfValue } from './report/review/what-if-quantities.ts'
 import { exactValues, whatIfMarkup, whatIfTrendMarkup } from './report/review/what-if-result.ts'
+import { eventWaveform } from './study/event-waveform.ts'
 import { rank } from './study/rank.ts'
 import { reviewTrend } from './study/review-trends.ts'
 import { stageAt } from './study/stage-variation.ts'
@@ -30,6 +31,12 @@ declare const document: {
   querySelectorAll(selector: string): Iterable<Node>
 }
 
+/** The stage with its values moved, and what comes of it. */
+interface Solved {
+  readonly stage: Stage
+  readonly result: RankResult
+}
+
 /** A burst of moves is answered once, after this pause. [ms] */
 const pause = 60
 const agreement = 1e-9
@@ -39,7 +46,7 @@ const settings = { ...inputs.settings, draws: 0 }
 const issued = rank(inputs.stage, inputs.records, settings)
 const controls = whatIfControls(inputs.stage, issued.stage)
 const trends = [...document.querySelectorAll('#what-if-trends details')]
-let present: { readonly stage: Stage; readonly result: RankResult } | null = null
+let present: Solved | null = null
 let waiting: ReturnType<typeof setTimeout> | undefined
 
 function at(id: string): Node {
@@ -63,6 +70,7 @@ at('back').addEventListener('click', asIssued)
 at('banner-back').addEventListener('click', asIssued)
 for (const each of trends) each.addEventListener('toggle', () => drawTrend(each))
 asIssued()
+at('without-script').hidden = true
 at('what-if').hidden = false
 
 function moved(): void {
@@ -102,14 +110,20 @@ function showWhatIf(changed: readonly WhatIfControl[]): void {
     clear(`${unusable.map(({ name }) => name).join(', ')}: a number above zero is wanted.`)
     return
   }
-  at('what-if-result').innerHTML = whatIfMarkup(present.result, issued)
+  at('what-if-result').innerHTML = whatIfMarkup(present.result, issued, firstWaveform(present))
   at('what-if-trends').hidden = false
   at('what-if-state').textContent =
     `What-if, not the issued result. Recalculated in ${Math.round(performance.now() - begun)} ms.`
   for (const each of trends) drawTrend(each)
 }
 
-function solve(changed: readonly WhatIfControl[]): { readonly stage: Stage; readonly result: RankResult } {
+/** The event of the best part that recovers hard. */
+function firstWaveform({ stage, result }: Solved): EventWaveform | null {
+  const waves = result.candidates.map(({ id, event }) => eventWaveform(id, event, stage.switch.voltageFall))
+  return waves.find((wave) => wave !== null) ?? null
+}
+
+function solve(changed: readonly WhatIfControl[]): Solved {
   const stage = changed.reduce(
     (one: Stage, { over }) => stageAt(one, over, whatIfValue(over, shownValue(over))),
     withProfile(changed),

@@ -39,7 +39,7 @@ function itemMarkup({ lead, text }: { readonly lead: string | null; readonly tex
   return `<li>${lead === null ? '' : `<strong>${escapeText(lead)}:</strong> `}${prose(text)}</li>`
 }
 
-/** A table in a region of its own that scrolls and can be focused; its first text column names the row. */
+/** A table in a box of its own that scrolls and can be focused; its first text column names the row. */
 function tableMarkup({ heading, table, note, exact = false, long = false }: TableBlock): string {
   const { columns, rows } = table
   const naming = Math.max(
@@ -55,7 +55,7 @@ function tableMarkup({ heading, table, note, exact = false, long = false }: Tabl
       `<tr>${row.map((cell, index) => cellMarkup(cell, columns[index]!, index === naming, exact, spoken)).join('')}</tr>`,
   )
   return (
-    `<div class="scroll${long ? ' long' : ''}" tabindex="0" role="region" aria-label="${escapeText(heading)}"><table${spoken ? ' class="words"' : ''}><caption>${escapeText(heading)}</caption>` +
+    `<div class="scroll${long ? ' long' : ''}" tabindex="0" role="group" aria-label="${escapeText(heading)}"><table${spoken ? ' class="words"' : ''}><caption>${escapeText(heading)}</caption>` +
     `<thead><tr>${heads}</tr></thead>\n<tbody>${body.join('\n')}</tbody></table></div>` +
     (note === null ? '' : `<p class="note">${prose(note)}</p>`)
   )

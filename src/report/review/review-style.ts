@@ -42,7 +42,7 @@ figcaption{font-size:.88rem;color:var(--quiet);max-width:46rem}
 .chart-paper{fill:var(--chart)}.chart-ink{stroke:var(--ink)}.chart-ink-fill{fill:var(--ink)}.chart-grid{stroke:var(--grid)}.chart-rim{stroke:var(--chart);stroke-width:3px;stroke-linejoin:round;paint-order:stroke}.chart-paper-line{stroke:var(--chart)}
 .what-if{--chart:var(--try-tint);border:3px double var(--try);background:var(--try-tint);padding:0 1.1rem 1rem;margin:2rem 0}
 .what-if h2{border:0;margin-top:1rem;color:var(--try)}
-.what-if caption::before,.what-if figcaption::before,.what-if .mark{content:"WHAT-IF ";color:var(--try);font-weight:700;letter-spacing:.04em}
+.what-if caption,.what-if figcaption,.what-if h3{color:var(--try)}
 .what-if .scroll.long thead th,.what-if thead th{background:var(--try-tint)}
 .controls{display:grid;grid-template-columns:repeat(auto-fill,minmax(17rem,1fr));gap:1rem;border:0;padding:0;margin:1rem 0}
 .control{display:grid;gap:.25rem}
@@ -61,7 +61,7 @@ button:disabled{color:var(--quiet);border-color:var(--rule);cursor:default}
 [hidden]{display:none}
 .moved{font-weight:700;color:var(--try)}
 footer{border-top:1px solid var(--rule);margin-top:3rem;padding-top:1rem;padding-bottom:2rem;font-size:.88rem;color:var(--quiet)}
-@media(max-width:40rem){dl{grid-template-columns:1fr;gap:0}dd{margin-bottom:.5rem}main,header,footer{padding-left:.9rem;padding-right:.9rem}h1{font-size:1.4rem}tbody th{position:sticky;left:0;background:var(--paper);max-width:11rem;white-space:normal;overflow-wrap:anywhere}.what-if tbody th{background:var(--try-tint)}.what-if{padding:0 .7rem .8rem}}
+@media(max-width:40rem){dl{grid-template-columns:1fr;gap:0}dd{margin-bottom:.5rem}main,header,footer{padding-left:.9rem;padding-right:.9rem}h1{font-size:1.4rem}tbody th{position:sticky;left:0;background:var(--paper);max-width:11rem;min-width:5rem;white-space:normal;overflow-wrap:break-word}.what-if tbody th{background:var(--try-tint)}.what-if{padding:0 .7rem .8rem}}
 @media screen and (prefers-color-scheme:dark){
 :root{--ink:#e4e6e3;--paper:#15181a;--rule:#4a5053;--quiet:#b0b5b4;--warn:#f0b95a;--alert:#ff9c86;--tint:#1f2427;--try:#b9aaf5;--try-tint:#1e1b2c;--chart:#15181a;--grid:#3b4144}
 .banner{background:#4b3a8f}

@@ -59,7 +59,7 @@ export function crossingsList({ over, crossings, draws }: TrendResult): ReviewBl
   }))
   return items.length === 0
     ? { kind: 'text', text: 'No two acceptable parts exchange their order within this range.' }
-    : { kind: 'list', heading: 'Crossings', tone: 'plain', items }
+    : { kind: 'list', heading: `Crossings along ${trendAxes[over].name}`, tone: 'plain', items }
 }
 
 export function limitsList(trend: TrendResult): ReviewBlock {
@@ -69,7 +69,7 @@ export function limitsList(trend: TrendResult): ReviewBlock {
   }))
   return items.length === 0
     ? { kind: 'text', text: 'No part meets a limit within this range.' }
-    : { kind: 'list', heading: 'Limits', tone: 'plain', items }
+    : { kind: 'list', heading: `Limits along ${trendAxes[trend.over].name}`, tone: 'plain', items }
 }
 
 export function slopeItem(study: SlopeStudy): { readonly lead: string; readonly text: string } {

@@ -15,7 +15,7 @@ export function whatIfPanel({ rank }: ReviewResult, stage: Stage): string {
   const missing =
     stage.cooling.kind === 'case' ? ' The case temperature is fixed in the stage, so there is no ambient to move.' : ''
   return [
-    '<noscript><p class="quiet">With scripts on, this document recalculates: frequency, load, slope, ambient and input can be moved.</p></noscript>',
+    '<p class="quiet screen-only" id="without-script">With scripts on, this document recalculates: frequency, load, slope, ambient and input can be moved.</p>',
     '<section class="what-if" id="what-if" aria-labelledby="title-what-if" hidden>',
     '<h2 id="title-what-if">What if?</h2>',
     `<p>Move a value and this box recalculates with the engine that made the document. Everything outside this box stays as issued, and so does a print. Figures here are nominal: no draws, so no intervals and no odds.${escapeText(missing)}</p>`,

@@ -1,5 +1,5 @@
 import type { CandidateResult, RankResult, Reason } from '../../domain/result.ts'
-import type { ReviewTrendQuantity } from '../../domain/review.ts'
+import type { EventWaveform, ReviewTrendQuantity } from '../../domain/review.ts'
 import type { TrendResult } from '../../domain/study.ts'
 import { lossBars } from '../charts/render-chart.ts'
 import { quantity } from '../format.ts'
@@ -8,6 +8,7 @@ import { visibleDeep } from '../visible.ts'
 import { reasonWords } from '../words/reason-words.ts'
 import { sentence } from '../words/sentence.ts'
 import { blockMarkup } from './block-markup.ts'
+import { waveformFigure } from './event-section.ts'
 import { nominalTables } from './nominal-tables.ts'
 import { operatingWaveform } from './operating-waveform.ts'
 import { pointTable } from './point-section.ts'
@@ -15,7 +16,7 @@ import { type ReviewBlock, tableBlock } from './review-types.ts'
 import { ambientBlocks, frequencyBlocks, loadBlocks, slopeBlocks } from './trend-sections.ts'
 
 /** The tables of a ranking that the printed document holds too, in its order. */
-export function exactTables(result: RankResult): readonly ReviewBlock[] {
+function exactTables(result: RankResult): readonly ReviewBlock[] {
   return [pointTable(result), ...nominalTables(result)]
 }
 
@@ -33,7 +34,7 @@ export function exactValues(result: RankResult): readonly number[] {
 }
 
 /** The recalculated ranking beside the issued one. */
-export function whatIfMarkup(now: RankResult, issued: RankResult): string {
+export function whatIfMarkup(now: RankResult, issued: RankResult, wave: EventWaveform | null): string {
   const leader = now.candidates.find(({ point }) => point !== null)
   const drawn = now.candidates.some(({ losses_w }) => losses_w.total !== null)
   const blocks: ReviewBlock[] = [
@@ -57,9 +58,10 @@ export function whatIfMarkup(now: RankResult, issued: RankResult): string {
             caption: `Currents at the moved values with ${leader.id}.`,
           } as const,
         ]),
+    ...(wave === null ? [] : [waveformFigure(wave)]),
     ...exactTables(now),
   ]
-  return blocks.map((block) => blockMarkup(visibleDeep(block))).join('\n')
+  return blocks.map(whatIfBlock).join('\n')
 }
 
 function decision({ candidates }: RankResult, issued: RankResult): string {
@@ -107,6 +109,22 @@ function difference(one: number | null, other: number | null | undefined): numbe
   return one === null || other == null ? null : one - other
 }
 
+/** Every heading and caption says that its figures are not the issued ones, also where no colour is seen. */
+function whatIfBlock(block: ReviewBlock): string {
+  const marked = (text: string) => `What-if: ${text}`
+  const plain = visibleDeep(block)
+  switch (plain.kind) {
+    case 'table':
+      return blockMarkup({ ...plain, heading: marked(plain.heading) })
+    case 'figure':
+      return blockMarkup({ ...plain, caption: marked(plain.caption) })
+    case 'list':
+      return blockMarkup({ ...plain, heading: plain.heading === null ? null : marked(plain.heading) })
+    default:
+      return blockMarkup(plain)
+  }
+}
+
 /** One trend around the moved values. */
 export function whatIfTrendMarkup(over: ReviewTrendQuantity, trend: TrendResult | null, best: string): string {
   if (trend === null) return blockMarkup({ kind: 'text', text: 'There is no such axis here.' })
@@ -116,5 +134,5 @@ export function whatIfTrendMarkup(over: ReviewTrendQuantity, trend: TrendResult 
     slope: () => slopeBlocks(trend, best),
     load: () => loadBlocks(trend),
   }[over]()
-  return blocks.map((block) => blockMarkup(visibleDeep(block))).join('\n')
+  return blocks.map(whatIfBlock).join('\n')
 }
