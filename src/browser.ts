@@ -167,7 +167,7 @@ function drawTrend(details: Node): void {
   const { stage, result } = present
   const over = details.dataset.over as ReviewTrendQuantity
   const trend = reviewTrend(stage, inputs.records, result, over, settings)
-  place.innerHTML = whatIfTrendMarkup(over, trend, result.candidates[0]?.id ?? '')
+  place.innerHTML = whatIfTrendMarkup(over, trend, result)
 }
 
 /** Says everywhere that values are moved: at the control, in the box, in the band that stays in sight. */

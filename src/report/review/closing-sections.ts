@@ -1,5 +1,5 @@
 import type { ConventionFigure, ReviewMethod, ReviewResult } from '../../domain/review.ts'
-import { quantity, significant } from '../format.ts'
+import { significant } from '../format.ts'
 import { numberColumn, tableOf, textColumn } from '../table-view.ts'
 import { type ReviewBlock, type ReviewSection, tableBlock } from './review-types.ts'
 
@@ -117,10 +117,6 @@ export function identitySection({ rank }: ReviewResult): ReviewSection {
           inputs,
         ),
       ),
-      {
-        kind: 'text',
-        text: `Stage in short: ${rank.stage.kind}, ${quantity(rank.stage.output_w, 'W')}, ${quantity(rank.stage.frequency_hz, 'Hz')}.`,
-      },
     ],
   }
 }

@@ -84,20 +84,20 @@ export function frequencyBlocks(trend: TrendResult): ReviewBlock[] {
 }
 
 export function slopeSection({ trends: { slope }, rank }: ReviewResult): ReviewSection {
-  return {
-    title: 'Loss against current slope',
-    blocks: slope === null ? [axisMissing] : slopeBlocks(slope, rank.candidates[0]?.id ?? ''),
-  }
+  const blocks = slope === null ? [axisMissing] : slopeBlocks(slope, rank.candidates)
+  return { title: 'Loss against current slope', blocks }
 }
 
-export function slopeBlocks(trend: TrendResult, best: string): ReviewBlock[] {
+export function slopeBlocks(trend: TrendResult, candidates: readonly CandidateResult[]): ReviewBlock[] {
+  // A part without stored charge has no shares that the slope could move.
+  const shown = candidates.find(({ event }) => (event?.qrr_c ?? 0) > 0) ?? candidates[0]
   return [
     {
       kind: 'text',
       text: `In watts alone a faster slope is cheaper until something else stops it: voltage, loop inductance, the saturation of the switch or a temperature. No noise level is claimed. The stage stands at ${quantity(trend.stage.slope_a_per_s, 'A/us')}.`,
     },
     trendFigure(trend, 'Stage loss', 'stage loss (W)', stageLoss, trendMarks(trend)),
-    sharesFigure(trend, best),
+    sharesFigure(trend, shown?.id ?? ''),
     {
       kind: 'list',
       heading: 'Knee and admissible edge',

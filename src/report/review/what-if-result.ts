@@ -126,12 +126,12 @@ function whatIfBlock(block: ReviewBlock): string {
 }
 
 /** One trend around the moved values. */
-export function whatIfTrendMarkup(over: ReviewTrendQuantity, trend: TrendResult | null, best: string): string {
+export function whatIfTrendMarkup(over: ReviewTrendQuantity, trend: TrendResult | null, now: RankResult): string {
   if (trend === null) return blockMarkup({ kind: 'text', text: 'There is no such axis here.' })
   const blocks = {
     frequency: () => frequencyBlocks(trend),
     ambient: () => ambientBlocks(trend),
-    slope: () => slopeBlocks(trend, best),
+    slope: () => slopeBlocks(trend, now.candidates),
     load: () => loadBlocks(trend),
   }[over]()
   return blocks.map(whatIfBlock).join('\n')
