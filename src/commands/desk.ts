@@ -1,3 +1,4 @@
+import type { TableCount } from '../domain/study.ts'
 import { formatProblem } from '../problems/format-problem.ts'
 import { type Problem, type Reading, sortProblems } from '../problems/problem.ts'
 import { CommandFailure } from './failure.ts'
@@ -10,10 +11,11 @@ export interface Desk {
   readonly fingerprints: Map<string, string>
   readonly problems: Problem[]
   readonly warnings: Problem[]
+  readonly tables: TableCount[]
 }
 
 export function openDesk(): Desk {
-  return { texts: new Map(), fingerprints: new Map(), problems: [], warnings: [] }
+  return { texts: new Map(), fingerprints: new Map(), problems: [], warnings: [], tables: [] }
 }
 
 /** Reads one file with its reader; null where that did not succeed, the reasons being on the desk. */

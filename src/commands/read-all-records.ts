@@ -82,6 +82,7 @@ async function readTables(
     session.progress('')
     if (catalogue === null) return []
     const { rows, badRows, records } = catalogue
+    desk.tables.push({ path, rows, used: records.length, leftOut: badRows })
     if (quiet !== true) session.tell(`${path}: ${rows} rows, ${records.length} used, ${badRows} left out\n`)
     return records
   })

@@ -48,6 +48,7 @@ export async function readStudy(stagePath: string, options: StudyOptions, sessio
       ...(top === undefined ? {} : { top }),
       version: session.version,
       inputs: inputsOf(desk, stagePath),
+      tables: desk.tables.map((table) => ({ ...table, path: seenFromStage(table.path, stagePath) })),
     },
     files: [...desk.texts.keys()],
   }
@@ -106,6 +107,10 @@ export function unknownIds(
 /** Paths as reached from the stage file, with slashes, so that the same inputs give the same bytes from any folder. */
 function inputsOf({ fingerprints }: Desk, stagePath: string): StudySettings['inputs'] {
   return [...fingerprints]
-    .map(([path, sha256]) => ({ path: relative(dirname(stagePath), path).split(sep).join('/'), sha256 }))
+    .map(([path, sha256]) => ({ path: seenFromStage(path, stagePath), sha256 }))
     .sort((one, other) => (one.path < other.path ? -1 : 1))
+}
+
+function seenFromStage(path: string, stagePath: string): string {
+  return relative(dirname(stagePath), path).split(sep).join('/')
 }

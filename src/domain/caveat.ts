@@ -54,6 +54,8 @@ export const caveatCodes = [
   'thermal-lost',
   'profile-unsettled',
   'odds-beyond-list',
+  // input
+  'table-rows-left-out',
 ] as const
 
 export type CaveatCode = (typeof caveatCodes)[number]

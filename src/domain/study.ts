@@ -10,6 +10,16 @@ export interface StudySettings {
   readonly version: string
   /** Every file read, path as reached from the stage file, sorted. */
   readonly inputs: readonly { readonly path: string; readonly sha256: string }[]
+  /** Tables of parts, with how many of their rows could be read. */
+  readonly tables?: readonly TableCount[]
+}
+
+/** Rows of a table of parts. */
+export interface TableCount {
+  readonly path: string
+  readonly rows: number
+  readonly used: number
+  readonly leftOut: number
 }
 
 /** Quantities a trend can run over; the unit is in the name. */

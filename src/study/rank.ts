@@ -66,6 +66,7 @@ export function* rankSteps(
       ...incumbentCaveats(stage, competing.parts),
       ...orderCaveats(stage, candidates, profiles),
       ...(listed?.caveats ?? []),
+      ...tableCaveats(settings),
     ]),
     cautions: stageCautions(stage, parts),
     not_covered: notCovered(stage),
@@ -141,6 +142,13 @@ function incumbentCaveats(stage: Stage, parts: readonly RectifierRecord[]): Cave
   const { incumbent } = stage
   if (incumbent === null || parts.some(({ id }) => id === incumbent)) return []
   return [{ code: 'incumbent-missing', candidate: '', data: { incumbent } }]
+}
+
+/** Tables from which rows are missing. */
+function tableCaveats({ tables = [] }: StudySettings): Caveat[] {
+  return tables
+    .filter(({ leftOut }) => leftOut > 0)
+    .map(({ path, ...counts }) => ({ code: 'table-rows-left-out', candidate: '', data: { table: path, ...counts } }))
 }
 
 /** Accepted by stage loss with their ranks, then rejected by id. */

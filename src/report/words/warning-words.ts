@@ -126,6 +126,9 @@ export const warningWords: Readonly<Record<CaveatCode, string>> = {
     'The order is different at [{load:%}|another] load[ ({order})]. Compare the yearly energy before deciding by full load.',
   'thermal-lost':
     'In [{share:%}|some] of the draws the part has no stable temperature. Improve its cooling or treat it as unsafe at this point.',
+  'table-rows-left-out':
+    '[{leftOut} of {rows}|Some] rows of [{table}|a table] have cells that cannot be read and are left out[; {used} are used]. ' +
+    'stderr names each cell; --strict refuses such a table.',
   'odds-beyond-list':
     'Odds are those against the [{drawn}|cheapest] cheapest acceptable parts; [{others:%}|some] of the draws go to parts beyond the list, ' +
     '[{last:%}|few] to the last [{batch}|ones] looked at. Costlier parts were not drawn.',
