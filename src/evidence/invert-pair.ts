@@ -26,7 +26,8 @@ export function invertPair(
   const tail = tailOf(reading, figures, first, second, time)
   if (!(tail > 0) || !Number.isFinite(tail)) return null
   const lifetime = lifetimeOf(reading.current / reading.slope, time, tail)
-  return { lifetime: Math.log(lifetime), ratio: Math.log((lifetime - tail) / tail) }
+  const point = { lifetime: Math.log(lifetime), ratio: Math.log((lifetime - tail) / tail) }
+  return Number.isFinite(point.lifetime) && Number.isFinite(point.ratio) ? point : null
 }
 
 /** ta from a pair; null where none exists. */

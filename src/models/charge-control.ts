@@ -33,8 +33,13 @@ export function chargeAtTurnOff(input: ChargeAtTurnOffInput): number {
   if (!(z > 0)) return 0
   const excess = exponentialExcess(z)
   const late = excess / z
-  return input.lifetime * (input.current * late + input.peakCurrent * (z - excess - late))
+  // over very many lifetimes z − excess would be the difference of two equal numbers
+  const grown = z > longPast ? 1 : z - excess
+  return input.lifetime * (input.current * late + input.peakCurrent * Math.max(0, grown - late))
 }
+
+/** exp(−z) is nothing beside 1 beyond this. */
+const longPast = 40
 
 /** Inputs of {@link timeToPeak} and {@link rampRecovery}. */
 export interface RampInput {

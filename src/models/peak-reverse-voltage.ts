@@ -75,6 +75,8 @@ export function ringingPeakVoltage(input: RingingPeakInput): number {
   if (!(voltage > 0 && loopInductance > 0)) return voltage
   const law = capacitanceLaw(input.capacitance, input.parts)
   const fastest = Math.sqrt(loopInductance * capacitanceAt({ capacitance: law, voltage: 2 * voltage }))
+  // a junction without capacitance follows the switch and stores nothing to ring with
+  if (!(fastest > 0)) return voltage
   // a fall this short moves nothing before it is over
   if (voltageFall < 1e-5 * fastest) return peakFrom(input, law, 0, 0)
   const steps = 32 + Math.ceil((stepsPerPeriod * voltageFall) / (2 * Math.PI * fastest))

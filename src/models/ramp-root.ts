@@ -20,7 +20,8 @@ export function scaledTimeToPeak(crossing: number, charge: number, tail: number)
   for (let iteration = 0; iteration < 60; iteration++) {
     const z = crossing + x
     const excess = exponentialExcess(z)
-    const grown = z - excess
+    // exp(−z) is nothing beside 1 beyond z = 40, and z − excess would lose its digits there
+    const grown = z > 40 ? 1 : z - excess
     const decay = 1 - grown
     const missing =
       z < 1

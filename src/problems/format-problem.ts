@@ -35,7 +35,7 @@ const widest = 120
 function pointed(line: string, { column, found }: Problem): string {
   const start = Math.max(0, column - 1)
   const from = start > widest - 30 ? start - 30 : 0
-  const shown = line.slice(from, from + widest).replace(/[\p{Cc}\p{Cf}\p{Cs}]/gu, ' ')
+  const shown = line.slice(from, from + widest).replace(/[\p{Cc}\p{Cf}\p{Cs}\p{Zl}\p{Zp}]/gu, ' ')
   const rest = line.slice(start)
   const bare = found.replace(/^"(.*)"$/, '$1')
   const length = [`"${bare}"`, `'${bare}'`, bare].find((text) => bare !== '' && rest.startsWith(text))?.length ?? 1

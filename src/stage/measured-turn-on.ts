@@ -74,7 +74,8 @@ function addedAtTest(
   const capacitance = rectifier.capacitance
   const charge = capacitance === null ? 0 : capacitiveCharge({ capacitance, voltage })
   const cost = capacitance === null ? 0 : chargingCost({ capacitance, voltage })
-  if (rectifier.recovery === null) return cost
+  // without a slope the drive cannot turn the switch on, and nothing recovers
+  if (rectifier.recovery === null || !(slope > 0)) return cost
   const mean = rectifier.recovery.posterior.mean
   const logCurrent = Math.log(Math.max(current / rectifier.ratedCurrent, 0.01))
   const logSlope = Math.log(slope / referenceSlope)

@@ -75,16 +75,23 @@ function compose(text: string, lines: LineCounter): Composed {
   const parser = new Parser(lines.addNewLine)
   const composer = new Composer<ParsedNode>(options)
   const documents: Document.Parsed<ParsedNode>[] = []
-  for (const token of parser.parse(text)) {
-    const deep = isNestedTooDeep(token)
-    if (deep !== null) {
-      const expected = `${mostLevels} levels`
-      return { fault: { code: 'yaml-too-deep', offset: deep, path: '', found: '', expected, hint: '' } }
+  try {
+    for (const token of parser.parse(text)) {
+      const deep = isNestedTooDeep(token)
+      if (deep !== null) return { fault: tooDeep(deep) }
+      for (const document of composer.next(token)) documents.push(document)
     }
-    for (const document of composer.next(token)) documents.push(document)
+  } catch (error) {
+    // The package closes many open levels at once by calling itself; composing cannot come here with its few levels.
+    if (error instanceof RangeError) return { fault: tooDeep(lines.lineStarts.at(-1) ?? 0) }
+    throw error
   }
   for (const document of composer.end(true, text.length)) documents.push(document)
   return { documents }
+}
+
+function tooDeep(offset: number): YamlFault {
+  return { code: 'yaml-too-deep', offset, path: '', found: '', expected: `${mostLevels} levels`, hint: '' }
 }
 
 function isEmpty(document: Document.Parsed<ParsedNode>): boolean {
