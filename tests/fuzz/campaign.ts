@@ -33,7 +33,7 @@ export function emptyTally(): Tally {
   return { cases: 0, byKind: new Map(), byCode: new Map(), slowest: 0, findings: [] }
 }
 
-const batchSize = 200
+const batchSize = 50
 
 /** Batch after batch, each with a seed of its own that reproduces it alone; a batch ends at its first finding, shrunk. */
 export async function runCampaign(tally: Tally, options: CampaignOptions): Promise<void> {
@@ -54,7 +54,7 @@ async function runBatch(tally: Tally, seed: number, size: number, run: Run): Pro
     counting = false
     throw new Error(complaints.join('\n'))
   })
-  const details = await fc.check(property, { seed, numRuns: size, interruptAfterTimeLimit: 300_000 })
+  const details = await fc.check(property, { seed, numRuns: size })
   const [fuzzCase] = details.counterexample ?? []
   if (fuzzCase === undefined) return
   const complaints = complaintsOf(fuzzCase, await outcomeOfCase(fuzzCase, run))

@@ -30,7 +30,9 @@ const begin = performance.now()
 const until = begin + minutes * 60_000
 const tally = emptyTally()
 let toldAt = 0
+let toldFindings = 0
 const progress = ({ cases: done, findings, slowest }: Tally) => {
+  for (; toldFindings < findings.length; toldFindings++) console.log(toldFinding(findings[toldFindings]!, toldFindings))
   if (performance.now() - toldAt < 10_000) return
   toldAt = performance.now()
   const elapsed = ((toldAt - begin) / 1000).toFixed(0)
@@ -42,7 +44,6 @@ await runCampaign(tally, { seed, cases: children, until, run: runChild, progress
 const asProcesses = tally.cases
 await runCampaign(tally, { seed: seed + 1_000_000, cases: cases - asProcesses, until, run: runInside, progress })
 
-for (const [index, finding] of tally.findings.entries()) console.log(toldFinding(finding, index))
 console.log(`${tally.cases} cases (${asProcesses} as processes), ${tally.findings.length} findings`)
 console.log(`slowest ${tally.slowest.toFixed(2)} s, at most ${megabytes()} MB, seed ${seed}`)
 console.log(table(tally.byKind))
