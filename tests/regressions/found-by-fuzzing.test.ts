@@ -1,0 +1,85 @@
+import { describe, expect, it } from 'vitest'
+import { calibrate } from '../../src/evidence/calibrate.ts'
+import { readRecords } from '../../src/input/read-records.ts'
+import { chargeAtTurnOff } from '../../src/models/charge-control.ts'
+import { ringingPeakVoltage } from '../../src/models/peak-reverse-voltage.ts'
+import { scaledTimeToPeak } from '../../src/models/ramp-root.ts'
+import { formatProblem } from '../../src/problems/format-problem.ts'
+import { turnOnMeaning } from '../../src/stage/measured-turn-on.ts'
+
+/** The ranks-and-ratings part of a record; rows follow. */
+const part = 'id: a\nclass: standard\nratings: {reverse_voltage: 200 V, average_current: 2 A, junction: 100 degC}\n'
+
+function calibrated(rows: string) {
+  const { value, problems } = readRecords(part + rows, 'part.yaml')
+  expect(problems).toEqual([])
+  return calibrate({ record: value![0]!, blockingVoltage: 100 })
+}
+
+describe('defects that random inputs found', () => {
+  it('a record of a thousand rows is looked at in a second, and of more is refused', () => {
+    const rows = (count: number) => `forward:\n${'  - {current: 2 A, drop: 0.9 V, junction: 125 degC}\n'.repeat(count)}`
+    const begin = process.cpuUsage().user
+    const ramps = '  - {fixture: ramp, current: 2 A, slope: 100 A/us, qrr: 90 nC, grade: maximum}\n'.repeat(1000)
+    calibrated(`${rows(1000)}recovery:\n${ramps}`)
+    expect((process.cpuUsage().user - begin) / 1e6).toBeLessThan(5)
+    expect(readRecords(part + rows(1001), 'part.yaml').problems.map(({ code, path }) => [code, path])).toEqual([
+      ['list-length', 'forward'],
+    ])
+  })
+
+  it('a junction without capacitance rings with nothing', () => {
+    const capacitance = { kind: 'law', zeroBias: 0, builtIn: 0.8, grading: 0.4 } as const
+    expect(ringingPeakVoltage({ voltage: 48, voltageFall: 2e-8, loopInductance: 1e-8, capacitance, parts: 1 })).toBe(48)
+  })
+
+  it.each([1e9, 1e16, 1e18, 1e25])('charge stored over %d lifetimes is the steady charge', (lifetimes) => {
+    const input = { peakCurrent: 3, current: 2, conductionTime: lifetimes * 1e-9, lifetime: 1e-9 }
+    expect(chargeAtTurnOff(input) / 2e-9).toBeCloseTo(1, 8)
+  })
+
+  it('the time to the peak of a ramp that takes very many lifetimes is tau minus tau_rr', () => {
+    expect(scaledTimeToPeak(1e17, 1e17, 0.25)).toBeCloseTo(0.75, 12)
+  })
+
+  it.each([
+    '{fixture: ramp, qrr: 1 nC, irrm: 1e-30 A}',
+    '{fixture: ramp, slope: 1e-30 A/us, trr: 3 ns}',
+    '{fixture: ramp, current: 1e-30 A, trr: 3 ns, qrr: 1e-30 nC, irrm: 0.1 A, softness: 0.1}',
+    '{fixture: ramp, current: 1 A, slope: 100 A/us, softness: 1e9}',
+    '{fixture: step, current: 1e30 A, reverse: 1 A, storage: 12 ns}',
+    '{fixture: ramp, qrr: 10 nC, junction: 1e9 K}',
+  ])('a row that no part can have is told and left out: %s', (row) => {
+    const { rectifier, caveats } = calibrated(`recovery: [${row}]\n`)
+    expect(caveats.map(({ code }) => code)).toContain('row-impossible')
+    expect(rectifier.recovery?.origin).toBe('class-guess')
+  })
+
+  it('thousands of levels below one key are too deep, not a stack that runs out', () => {
+    const text = `recovery:\n  - b:\n    ${'a: '.repeat(20_000)}`
+    expect(readRecords(`${part}${text}\n x: 1\n`, 'part.yaml').problems.map(({ code }) => code)).toEqual([
+      'yaml-too-deep',
+    ])
+  })
+
+  it('a line separator of another alphabet stays on its line in a message', () => {
+    const problem = {
+      code: 'word-unknown',
+      file: 'a.yaml',
+      line: 1,
+      column: 1,
+      path: '',
+      found: '',
+      expected: '',
+      hint: '',
+    } as const
+    expect(formatProblem(problem, 'one\u2028two\u2029three')).toContain('one two three')
+  })
+
+  it('a gate drive that cannot reach the measured current adds no recovery', () => {
+    const { rectifier } = calibrated('')
+    const given = { energy: 1e-6, current: 1, voltage: 20, includesRectifier: 'yes', rectifier: 'a' } as const
+    const meaning = turnOnMeaning({ given, testRectifier: rectifier, slope: -1e9, voltageFall: 1e-8 })
+    expect(meaning.nominal.energy).toBeGreaterThan(0)
+  })
+})
