@@ -45,9 +45,9 @@ const figures = {
   catalogue_megabytes: catalogue.megabytes,
   yaml_records: yamlRecords,
   yaml_to_parsing: measureYaml(),
-  draws_of_50_mains_parts_seconds: await measureThreads((threads) => drawMains(threads)),
-  year_of_20_dc_parts_seconds: await measureThreads((threads) => followYear('pump-boost', threads)),
-  year_of_20_mains_parts_seconds: await measureThreads((threads) => followYear('cold-store-mains', threads)),
+  draws_of_50_mains_parts_seconds: await measureThreads(drawingMains()),
+  year_of_20_dc_parts_seconds: await measureThreads(followingYear('pump-boost')),
+  year_of_20_mains_parts_seconds: await measureThreads(followingYear('cold-store-mains')),
   microseconds_per_part: measurePieces(),
 }
 rmSync(folder, { recursive: true })
@@ -98,16 +98,18 @@ async function measureThreads(work: (threads: number) => Promise<unknown>) {
   return { one_thread: seconds[0]!, two_threads: seconds[1]!, processor: processor[0]! }
 }
 
-function drawMains(threads: number) {
+function drawingMains() {
   const stage = openStage('cold-store-mains')
-  return doSteps(rankSteps(stage, accepted(stage, 50), settings), session, threads)
+  const parts = accepted(stage, 50)
+  return (threads: number) => doSteps(rankSteps(stage, parts, settings), session, threads)
 }
 
-function followYear(name: StageName, threads: number) {
+function followingYear(name: StageName) {
   const stage = openStage(name)
+  const parts = accepted(stage, profileParts)
   const dutyProfile = readProfile(inventedProfile(quarterHours, 0.25, 4, swings[name]), 'year.csv', stage).value
-  const steps = rankSteps({ ...stage, dutyProfile }, accepted(stage, profileParts), { ...settings, draws: 0 })
-  return doSteps(steps, session, threads)
+  const loaded = { ...stage, dutyProfile }
+  return (threads: number) => doSteps(rankSteps(loaded, parts, { ...settings, draws: 0 }), session, threads)
 }
 
 function accepted(stage: Stage, count: number) {
