@@ -14,6 +14,7 @@ import { type Judgement, judge } from './judge-candidate.ts'
 import { lossesResult } from './losses-result.ts'
 import { highestSurroundings, type NominalPoint, snubberLoss, stageLossOf } from './nominal-point.ts'
 import { coldCondition, conditionOf, originsAt } from './point-condition.ts'
+import { lowestOverInputs } from './stage-inputs.ts'
 
 /** A candidate's nominal result with what later steps (draws, caveats) need of its solution. */
 export interface Assessment extends Judgement {
@@ -46,7 +47,10 @@ function settledResult(
   const stageLoss = stageLossOf(candidate, rows)
   const output = stage.output.voltage * stage.output.current
   const limit = junctionLimitOf(stage, record)
-  const surroundings = highestSurroundings(kernel, limit)
+  const surroundings = lowestOverInputs(
+    candidate,
+    (at) => highestSurroundings(at.kernel, limit) ?? Number.NEGATIVE_INFINITY,
+  )
   // The search above leaves the kernel elsewhere; later steps expect it at the nominal point.
   settle(kernel)
   return {
@@ -56,7 +60,7 @@ function settledResult(
     evidence: gradeEvidence({ record, rectifier: candidate.rectifier, condition: conditionOf(candidate, point) }),
     point: pointResult(point.instant),
     event: eventResult(candidate, point.event, point.event.hot, point.junction, peak),
-    event_maximum: maximumEvent(candidate, point),
+    event_maximum: maximumEvent(candidate, point, peak),
     forward_v: forwardVoltage(candidate, point),
     losses_w: lossesResult(rows),
     junction_c: point.junction - celsiusZero,

@@ -3,7 +3,7 @@ import type { Caveat } from '../domain/caveat.ts'
 import type { RectifierRecord } from '../domain/rectifier.ts'
 import type { Stage } from '../domain/stage.ts'
 import { calibrate } from '../evidence/calibrate.ts'
-import { slopeAt } from '../stage/book-instant.ts'
+import { statedSlopeAt } from '../stage/book-instant.ts'
 import { blockingVoltageOf, createKernel } from '../stage/create-kernel.ts'
 import type { Kernel } from '../stage/kernel.ts'
 import { type TurnOnMeaning, type TurnOnReading, turnOnMeaning } from '../stage/measured-turn-on.ts'
@@ -24,11 +24,24 @@ export function prepareCandidate(
   record: RectifierRecord,
   records: readonly RectifierRecord[],
 ): Candidate {
+  const prepared = withoutTurnOn(stage, record)
+  return withTurnOn(prepared, turnOnOf(stage, records, prepared.kernel))
+}
+
+/** The same part calibrated for the voltage it blocks at another input. What a measured turn-on means stays. */
+export function preparedAt({ stage, record, turnOn }: Candidate, inputVoltage: number): Candidate {
+  const moved = { ...stage, input: { ...stage.input, voltage: inputVoltage } }
+  return withTurnOn(withoutTurnOn(moved, record), turnOn)
+}
+
+function withoutTurnOn(stage: Stage, record: RectifierRecord): Omit<Candidate, 'turnOn'> {
   const { rectifier, caveats } = calibrate({ record, blockingVoltage: blockingVoltageOf(stage) })
-  const kernel = createKernel({ stage, record, rectifier })
-  const turnOn = turnOnOf(stage, records, kernel)
-  if (turnOn !== null) placeTurnOn(kernel, stage, turnOn.nominal)
-  return { stage, record, rectifier, kernel, turnOn, caveats }
+  return { stage, record, rectifier, kernel: createKernel({ stage, record, rectifier }), caveats }
+}
+
+function withTurnOn(prepared: Omit<Candidate, 'turnOn'>, turnOn: TurnOnMeaning | null): Candidate {
+  if (turnOn !== null) placeTurnOn(prepared.kernel, prepared.stage, turnOn.nominal)
+  return { ...prepared, turnOn }
 }
 
 /** Puts one reading of the measured turn-on into a kernel. */
@@ -43,7 +56,9 @@ export function placeTurnOn(kernel: Kernel, stage: Stage, reading: TurnOnReading
 function turnOnOf(stage: Stage, records: readonly RectifierRecord[], kernel: Kernel): TurnOnMeaning | null {
   const given = stage.switch.turnOn
   if (given === null) return null
-  const slope = slopeAt(kernel, given.current)
+  // The loop limits the slope by the voltage of that measurement, not by the stage's.
+  const allowed = stage.loopInductance ? given.voltage / stage.loopInductance : Number.POSITIVE_INFINITY
+  const slope = Math.min(statedSlopeAt(kernel, given.current), allowed)
   // A gate drive that cannot reach the test current says nothing about what the test rectifier did there.
   const record = slope > 0 ? records.find(({ id }) => id === given.rectifier) : undefined
   const testRectifier = record === undefined ? null : calibrate({ record, blockingVoltage: given.voltage }).rectifier

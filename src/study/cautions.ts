@@ -2,7 +2,7 @@ import type { RectifierRecord } from '../domain/rectifier.ts'
 import type { Caution, SentenceData } from '../domain/result.ts'
 import type { Stage } from '../domain/stage.ts'
 import { bulkDischargeTime, bulkEnergy } from '../models/bulk-discharge.ts'
-import { blockingVoltageOf } from '../stage/create-kernel.ts'
+import { highestBlockingVoltage, inputsOf } from './stage-inputs.ts'
 
 /** Limits above which a voltage is taken as hazardous: 60 V dc, 42.4 V peak (IEC 61010-1, IEC 62368-1 ES1, from memory). */
 const hazardousDc = 60
@@ -13,7 +13,7 @@ export function stageCautions(stage: Stage, parts: readonly RectifierRecord[]): 
   const mains = stage.input.kind === 'mains'
   const highest = highestVoltage(stage)
   // The switching node swings by the blocking voltage, so the limit for peaks counts there.
-  const hazardous = mains || highest > hazardousDc || blockingVoltageOf(stage) > hazardousPeak
+  const hazardous = mains || highest > hazardousDc || highestBlockingVoltage(stage) > hazardousPeak
   if (!hazardous) return []
   const cautions = [caution('lethal-voltage', { voltage: highest })]
   if (mains) cautions.push(caution('mains-fed', { mains: stage.input.voltage, peak: highestMainsPeak(stage) }))
@@ -34,13 +34,12 @@ export function caution(code: string, data: SentenceData): Caution {
 }
 
 function highestVoltage(stage: Stage): number {
-  const input = stage.input.kind === 'mains' ? highestMainsPeak(stage) : stage.input.voltage
-  return Math.max(input, stage.output.voltage, blockingVoltageOf(stage))
+  const input = stage.input.kind === 'mains' ? highestMainsPeak(stage) : Math.max(...inputsOf(stage))
+  return Math.max(input, stage.output.voltage, highestBlockingVoltage(stage))
 }
 
 function highestMainsPeak(stage: Stage): number {
-  const tolerance = stage.input.kind === 'mains' ? stage.input.tolerance : 0
-  return Math.SQRT2 * stage.input.voltage * (1 + tolerance)
+  return Math.SQRT2 * Math.max(...inputsOf(stage))
 }
 
 function bulkData(stage: Stage): SentenceData {

@@ -1,9 +1,9 @@
-import type { RectifierRecord } from '../domain/rectifier.ts'
 import type { DutyPoint, Stage } from '../domain/stage.ts'
 import { placeConditions } from '../stage/evaluate.ts'
 import { settle } from '../stage/thermal-balance.ts'
-import { type Candidate, prepareCandidate } from './candidate.ts'
+import { type Candidate, preparedAt } from './candidate.ts'
 import { stageLossOf } from './nominal-point.ts'
+import { blocksOutput } from './stage-inputs.ts'
 
 /** A stage at no load still switches; its losses are those at this share of full load. */
 const leastLoad = 1e-6
@@ -19,12 +19,8 @@ export interface ProfileResult {
 }
 
 /** Solves a candidate at every load of a profile, each with its own temperature; equal ones once. */
-export function runProfile(
-  candidate: Candidate,
-  profile: readonly DutyPoint[],
-  records: readonly RectifierRecord[],
-): ProfileResult {
-  const losses = lossesOver(candidate, profile, records)
+export function runProfile(candidate: Candidate, profile: readonly DutyPoint[]): ProfileResult {
+  const losses = lossesOver(candidate, profile)
   let hours = 0
   let wattHours: number | null = 0
   profile.forEach((load, index) => {
@@ -39,15 +35,11 @@ export function runProfile(
   }
 }
 
-function lossesOver(
-  candidate: Candidate,
-  profile: readonly DutyPoint[],
-  records: readonly RectifierRecord[],
-): readonly (number | null)[] {
+function lossesOver(candidate: Candidate, profile: readonly DutyPoint[]): readonly (number | null)[] {
   const losses = new Array<number | null>(profile.length).fill(null)
   for (const [input, places] of placesByInput(candidate.stage, profile)) {
     // One store at a time: a year may have hundreds of inputs.
-    const at = candidateAtInput(candidate, input, records)
+    const at = candidateAtInput(candidate, input)
     const known = new Map<string, number | null>()
     for (const place of places) {
       const load = profile[place]!
@@ -80,14 +72,12 @@ function placesByInput(stage: Stage, profile: readonly DutyPoint[]): ReadonlyMap
  * The same part at another input. Its calibration belongs to the voltage it blocks: where that is the output's, the part
  * is moved there; elsewhere it is prepared anew.
  */
-function candidateAtInput(candidate: Candidate, input: number, records: readonly RectifierRecord[]): Candidate {
-  const { stage, kernel, record } = candidate
+function candidateAtInput(candidate: Candidate, input: number): Candidate {
+  const { stage, kernel } = candidate
   if (input === stage.input.voltage) return candidate
-  if (stage.kind === 'boost' || stage.kind === 'mains-boost') {
-    kernel.inputVoltage = input
-    return candidate
-  }
-  return prepareCandidate({ ...stage, input: { ...stage.input, voltage: input } }, record, records)
+  if (!blocksOutput(stage)) return preparedAt(candidate, input)
+  kernel.inputVoltage = input
+  return candidate
 }
 
 function lossAt(candidate: Candidate, load: DutyPoint): number | null {

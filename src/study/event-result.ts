@@ -4,8 +4,10 @@ import { recoveryTimeFactor } from '../models/charge-control.ts'
 import { placeTemperatures } from '../stage/evaluate.ts'
 import type { RecoveryEvent } from '../stage/kernel.ts'
 import { type PointEvent, peakReverseVoltage, pointEvent } from '../stage/settled-point.ts'
+import { settle } from '../stage/thermal-balance.ts'
 import type { Candidate } from './candidate.ts'
 import { atMaximumRecovery, type NominalPoint } from './nominal-point.ts'
+import { atInput, inputsOf } from './stage-inputs.ts'
 
 const lineFactor = recoveryTimeFactor({ definition: { kind: 'line-90-25' }, peakReverseCurrent: 1 })
 
@@ -50,15 +52,32 @@ export function eventResult(
   }
 }
 
-/** The same at the record's guaranteed maximum, at the nominal junction temperature; null without such a row. */
-export function maximumEvent(candidate: Candidate, point: NominalPoint): EventResult | null {
-  const { kernel, rectifier } = candidate
+/**
+ * The same at the record's guaranteed maximum, at the junction temperatures of the nominal record; its peak reverse
+ * voltage is the highest over the inputs, as that of the event. Null without such a row.
+ */
+export function maximumEvent(candidate: Candidate, point: NominalPoint, peak: number): EventResult | null {
+  if (candidate.rectifier.maximumRecoveryShift === null) return null
+  const peaks = inputsOf(candidate.stage).map((voltage) => atInput(candidate, voltage, maximumPeak))
+  settle(candidate.kernel)
   return atMaximumRecovery(candidate, () => {
-    placeTemperatures(kernel)
-    const event = pointEvent(kernel)
-    const peak = peakReverseVoltage(kernel, event, rectifier.capacitance)
-    return eventResult(candidate, event, event.hot, point.junction, peak)
+    const event = placedEvent(candidate)
+    return eventResult(candidate, event, event.hot, point.junction, Math.max(peak, ...peaks))
   })
+}
+
+/** Zero where the part has no stable temperature. [V] */
+function maximumPeak(candidate: Candidate): number {
+  const { kernel, rectifier } = candidate
+  if (!settle(kernel)) return 0
+  return (
+    atMaximumRecovery(candidate, () => peakReverseVoltage(kernel, placedEvent(candidate), rectifier.capacitance)) ?? 0
+  )
+}
+
+function placedEvent({ kernel }: Candidate): PointEvent {
+  placeTemperatures(kernel)
+  return pointEvent(kernel)
 }
 
 /** By the line through 90 % and 25 %, the definition of every printed trr. [s] */

@@ -6,8 +6,9 @@ import { peakReverseVoltage } from '../stage/settled-point.ts'
 import { settle } from '../stage/thermal-balance.ts'
 import { hasThermalPath, junctionLimitOf } from '../stage/thermal-network.ts'
 import type { Candidate } from './candidate.ts'
-import { atInput, atMaximumLeakage, type NominalPoint, solvePoint, stageLossOf, totalLossOf } from './nominal-point.ts'
+import { atMaximumLeakage, type NominalPoint, solvePoint, stageLossOf, totalLossOf } from './nominal-point.ts'
 import { runawaySurroundings } from './runaway-surroundings.ts'
+import { atInput, inputsOf, ownInputsOf } from './stage-inputs.ts'
 
 /** A candidate solved at the nominal parameters, and whether it may be used. */
 export interface Judgement {
@@ -35,7 +36,7 @@ export function judge(candidate: Candidate): Judgement {
     peakReverseVoltage: peak,
     reverseVoltage: record.ratings.reverseVoltage,
     voltageUse: stage.limits.voltageUse,
-    meanCurrent: point.rows[row.meanRectifierCurrent]!,
+    meanCurrent: Math.max(...settled.map(({ rows }) => rows[row.meanRectifierCurrent]!)),
     averageCurrent: record.ratings.averageCurrent,
     parts: kernel.parts,
     junction: Math.max(...settled.map(({ junction }) => junction)),
@@ -45,12 +46,13 @@ export function judge(candidate: Candidate): Judgement {
     recovery: tightestRecovery(kernel, settled),
   })
   const reasons = rejections.map((rejection) =>
-    rejection.code === 'runaway-at-maximum-leakage' ? runawayReason(candidate, inputs) : reasonOf(rejection),
+    rejection.code === 'runaway-at-maximum-leakage' ? runawayReason(candidate) : reasonOf(rejection),
   )
   if (lost !== undefined) {
     reasons.push({ code: 'no-stable-temperature', text: '', value: lost.voltage, limit: null })
   }
-  const mains = stage.input.kind === 'mains' ? inputs.map((each) => mainsResult(candidate, each)) : null
+  const own = inputs.slice(0, ownInputsOf(stage).length)
+  const mains = stage.input.kind === 'mains' ? own.map((each) => mainsResult(candidate, each)) : null
   return { point, mains, peakReverseVoltage: peak, reasons }
 }
 
@@ -66,13 +68,13 @@ function reasonOf({ code, value, limit }: Rejection): Reason {
 }
 
 /** How warm the surroundings are, and how warm they may be at maximum leakage. */
-function runawayReason(candidate: Candidate, inputs: readonly InputPoint[]): Reason {
-  const edges = inputs.flatMap(({ voltage }) => atInput(candidate, voltage, () => runawaySurroundings(candidate)) ?? [])
+function runawayReason(candidate: Candidate): Reason {
+  const edge = runawaySurroundings(candidate)
   return {
     code: 'runaway-at-maximum-leakage',
     text: '',
     value: candidate.kernel.thermal.reference - celsiusZero,
-    limit: edges.length === 0 ? null : Math.min(...edges) - celsiusZero,
+    limit: edge === null ? null : edge - celsiusZero,
   }
 }
 
@@ -81,14 +83,13 @@ interface InputPoint {
   readonly point: NominalPoint | null
 }
 
-/** The point at every input that the part has to bear: the one of a dc stage, least, nominal and highest mains. */
+/** The point at every input that the part has to bear. */
 function inputPoints(candidate: Candidate, nominal: NominalPoint): InputPoint[] {
-  const { input } = candidate.stage
-  if (input.kind !== 'mains') return [{ voltage: input.voltage, point: nominal }]
-  return [1 - input.tolerance, 1, 1 + input.tolerance].map((factor) => {
-    const voltage = input.voltage * factor
-    return { voltage, point: factor === 1 ? nominal : atInput(candidate, voltage, () => solvePoint(candidate)) }
-  })
+  const { stage } = candidate
+  return inputsOf(stage).map((voltage) => ({
+    voltage,
+    point: voltage === stage.input.voltage ? nominal : atInput(candidate, voltage, solvePoint),
+  }))
 }
 
 function mainsResult(
@@ -105,12 +106,9 @@ function mainsResult(
 }
 
 function settlesAtMaximumLeakage(candidate: Candidate): boolean {
-  const { input } = candidate.stage
-  const settles = (): boolean => atMaximumLeakage(candidate, () => settle(candidate.kernel))
-  if (input.kind !== 'mains') return settles()
-  // Low mains has the highest currents, high mains the longest blocking: all three are judged.
-  return [1 - input.tolerance, 1, 1 + input.tolerance].every((factor) =>
-    atInput(candidate, input.voltage * factor, settles),
+  // Low mains has the highest currents, high mains the longest blocking: all are judged.
+  return inputsOf(candidate.stage).every((voltage) =>
+    atInput(candidate, voltage, (at) => atMaximumLeakage(at, () => settle(at.kernel))),
   )
 }
 
@@ -120,7 +118,7 @@ function tightestRecovery(
   points: readonly NominalPoint[],
 ): { readonly value: number; readonly limit: number } | null {
   const fits = points.flatMap(({ event: { hot, instant } }) =>
-    hot.outcome === 'hard'
+    hot.outcome === 'hard' || hot.outcome === 'residual'
       ? [{ value: hot.current / hot.slope + hot.timeToPeak + 3 * hot.tailTime, limit: instant.duty / frequency }]
       : [],
   )

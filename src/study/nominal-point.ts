@@ -1,6 +1,6 @@
 import type { ThermalOutcome } from '../domain/result.ts'
 import { ambientForJunction, highestBetween } from '../stage/ambient-for-junction.ts'
-import { evaluate, placeConditions } from '../stage/evaluate.ts'
+import { evaluate } from '../stage/evaluate.ts'
 import type { Instant, Kernel } from '../stage/kernel.ts'
 import { row } from '../stage/kernel.ts'
 import { crestInstant, type PointEvent, pointEvent } from '../stage/settled-point.ts'
@@ -51,24 +51,12 @@ export function deliversCold(kernel: Kernel): boolean {
   return kernel.delivers
 }
 
-/** Runs `action` at another line or dc input, then puts the nominal one back. */
-export function atInput<T>(candidate: Candidate, inputVoltage: number, action: () => T): T {
-  const { kernel } = candidate
-  const before = kernel.inputVoltage
-  kernel.inputVoltage = inputVoltage
-  placeConditions(kernel)
-  const result = action()
-  kernel.inputVoltage = before
-  placeConditions(kernel)
-  return result
-}
-
 /** Runs `action` with the leakage at its guaranteed (or assumed) maximum. */
-export function atMaximumLeakage<T>(candidate: Candidate, action: () => T): T {
-  const shift = candidate.rectifier.leakage?.maximumShift ?? 0
-  candidate.kernel.coefficients[14]! += shift
+export function atMaximumLeakage<T>({ rectifier, kernel }: Candidate, action: () => T): T {
+  const nominal = kernel.coefficients.slice()
+  kernel.coefficients[14]! += rectifier.leakage?.maximumShift ?? 0
   const result = action()
-  candidate.kernel.coefficients[14]! -= shift
+  kernel.coefficients.set(nominal)
   return result
 }
 
@@ -77,11 +65,11 @@ export function atMaximumRecovery<T>(candidate: Candidate, action: () => T): T |
   const shift = candidate.rectifier.maximumRecoveryShift
   if (shift === null) return null
   const c = candidate.kernel.coefficients
+  const nominal = c.slice()
   c[0]! += shift.lifetime
   c[4]! += shift.ratio
   const result = action()
-  c[0]! -= shift.lifetime
-  c[4]! -= shift.ratio
+  c.set(nominal)
   return result
 }
 

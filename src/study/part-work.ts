@@ -70,5 +70,5 @@ function drawParts({ stage, parts, testRectifiers, seed, draws }: PartWork): rea
 }
 
 function profilePart({ stage, testRectifiers }: PartWork, record: RectifierRecord): ProfileResult {
-  return runProfile(prepareCandidate(stage, record, testRectifiers), stage.dutyProfile ?? [], testRectifiers)
+  return runProfile(prepareCandidate(stage, record, testRectifiers), stage.dutyProfile ?? [])
 }

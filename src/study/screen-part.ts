@@ -1,12 +1,12 @@
 import { judgeCandidate, type Rejection } from '../decision/accept.ts'
 import type { RectifierRecord } from '../domain/rectifier.ts'
 import type { Stage } from '../domain/stage.ts'
-import { blockingVoltageOf } from '../stage/create-kernel.ts'
 import { row } from '../stage/kernel.ts'
 import { settle } from '../stage/thermal-balance.ts'
 import { hasThermalPath, junctionLimitOf } from '../stage/thermal-network.ts'
 import { prepareCandidate } from './candidate.ts'
 import { stageLossOf } from './nominal-point.ts'
+import { highestBlockingVoltage } from './stage-inputs.ts'
 
 /** What a first look tells of a part. */
 export interface Screened {
@@ -19,14 +19,14 @@ export interface Screened {
 /**
  * A first look at a part, a small share of the cost of judging it: its stage loss, and whether a bound already rejects
  * it. The bounds are those of the rules themselves: no peak reverse voltage lies below the blocking voltage, and current
- * and junction at nominal input lie at or below their worst over the mains. What passes is still to be judged.
+ * and junction at nominal input lie at or below their worst over the inputs. What passes is still to be judged.
  */
 export function screenPart(
   stage: Stage,
   record: RectifierRecord,
   testRectifiers: readonly RectifierRecord[],
 ): Screened {
-  const least = { ...lenient, peakReverseVoltage: blockingVoltageOf(stage) }
+  const least = { ...lenient, peakReverseVoltage: highestBlockingVoltage(stage) }
   const rules = { ...least, reverseVoltage: record.ratings.reverseVoltage, voltageUse: stage.limits.voltageUse }
   const byVoltage = judgeCandidate(rules)[0]
   if (byVoltage !== undefined) return { stageLoss: null, rejected: byVoltage.code }

@@ -26,7 +26,8 @@ export function stageAt(stage: Stage, over: TrendQuantity, value: number): Stage
     case 'ambient':
       return { ...stage, cooling: coolingAt(stage, value) }
     case 'input':
-      return { ...stage, input: { ...stage.input, voltage: checkedInput(stage, value) } }
+      // At one input alone: a year's higher inputs would hold every position at theirs.
+      return { ...stage, input: { ...stage.input, voltage: checkedInput(stage, value) }, dutyProfile: null }
     case 'inductance':
       return { ...stage, inductor: { ...stage.inductor, inductance: value } }
   }

@@ -1,4 +1,3 @@
-import type { RectifierRecord } from '../domain/rectifier.ts'
 import type { DutyPoint, Stage } from '../domain/stage.ts'
 import type { SwapLoad } from '../domain/study.ts'
 import type { Candidate } from './candidate.ts'
@@ -10,19 +9,14 @@ const usualLoads = [0.1, 0.25, 0.5, 0.75, 1]
 const mostListed = 24
 
 /** Efficiency with either part and the saving, at every load of the profile or at usual loads. */
-export function swapLoads(
-  stage: Stage,
-  from: Candidate,
-  to: Candidate,
-  records: readonly RectifierRecord[],
-): SwapLoad[] {
+export function swapLoads(stage: Stage, from: Candidate, to: Candidate): SwapLoad[] {
   const profile = stage.dutyProfile
   const listed = profile !== null && profile.length <= mostListed
   const loads: readonly DutyPoint[] = listed
     ? profile
     : usualLoads.map((load) => ({ load, hours: 0, ambient: null, input: null }))
-  const before = runProfile(from, loads, records).losses
-  const after = runProfile(to, loads, records).losses
+  const before = runProfile(from, loads).losses
+  const after = runProfile(to, loads).losses
   return loads.map(({ load, hours }, k) => {
     const output = stage.output.voltage * stage.output.current * load
     const efficiency = (loss: number | null): number | null =>

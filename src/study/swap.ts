@@ -43,11 +43,11 @@ export function swap(
   const drawn = settings.draws > 0 ? drawAll(stage, pair, settings.seed, settings.draws) : null
   const results = placeRanks(pair.map(({ result }) => (drawn === null ? result : withDraws(result, drawn))))
   const resultOf = (id: string): CandidateResult =>
-    withYear(stage, records, id === from.result.id ? from : to, results.find((each) => each.id === id)!)
+    withYear(stage, id === from.result.id ? from : to, results.find((each) => each.id === id)!)
   const fromResult = resultOf(from.result.id)
   const toResult = resultOf(to.result.id)
   const saves = savingOf(fromResult, toResult, drawn)
-  const loads = swapLoads(stage, from.candidate, to.candidate, records)
+  const loads = swapLoads(stage, from.candidate, to.candidate)
   const partial = {
     stage: stageResult(stage, pair, results),
     from: fromResult,
@@ -106,14 +106,9 @@ function assess(stage: Stage, records: readonly RectifierRecord[], id: string): 
   return assessCandidate(candidate)
 }
 
-function withYear(
-  stage: Stage,
-  records: readonly RectifierRecord[],
-  { candidate, point }: Assessment,
-  result: CandidateResult,
-): CandidateResult {
+function withYear(stage: Stage, { candidate, point }: Assessment, result: CandidateResult): CandidateResult {
   if (stage.dutyProfile === null || point === null) return result
-  const profile = runProfile(candidate, stage.dutyProfile, records)
+  const profile = runProfile(candidate, stage.dutyProfile)
   return { ...result, weighted_w: profile.weightedLoss, energy_kwh_per_year: profile.energy }
 }
 

@@ -101,7 +101,8 @@ function trendCautions(
   { over, to }: TrendRequest,
   parts: readonly RectifierRecord[],
 ): TrendResult['cautions'] {
-  return stageCautions(over === 'input' ? stageAt(stage, over, to) : stage, parts)
+  const { dutyProfile } = stage
+  return stageCautions(over === 'input' ? { ...stageAt(stage, over, to), dutyProfile } : stage, parts)
 }
 
 /** Losses given as watts do not move along the axis. */
