@@ -84,7 +84,7 @@ function measureYaml(): number {
   return ratios.toSorted((a, b) => a - b)[1]!
 }
 
-/** By the clock with one and with two threads, and the processor time of one: all there is to wait for on an idle machine. */
+/** By the clock, and of processors: where other programs keep the machine busy only the second tells what threads cost. */
 async function measureThreads(work: (threads: number) => Promise<unknown>) {
   const seconds: number[] = []
   const processor: number[] = []
@@ -95,7 +95,12 @@ async function measureThreads(work: (threads: number) => Promise<unknown>) {
     seconds.push((performance.now() - begun) / 1000)
     processor.push((user + system) / 1e6)
   }
-  return { one_thread: seconds[0]!, two_threads: seconds[1]!, processor: processor[0]! }
+  return {
+    one_thread: seconds[0]!,
+    two_threads: seconds[1]!,
+    processor_one: processor[0]!,
+    processor_two: processor[1]!,
+  }
 }
 
 function drawingMains() {
@@ -146,8 +151,8 @@ function measurePieces() {
 function table(): string {
   const seconds = (value: number): string => `${value.toFixed(2)} s`
   const both = (figure: Awaited<ReturnType<typeof measureThreads>>): string =>
-    `${seconds(figure.one_thread)} with one thread (${seconds(figure.processor)} of processor), ` +
-    `${seconds(figure.two_threads)} with two`
+    `${seconds(figure.one_thread)} with one thread (${seconds(figure.processor_one)} of processors), ` +
+    `${seconds(figure.two_threads)} with two (${seconds(figure.processor_two)})`
   const rows: readonly (readonly [string, string])[] = [
     [
       `${catalogueRows} parts of a table, best 50 with doubt`,
