@@ -17,6 +17,8 @@ export interface CalibrateInput {
 /** A record made usable, and what a reviewer must know about it. */
 export interface Calibration {
   readonly rectifier: CalibratedRectifier
+  /** The record with those of its rows alone that tell something: what its evidence is worth goes by them. */
+  readonly read: RectifierRecord
   readonly caveats: readonly Caveat[]
 }
 
@@ -44,5 +46,15 @@ export function calibrate({ record, blockingVoltage }: CalibrateInput): Calibrat
     softnessKnown: recovery.softnessKnown,
   }
   const reading = [...recovery.caveats, ...forward.caveats, ...leakage.caveats]
-  return { rectifier, caveats: [...reading, ...checkRecord(record, rectifier, recovery.readings)] }
+  const read: RectifierRecord = {
+    ...record,
+    recovery: recovery.readings.map(({ row }) => row),
+    forward: forward.rows,
+    leakage: leakage.rows,
+  }
+  return {
+    rectifier,
+    read,
+    caveats: [...reading, ...checkRecord({ record, read, rectifier, readings: recovery.readings })],
+  }
 }

@@ -12,17 +12,24 @@ import { priorGaussians } from './prior-gaussians.ts'
 import type { RowReading } from './row-reading.ts'
 
 /** A record held against itself and against its class: what a careful reader of the data sheet would ask about. */
-export function checkRecord(
-  record: RectifierRecord,
-  rectifier: CalibratedRectifier,
-  readings: readonly RowReading[],
-): Caveat[] {
+export function checkRecord({
+  record,
+  read,
+  rectifier,
+  readings,
+}: {
+  readonly record: RectifierRecord
+  /** The record with the rows alone that were read. */
+  readonly read: RectifierRecord
+  readonly rectifier: CalibratedRectifier
+  readonly readings: readonly RowReading[]
+}): Caveat[] {
   return [
     ...compareRows(record),
     ...contradictions(record, readings),
     ...checkPlausibility(record, rectifier, readings),
     ...findFalling(rectifier),
-    ...checkGrades(record),
+    ...checkGrades(read),
     ...missing(rectifier),
   ]
 }

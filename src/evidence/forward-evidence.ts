@@ -13,13 +13,15 @@ import { fromDirections, priorGaussians } from './prior-gaussians.ts'
 /** Everything the record says about forward voltage. */
 export interface ForwardEvidence {
   readonly forward: CalibratedRectifier['forward']
+  /** The rows that were read: none beside a line. */
+  readonly rows: readonly ForwardRow[]
   readonly caveats: readonly Caveat[]
 }
 
 /** Class prior of V_F updated by the record's forward rows, or the record's own line. */
 export function forwardEvidence(record: RectifierRecord): ForwardEvidence {
   const line = record.forwardLine
-  if (line !== null) return { forward: fromLine(record, line), caveats: assumedJunction(record.id, line) }
+  if (line !== null) return { forward: fromLine(record, line), rows: [], caveats: assumedJunction(record.id, line) }
   const usable = usableRows(record)
   const posterior = conditioned(
     priorGaussians(record.class).forward,
@@ -32,6 +34,7 @@ export function forwardEvidence(record: RectifierRecord): ForwardEvidence {
       line: false,
       origin: usable.length > 0 ? 'given' : 'class-guess',
     },
+    rows: usable,
     caveats: record.forward.flatMap((row) =>
       row.drop > 0 ? assumedJunction(record.id, row) : unusable(record.id, row),
     ),

@@ -16,6 +16,7 @@ const slack = 1e-9
  * Schottky classes are graded by their forward rows, in temperature.
  */
 export function gradeEvidence(input: {
+  /** With the rows alone that the calibration read. */
   readonly record: RectifierRecord
   readonly rectifier: CalibratedRectifier
   readonly condition: OperatingCondition

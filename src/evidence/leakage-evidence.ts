@@ -11,13 +11,15 @@ import { priorGaussians } from './prior-gaussians.ts'
 /** Everything the record says about leakage. */
 export interface LeakageEvidence {
   readonly leakage: CalibratedRectifier['leakage']
+  /** The rows that were read. */
+  readonly rows: readonly LeakageRow[]
   readonly caveats: readonly Caveat[]
 }
 
 /** Class prior of ln I_R updated by the record's leakage rows; null for classes in which leakage is not used. */
 export function leakageEvidence(record: RectifierRecord): LeakageEvidence {
   const prior = priorGaussians(record.class).leakage
-  if (prior === null) return { leakage: null, caveats: [] }
+  if (prior === null) return { leakage: null, rows: [], caveats: [] }
   const ratedVoltage = record.ratings.reverseVoltage
   const usable = usableRows(record)
   const posterior = conditioned(
@@ -32,6 +34,7 @@ export function leakageEvidence(record: RectifierRecord): LeakageEvidence {
       origin: usable.length > 0 ? 'given' : 'class-guess',
       maximumShift: usable.length > 0 ? maximumLeakageShift(usable, posterior, ratedVoltage, spread) : 0,
     },
+    rows: usable,
     caveats: caveatsOf(record, usable),
   }
 }

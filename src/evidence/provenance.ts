@@ -16,6 +16,7 @@ const sameWithin = { factor: 1.02, kelvin: 2 } as const
 
 /** Inputs of {@link provenanceAt}. */
 export interface ProvenanceInput {
+  /** With the rows alone that the calibration read. */
   readonly record: RectifierRecord
   readonly rectifier: CalibratedRectifier
   readonly condition: OperatingCondition

@@ -12,6 +12,8 @@ import { type TurnOnMeaning, type TurnOnReading, turnOnMeaning } from '../stage/
 export interface Candidate {
   readonly stage: Stage
   readonly record: RectifierRecord
+  /** The record with the rows alone that the calibration read. */
+  readonly read: RectifierRecord
   readonly rectifier: CalibratedRectifier
   readonly kernel: Kernel
   readonly turnOn: TurnOnMeaning | null
@@ -35,8 +37,8 @@ export function preparedAt({ stage, record, turnOn }: Candidate, inputVoltage: n
 }
 
 function withoutTurnOn(stage: Stage, record: RectifierRecord): Omit<Candidate, 'turnOn'> {
-  const { rectifier, caveats } = calibrate({ record, blockingVoltage: blockingVoltageOf(stage) })
-  return { stage, record, rectifier, kernel: createKernel({ stage, record, rectifier }), caveats }
+  const { rectifier, read, caveats } = calibrate({ record, blockingVoltage: blockingVoltageOf(stage) })
+  return { stage, record, read, rectifier, kernel: createKernel({ stage, record, rectifier }), caveats }
 }
 
 function withTurnOn(prepared: Omit<Candidate, 'turnOn'>, turnOn: TurnOnMeaning | null): Candidate {

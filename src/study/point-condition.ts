@@ -40,7 +40,7 @@ export function coldCondition({ stage, record, kernel }: Candidate): PointCondit
 
 /** Where each figure of a solved candidate comes from. */
 export function originsAt(candidate: Candidate, point: NominalPoint): ReturnType<typeof provenanceAt> {
-  const { record, rectifier } = candidate
+  const { read: record, rectifier } = candidate
   const { hot } = point.event
   const condition = conditionOf(candidate, point)
   const happens = hot.outcome === 'hard' || hot.outcome === 'residual'

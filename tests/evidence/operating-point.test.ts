@@ -12,11 +12,8 @@ const point = { current: 8, slope: 200e6, junction: kelvin(100) }
 
 function grade(fields: Partial<RectifierRecord>, condition = point) {
   const held = record({ forward: [forwardRow()], ...fields })
-  return gradeEvidence({
-    record: held,
-    rectifier: calibrate({ record: held, blockingVoltage: 400 }).rectifier,
-    condition,
-  })
+  const { read, rectifier } = calibrate({ record: held, blockingVoltage: 400 })
+  return gradeEvidence({ record: read, rectifier, condition })
 }
 
 describe('the evidence grade', () => {
@@ -74,9 +71,9 @@ function origins(
   event: Parameters<typeof provenanceAt>[0]['event'] = null,
 ) {
   const held = record(fields)
-  const { rectifier } = calibrate({ record: held, blockingVoltage: 400 })
+  const { rectifier, read } = calibrate({ record: held, blockingVoltage: 400 })
   const { provenance, caveats } = provenanceAt({
-    record: held,
+    record: read,
     rectifier,
     condition,
     forwardCurrent: 8,

@@ -175,7 +175,7 @@ function truthOf(stage: Stage, { record, truth }: World, bench: Bench): Truth | 
   kernel.voltageFall *= bench.voltageFall
   kernel.thermal.factor = bench.thermal
   if (!settle(kernel)) return null
-  const candidate = { stage, record, rectifier: truth, kernel, turnOn: null, caveats: [] }
+  const candidate = { stage, record, read: record, rectifier: truth, kernel, turnOn: null, caveats: [] }
   return { total: totalLossOf(kernel.rows), stageLoss: stageLossOf(candidate, kernel.rows) }
 }
 
