@@ -75,6 +75,8 @@ function modeBorder(kernel: Kernel): number {
   }
   if (kernel.part.synchronous) return 0
   if (valleyAt(Math.PI / 2) < 0) return Math.PI / 2
+  // Continuous practically from the zero crossing on: no panel below the border is worth its nodes.
+  if (valleyAt(1e-6) >= 0) return 0
   let low = 0
   let high = Math.PI / 2
   for (let round = 0; round < 40; round++) {

@@ -34,9 +34,10 @@ function dropSlope(kernel: Kernel, totalCurrent: number): number {
 }
 
 /** Share of the conduction interval that the dead times leave to a synchronous part's diode. */
-function diodeShare({ kind, part, frequency, inputVoltage: vin, outputVoltage: vo }: Kernel): number {
-  const lossFreeShare = kind === 'buck' ? Math.max(1 - vo / vin, 1e-6) : kind === 'boost' ? vin / vo : vin / (vin + vo)
-  return Math.min(1, ((part.deadBefore + part.deadAfter) * frequency) / lossFreeShare)
+function diodeShare({ kind, part, frequency, instant, outputVoltage: vo }: Kernel): number {
+  const vin = instant.inputVoltage
+  const lossFreeShare = kind === 'buck' ? 1 - vo / vin : kind === 'inverting' ? vin / (vin + vo) : vin / vo
+  return Math.min(1, ((part.deadBefore + part.deadAfter) * frequency) / Math.max(lossFreeShare, 1e-6))
 }
 
 /**
