@@ -16,7 +16,7 @@ import { deliversCold } from './nominal-point.ts'
 import { notCovered } from './not-covered.ts'
 import { orderCaveats } from './order-caveats.ts'
 import { askFor, doAllSteps, type PartSteps, type PartWork } from './part-work.ts'
-import { pointCaveats, sortCaveats, stageCaveats } from './point-caveats.ts'
+import { candidateCaveats, sortCaveats, stageCaveats } from './point-caveats.ts'
 import { verdictOf, withDraws } from './uncertainty.ts'
 
 /** Named in every result: which event the energies belong to. */
@@ -61,14 +61,18 @@ export function* rankSteps(
     not_listed: listing.notListed,
     verdict,
     warnings: warningsOf([
-      ...assessments.flatMap((each) => candidateCaveats(each)),
+      ...assessments.flatMap(candidateCaveats),
       ...stageCaveats(assessments),
       ...incumbentCaveats(stage, competing.parts),
       ...orderCaveats(stage, candidates, profiles),
       ...(listed?.caveats ?? []),
       ...tableCaveats(settings),
     ]),
-    cautions: stageCautions(stage, parts),
+    cautions: stageCautions(
+      stage,
+      parts,
+      assessments.map((each) => each.peakReverseVoltage),
+    ),
     not_covered: notCovered(stage),
   }
 }
@@ -127,11 +131,6 @@ export function stageResult(
     loss_model: lossModel,
     assumed: stage.assumed,
   }
-}
-
-/** Everything to be said about one candidate: its record against itself, its fit, its point. */
-function candidateCaveats(assessment: Assessment): Caveat[] {
-  return [...assessment.candidate.caveats, ...assessment.caveats, ...pointCaveats(assessment)]
 }
 
 export function warningsOf(caveats: readonly Caveat[]): Warning[] {

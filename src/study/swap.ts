@@ -12,7 +12,7 @@ import { caution, stageCautions } from './cautions.ts'
 import { runProfile } from './duty-profile.ts'
 import { deliversCold } from './nominal-point.ts'
 import { notCovered } from './not-covered.ts'
-import { pointCaveats, stageCaveats } from './point-caveats.ts'
+import { candidateCaveats, stageCaveats } from './point-caveats.ts'
 import { documentHead, placeRanks, stageResult, warningsOf } from './rank.ts'
 import { runawaySurroundings } from './runaway-surroundings.ts'
 import { breakEvenFrequency } from './swap-break-even.ts'
@@ -69,14 +69,12 @@ export function swap(
     ...partial,
     verdict_text: '',
     because: swapGrounds(partial),
-    warnings: warningsOf([
-      ...pair.flatMap((each) => [...each.candidate.caveats, ...each.caveats, ...pointCaveats(each)]),
-      ...stageCaveats(pair),
-    ]),
+    warnings: warningsOf([...pair.flatMap(candidateCaveats), ...stageCaveats(pair)]),
     cautions: [
       ...stageCautions(
         stage,
         pair.map(({ candidate }) => candidate.record),
+        pair.map((each) => each.peakReverseVoltage),
       ),
       ...swapCautions(from, to),
     ],
@@ -172,7 +170,12 @@ function runawayCelsius({ candidate }: Assessment): number | null {
 /** Cautions that belong to the exchange itself. */
 function swapCautions(from: Assessment, to: Assessment): SwapResult['cautions'] {
   if (from.result.id === to.result.id) return []
-  const cautions = [caution('faster-edges', {}), caution('gate-drive-retune', {})]
-  const { class: kind } = to.candidate.record
-  return kind === 'schottky' ? [caution('leakage-and-voltage-of-schottky', {}), ...cautions] : cautions
+  const [before, after] = [from.result.event?.qrr_c, to.result.event?.qrr_c]
+  const known = before !== undefined && after !== undefined
+  return [
+    ...(to.candidate.record.class === 'schottky' ? [caution('leakage-and-voltage-of-schottky', {})] : []),
+    // Where a part has no temperature nobody knows which recovers less: the caution then stays.
+    ...(known && after >= before ? [] : [caution('faster-edges', {})]),
+    caution('gate-drive-retune', {}),
+  ]
 }

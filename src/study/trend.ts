@@ -10,7 +10,7 @@ import { assessCandidate } from './assess-candidate.ts'
 import { stageCautions } from './cautions.ts'
 import { lossesResult } from './losses-result.ts'
 import { notCovered } from './not-covered.ts'
-import { pointCaveats, stageCaveats } from './point-caveats.ts'
+import { candidateCaveats, stageCaveats } from './point-caveats.ts'
 import { originsAt } from './point-condition.ts'
 import { chooseCandidates, documentHead, placeRanks, stageResult, warningsOf } from './rank.ts'
 import { documentValue, presentValue, stageAt, trendKeys } from './stage-variation.ts'
@@ -46,7 +46,10 @@ export function trend(
     ...documentHead(settings),
     over: trendKeys[over],
     stage: stageResult(stage, present, placeRanks(present.map(({ result }) => result))),
-    points: axis.map((value, k) => ({ at: documentValue(over, value), candidates: spots[k]!.map(trendCandidate) })),
+    points: axis.map((value, k) => ({
+      at: documentValue(over, value),
+      candidates: spots[k]!.map((spot) => trendCandidate(spot, over === 'load' && value === 0)),
+    })),
     crossings: findCrossings({ stage, parts, request, settings, solver, axis, spots }),
     limits: findLimits({ over, parts, solver, axis, spots }),
     slope:
@@ -55,16 +58,16 @@ export function trend(
             studySlope({ stage, record, solver, axis, spots: spots.map((line) => line[column]!) }),
           )
         : null,
-    warnings: warningsOf([
-      ...present.flatMap((each) => [...each.candidate.caveats, ...each.caveats, ...pointCaveats(each)]),
-      ...stageCaveats(present),
+    warnings: warningsOf([...present.flatMap(candidateCaveats), ...stageCaveats(present)]),
+    cautions: trendCautions(stage, request, parts, [
+      ...present.map((each) => each.peakReverseVoltage),
+      ...spots.flatMap((line) => line.map(({ judgement }) => judgement.peakReverseVoltage)),
     ]),
-    cautions: trendCautions(stage, request, parts),
     not_covered: [...notCovered(stage), ...heldLosses(stage, request)],
   }
 }
 
-function trendCandidate(spot: TrendSpot): TrendCandidate {
+function trendCandidate(spot: TrendSpot, unloaded: boolean): TrendCandidate {
   const { candidate, judgement, stageLoss } = spot
   const { point, peakReverseVoltage: peak } = judgement
   const { stage, record } = candidate
@@ -78,7 +81,7 @@ function trendCandidate(spot: TrendSpot): TrendCandidate {
     junction_c: point === null ? null : point.junction - celsiusZero,
     switch_junction_c: point === null ? null : point.switchJunction - celsiusZero,
     thermal,
-    efficiency: stageLoss === null ? null : output / (output + stageLoss),
+    efficiency: stageLoss === null || unloaded ? null : output / (output + stageLoss),
     accepted: judgement.reasons.length === 0,
     mode: point === null ? null : conductionModeOf(point.instant),
     voltage_margin: peak === null ? null : 1 - peak / record.ratings.reverseVoltage,
@@ -100,9 +103,10 @@ function trendCautions(
   stage: Stage,
   { over, to }: TrendRequest,
   parts: readonly RectifierRecord[],
+  peaks: readonly (number | null)[],
 ): TrendResult['cautions'] {
   const { dutyProfile } = stage
-  return stageCautions(over === 'input' ? { ...stageAt(stage, over, to), dutyProfile } : stage, parts)
+  return stageCautions(over === 'input' ? { ...stageAt(stage, over, to), dutyProfile } : stage, parts, peaks)
 }
 
 /** Losses given as watts do not move along the axis. */
@@ -114,7 +118,7 @@ function heldLosses(stage: Stage, { over }: TrendRequest): string[] {
 }
 
 function refuseEmpty(stage: Stage, spots: readonly (readonly TrendSpot[])[]): void {
-  const delivers = spots.some((line) => line.some(({ candidate }) => candidate.kernel.delivers))
+  const delivers = spots.some((line) => line.some(({ judgement }) => judgement.reasons[0]?.code !== 'cannot-deliver'))
   if (delivers) return
   throw new StudyRefusal('cannot-deliver', {
     power: stage.output.voltage * stage.output.current,

@@ -80,7 +80,7 @@ describe('cautions name the danger in plain words', () => {
   it('the bulk capacitor states its energy and time', () => {
     const data = { capacitance: 470e-6, voltage: 400, energy: 37.6, bleeder: 10e3, time: 8.917, until: 60 }
     expect(cautionText({ code: 'bulk-capacitor', data })).toMatchInlineSnapshot(
-      `"The bulk capacitor stays charged after switching off: 470 µF at 400 V hold 37.6 J. Its bleeder of 10 kΩ takes 8.92 s to bring it down to 60 V. Isolate, discharge and measure before touching; a bleeder can have failed."`,
+      `"Every bulk capacitor stays charged after switching off. The output capacitor of 470 µF at 400 V holds 37.6 J. Its bleeder of 10 kΩ takes 8.92 s to bring it down to 60 V. Isolate, discharge and measure each before touching; a bleeder can have failed."`,
     )
   })
 
@@ -88,9 +88,26 @@ describe('cautions name the danger in plain words', () => {
     expect(
       cautionText({ code: 'bulk-capacitor', data: { capacitance: 470e-6, voltage: 400, energy: 37.6 } }),
     ).toContain('No bleeder is given')
-    expect(cautionText({ code: 'bulk-capacitor', data: {} })).toContain('its capacitance is not given')
+    expect(cautionText({ code: 'bulk-capacitor', data: {} })).toContain('Its capacitance is not given')
     const low = { capacitance: 1e-3, voltage: 12, energy: 0.072, bleeder: 1e4, time: 0, until: 60 }
     expect(cautionText({ code: 'bulk-capacitor', data: low })).toContain('stays below 60 V')
+  })
+
+  it('speaks of the input capacitor before an output that seems harmless', () => {
+    const data = { input: 120, capacitance: 1e-3, voltage: 12, energy: 0.072, bleeder: 1e4, time: 0, until: 60 }
+    const text = cautionText({ code: 'bulk-capacitor', data })
+    expect(text).toContain('The input capacitor stays charged at 120 V; its capacitance is not given')
+    expect(text.indexOf('120 V')).toBeLessThan(text.indexOf('stays below 60 V'))
+    expect(cautionText({ code: 'bulk-capacitor', data: { input: 120, output: 12 } })).toContain(
+      'output capacitor at 12 V',
+    )
+  })
+
+  it('a hazardous voltage is said with the limit that it meets', () => {
+    const text = (data: Record<string, string | number>) => cautionText({ code: 'lethal-voltage', data })
+    expect(text({ voltage: 48, swing: 48 })).toContain('switching node swings to 48 V peak, above 42.4 V peak')
+    expect(text({ voltage: 120, side: 'output', dc: 120 })).toContain('its output stands at 120 V dc, above 60 V dc')
+    expect(text({ voltage: 59, overshoot: 59 })).toContain('with overshoot the rectifier sees 59 V peak')
   })
 
   it('work is left to qualified, licensed persons and the local code', () => {

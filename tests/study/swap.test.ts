@@ -200,6 +200,9 @@ describe('a swap', () => {
     )
     expect(codes(stage())).not.toContain('surge-silicon-carbide')
     expect(codes(stage(), 'barrier')).toContain('leakage-and-voltage-of-schottky')
+    const back = swap(stage(), pair, { from: 'carbide', to: 'silicon' }, settings(0)).cautions.map(({ code }) => code)
+    expect(back, 'more recovery makes no faster edges').not.toContain('faster-edges')
+    expect(back).toContain('gate-drive-retune')
   })
 
   it('names a part that no record describes, with the known ones', () => {

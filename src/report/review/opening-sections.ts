@@ -3,9 +3,13 @@ import type { CurrentCheck, ReviewResult } from '../../domain/review.ts'
 import { celsius, odds, quantity, withInterval } from '../format.ts'
 import { numberColumn, tableOf, textColumn } from '../table-view.ts'
 import type { Fact } from '../view-types.ts'
+import { isHazardous } from '../words/caution-words.ts'
 import { decisionSentences } from '../words/review-words.ts'
 import { partColumns } from './nominal-tables.ts'
 import { type ReviewSection, tableBlock } from './review-types.ts'
+
+/** Reasons that leave a part without a junction temperature. */
+const noTemperature: readonly string[] = ['no-stable-temperature', 'cannot-deliver', 'thermal-path-missing']
 
 export function decisionSection({ rank }: ReviewResult): ReviewSection {
   const best = rank.candidates.find(({ id }) => id === rank.verdict.best)
@@ -34,19 +38,14 @@ function bestFacts(best: CandidateResult): Fact[] {
 
 export function cautionsSection({ rank }: ReviewResult): ReviewSection {
   const items = rank.cautions.map(({ code, text }) => ({ lead: code, text }))
-  return {
-    title: 'Cautions',
-    blocks:
-      items.length === 0
-        ? [
-            {
-              kind: 'text',
-              text: 'No voltage of this stage is above 60 V dc or 42.4 V peak and it is not fed from the mains. The figures are estimates all the same: confirm them on the bench before release.',
-            },
-          ]
-        : [{ kind: 'list', heading: null, tone: 'caution', items }],
-  }
+  const list = { kind: 'list', heading: null, tone: 'caution', items } as const
+  return { title: 'Cautions', blocks: isHazardous(rank.cautions) ? [list] : [belowLimits, list] }
 }
+
+const belowLimits = {
+  kind: 'text',
+  text: 'No computed voltage of this stage, overshoot at its rectifiers included, is above 60 V dc or 42.4 V peak, and it is not fed from the mains.',
+} as const
 
 export function scopeSection(review: ReviewResult): ReviewSection {
   const { rank, limits } = review
@@ -132,9 +131,7 @@ function passTable({ rank, currents, limits }: ReviewResult) {
         numberColumn<CandidateResult>('allowed', 'A', 'i', (row) => check(row)?.limit_a ?? null),
         textColumn<CandidateResult>('current', 'i', (row) => verdict(row, 'average-current')),
         textColumn<CandidateResult>('junction', 't', (row) =>
-          row.reasons.some(({ code }) => code === 'no-stable-temperature' || code === 'thermal-path-missing')
-            ? 'fails'
-            : verdict(row, 'junction-over-limit'),
+          row.reasons.some(({ code }) => noTemperature.includes(code)) ? 'fails' : verdict(row, 'junction-over-limit'),
         ),
         textColumn<CandidateResult>('maximum leakage', 't', (row) => verdict(row, 'runaway-at-maximum-leakage')),
         textColumn<CandidateResult>('interval', 'e', (row) => verdict(row, 'recovery-too-slow')),
