@@ -67,6 +67,11 @@ export function conductionModeOf(instant: Instant): ConductionMode {
   return instant.discontinuous ? 'discontinuous' : 'continuous'
 }
 
+/** Peak reverse current of all parallel parts, whose peaks are taken to coincide. [A] */
+export function totalPeakReverseCurrent({ parts }: Kernel, { hot, other }: PointEvent): number {
+  return hot.peakReverseCurrent + (parts > 1 ? (parts - 1) * other.peakReverseCurrent : 0)
+}
+
 /**
  * Peak reverse voltage: the larger of the stored-charge part and the undamped capacitive ringing (PHYSICS 2).
  * Without loop inductance it is the blocking voltage.
@@ -77,8 +82,7 @@ export function peakReverseVoltage(kernel: Kernel, event: PointEvent, capacitanc
   if (loopInductance === 0) return voltage
   let peak = voltage
   if (event.hot.peakReverseCurrent > 0) {
-    const peakReverseCurrent =
-      event.hot.peakReverseCurrent + (kernel.parts - 1) * (kernel.parts > 1 ? event.other.peakReverseCurrent : 0)
+    const peakReverseCurrent = totalPeakReverseCurrent(kernel, event)
     peak = storedChargePeakVoltage({ voltage, loopInductance, peakReverseCurrent, tailTime: event.hot.tailTime })
   }
   if (capacitance === null) return peak

@@ -6,7 +6,14 @@ import { peakReverseVoltage } from '../stage/settled-point.ts'
 import { settle } from '../stage/thermal-balance.ts'
 import { hasThermalPath, junctionLimitOf } from '../stage/thermal-network.ts'
 import type { Candidate } from './candidate.ts'
-import { atMaximumLeakage, type NominalPoint, solvePoint, stageLossOf, totalLossOf } from './nominal-point.ts'
+import {
+  atMaximumLeakage,
+  deliversCold,
+  type NominalPoint,
+  solvePoint,
+  stageLossOf,
+  totalLossOf,
+} from './nominal-point.ts'
 import { runawaySurroundings } from './runaway-surroundings.ts'
 import { atInput, inputsOf, ownInputsOf } from './stage-inputs.ts'
 
@@ -25,7 +32,7 @@ export function judge(candidate: Candidate): Judgement {
   const { stage, record, kernel } = candidate
   if (!hasThermalPath(stage, record)) return unsettled('thermal-path-missing')
   const point = solvePoint(candidate)
-  if (point === null) return unsettled('no-stable-temperature')
+  if (point === null) return unsettled(causeOfLoss(candidate))
   const inputs = inputPoints(candidate, point)
   const settled = inputs.flatMap((each) => each.point ?? [])
   const lost = inputs.find((each) => each.point === null)
@@ -41,7 +48,6 @@ export function judge(candidate: Candidate): Judgement {
     parts: kernel.parts,
     junction: Math.max(...settled.map(({ junction }) => junction)),
     junctionLimit: junctionLimitOf(stage, record),
-    thermal: 'settled',
     settledAtMaximumLeakage: lost === undefined ? settlesAtMaximumLeakage(candidate) : null,
     recovery: tightestRecovery(kernel, settled),
   })
@@ -49,14 +55,19 @@ export function judge(candidate: Candidate): Judgement {
     rejection.code === 'runaway-at-maximum-leakage' ? runawayReason(candidate) : reasonOf(rejection),
   )
   if (lost !== undefined) {
-    reasons.push({ code: 'no-stable-temperature', text: '', value: lost.voltage, limit: null })
+    reasons.push({ code: atInput(candidate, lost.voltage, causeOfLoss), text: '', value: lost.voltage, limit: null })
   }
   const own = inputs.slice(0, ownInputsOf(stage).length)
   const mains = stage.input.kind === 'mains' ? own.map((each) => mainsResult(candidate, each)) : null
   return { point, mains, peakReverseVoltage: peak, reasons }
 }
 
-function unsettled(code: 'thermal-path-missing' | 'no-stable-temperature'): Judgement {
+/** Why there is no operating point: no power even with everything cold, or too much heat. */
+export function causeOfLoss({ kernel }: Candidate): 'cannot-deliver' | 'no-stable-temperature' {
+  return deliversCold(kernel) ? 'no-stable-temperature' : 'cannot-deliver'
+}
+
+function unsettled(code: 'thermal-path-missing' | ReturnType<typeof causeOfLoss>): Judgement {
   return { point: null, mains: null, peakReverseVoltage: null, reasons: [{ code, text: '', value: null, limit: null }] }
 }
 

@@ -3,18 +3,29 @@ import type { SentenceData } from '../domain/result.ts'
 import { chargeAtTurnOff, recoveryTimeFactor, timeToPeak } from '../models/charge-control.ts'
 import { statedSlopeAt } from '../stage/book-instant.ts'
 import type { RecoveryEvent } from '../stage/kernel.ts'
+import { conductionModeOf, totalPeakReverseCurrent } from '../stage/settled-point.ts'
 import { assumedCaseToSink, assumedJunctionToCase, assumedResistances } from '../stage/thermal-network.ts'
 import type { Assessment } from './assess-candidate.ts'
 import type { Candidate } from './candidate.ts'
 import type { NominalPoint } from './nominal-point.ts'
+import { highestBlockingVoltage } from './stage-inputs.ts'
 
 /** Softness below which recovery counts as abrupt; common practice, no source. */
 const snappySoftness = 0.5
 /** Share of an interval from which recovery time is flagged; common practice, no source. */
 const longShare = 0.1
 
+/** Everything to be said about one candidate: its record against itself, its fit, its point. */
+export function candidateCaveats(assessment: Assessment): Caveat[] {
+  const atPoint = pointCaveats(assessment)
+  // Once is enough: the point's own softness stands before that of a row somewhere else.
+  const told = atPoint.some(({ code }) => code === 'snappy')
+  const ofRecord = assessment.candidate.caveats.filter(({ code }) => !told || code !== 'snappy')
+  return [...ofRecord, ...assessment.caveats, ...atPoint]
+}
+
 /** What a reviewer must know about one candidate at its operating point. */
-export function pointCaveats({ candidate, point, peakReverseVoltage }: Assessment): Caveat[] {
+function pointCaveats({ candidate, point, peakReverseVoltage }: Assessment): Caveat[] {
   const id = candidate.record.id
   const found: Caveat[] = []
   const add = (code: CaveatCode, data: SentenceData): void => {
@@ -24,7 +35,7 @@ export function pointCaveats({ candidate, point, peakReverseVoltage }: Assessmen
     add('thermal-assumed', { what, value: what === 'junction_to_case' ? assumedJunctionToCase : assumedCaseToSink })
   }
   if (point === null || peakReverseVoltage === null) return found
-  if (peakReverseVoltage === point.event.instant.blockingVoltage && !hasOvershootData(candidate)) {
+  if (peakReverseVoltage === highestBlockingVoltage(candidate.stage) && !hasOvershootData(candidate)) {
     add('overshoot-not-included', { voltage: peakReverseVoltage })
   }
   if (point.chord) add('forward-chord', {})
@@ -36,26 +47,26 @@ export function pointCaveats({ candidate, point, peakReverseVoltage }: Assessmen
 
 type Add = (code: CaveatCode, data: SentenceData) => void
 
+/** A loop stated as 0 is data: there is nothing to overshoot. Otherwise the ringing needs the capacitance too. */
 function hasOvershootData({ stage, rectifier }: Candidate): boolean {
-  return stage.loopInductance !== null && (rectifier.capacitance !== null || rectifier.storesCharge)
+  return stage.loopInductance === 0 || (stage.loopInductance !== null && rectifier.capacitance !== null)
 }
 
 function currentCaveats({ kernel }: Candidate, { event }: NominalPoint, add: Add): void {
   const { hot, instant, slope } = event
   if (hot.outcome === 'negative-valley') add('negative-valley', { valley: instant.valley })
-  const peak = hot.peakReverseCurrent + (kernel.parts > 1 ? (kernel.parts - 1) * event.other.peakReverseCurrent : 0)
+  const peak = totalPeakReverseCurrent(kernel, event)
   const current = Math.max(instant.valley, 0)
   if (kernel.gate !== null) {
     const available = kernel.gate.transconductance * (kernel.gate.drive - kernel.gate.threshold)
     if (current + peak > available) add('switch-saturates', { needed: current + peak, available })
   } else if (peak > 3 * current + 5) add('peak-current-unchecked', { peak, current })
   const loop = kernel.loopInductance
-  if (loop === 0 || peak === 0) return
   const energy = loop * (peak * (peak / 2 + current))
   const recovery = hot.rectifierEnergy
   const total = kernel.parts > 1 ? recovery + (kernel.parts - 1) * event.other.rectifierEnergy : recovery
-  if (energy > 0.2 * total || slope * loop > 0.2 * instant.blockingVoltage)
-    add('loop-energy', { energy, recovery: total })
+  if (energy > 0.2 * total) add('loop-energy', { energy, recovery: total })
+  else if (slope * loop > 0.2 * instant.blockingVoltage) add('loop-energy', {})
 }
 
 function timeCaveats({ kernel }: Candidate, { event }: NominalPoint, add: Add): void {
@@ -140,7 +151,7 @@ export function stageCaveats(assessments: readonly Assessment[]): Caveat[] {
     kernel.loopInductance > 0 ? kernel.instant.blockingVoltage / kernel.loopInductance : Number.POSITIVE_INFINITY
   if (stated > allowed) add('slope-limited', { stated, allowed })
   const { instant } = point
-  if (Math.abs(instant.continuousValley) <= 0.01 * instant.meanCurrent)
+  if (conductionModeOf(instant) === 'boundary')
     add('mode-boundary', { valley: instant.continuousValley, mean: instant.meanCurrent })
   if (!kernel.thermal.switchSolved) add('switch-temperature-assumed', {})
   const limit = stage.switch.thermal?.junctionLimit ?? null

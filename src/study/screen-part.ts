@@ -1,10 +1,12 @@
-import { judgeCandidate, type Rejection } from '../decision/accept.ts'
+import { judgeCandidate } from '../decision/accept.ts'
 import type { RectifierRecord } from '../domain/rectifier.ts'
+import type { Reason } from '../domain/result.ts'
 import type { Stage } from '../domain/stage.ts'
 import { row } from '../stage/kernel.ts'
 import { settle } from '../stage/thermal-balance.ts'
 import { hasThermalPath, junctionLimitOf } from '../stage/thermal-network.ts'
 import { prepareCandidate } from './candidate.ts'
+import { causeOfLoss } from './judge-candidate.ts'
 import { stageLossOf } from './nominal-point.ts'
 import { highestBlockingVoltage } from './stage-inputs.ts'
 
@@ -13,7 +15,7 @@ export interface Screened {
   /** Nominal stage loss, exact; null where the part is rejected. [W] */
   readonly stageLoss: number | null
   /** A rule that it breaks for sure; null: it may be acceptable. */
-  readonly rejected: Rejection['code'] | null
+  readonly rejected: Reason['code'] | null
 }
 
 /**
@@ -33,7 +35,7 @@ export function screenPart(
   if (!hasThermalPath(stage, record)) return { stageLoss: null, rejected: 'thermal-path-missing' }
   const candidate = prepareCandidate(stage, record, testRectifiers)
   const { kernel } = candidate
-  if (!settle(kernel)) return { stageLoss: null, rejected: 'no-stable-temperature' }
+  if (!settle(kernel)) return { stageLoss: null, rejected: causeOfLoss(candidate) }
   const broken = judgeCandidate({
     ...lenient,
     meanCurrent: kernel.rows[row.meanRectifierCurrent]!,
@@ -54,7 +56,6 @@ const lenient = {
   meanCurrent: 0,
   averageCurrent: 1,
   parts: 1,
-  thermal: 'settled',
   junction: 0,
   junctionLimit: 1,
   settledAtMaximumLeakage: null,

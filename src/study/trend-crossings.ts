@@ -55,7 +55,8 @@ function crossingBetween(
     return first === null || second === null ? Number.NaN : second - first
   }
   const at = solver.crossing(gapAt, axis[k - 1]!, axis[k]!)
-  if (at === null) return null
+  // A rejected part crosses nobody; what a part is elsewhere in the step does not matter.
+  if (at === null || !usable(solver.spotAt(parts[a]!, at)) || !usable(solver.spotAt(parts[b]!, at))) return null
   const interval = crossingInterval(request, draws(a), draws(b))
   return {
     at: documentValue(request.over, at),
@@ -66,10 +67,13 @@ function crossingBetween(
   }
 }
 
-/** Loss of b minus loss of a where both may be used; null elsewhere: a rejected part crosses nobody. */
+function usable({ judgement }: TrendSpot): boolean {
+  return judgement.reasons.length === 0
+}
+
+/** Loss of b minus loss of a; null where one has no stable temperature. */
 function gapOf(a: TrendSpot, b: TrendSpot): number | null {
-  const usable = (spot: TrendSpot): boolean => spot.judgement.reasons.length === 0
-  return usable(a) && usable(b) && a.stageLoss !== null && b.stageLoss !== null ? b.stageLoss - a.stageLoss : null
+  return a.stageLoss !== null && b.stageLoss !== null ? b.stageLoss - a.stageLoss : null
 }
 
 /** Draws of a part at a few positions, solved when first asked for; paired across parts and positions. */

@@ -5,6 +5,7 @@ import { highestBetween } from '../stage/ambient-for-junction.ts'
 import { statedSlopeAt } from '../stage/book-instant.ts'
 import { evaluate } from '../stage/evaluate.ts'
 import { row } from '../stage/kernel.ts'
+import { totalPeakReverseCurrent } from '../stage/settled-point.ts'
 import type { TrendSolver, TrendSpot } from './trend-solver.ts'
 
 /** The knee lies where the turn-on losses are this much above those at the largest admissible slope. */
@@ -56,6 +57,9 @@ function minus(a: number | null, b: number | null): number | null {
   return a === null || b === null ? null : a - b
 }
 
+/** A temperature may also be lost at another input than the nominal one. */
+const heatCodes: readonly string[] = ['junction-over-limit', 'no-stable-temperature', 'runaway-at-maximum-leakage']
+
 /** First rule that a slope breaks: loop, saturation, voltage, temperature; null where it is admissible. */
 function inadmissible({ stage }: SlopeInput, { candidate, judgement }: TrendSpot): string | null {
   const { kernel } = candidate
@@ -70,13 +74,14 @@ function inadmissible({ stage }: SlopeInput, { candidate, judgement }: TrendSpot
     return 'loop'
   // Along the axis the slope is given; the gate that bounds the current is the stage's own.
   const gate = stage.switch.slope.kind === 'gate' ? stage.switch.slope : null
-  if (gate !== null && current + event.hot.peakReverseCurrent > gate.transconductance * (gate.drive - gate.threshold))
+  if (
+    gate !== null &&
+    current + totalPeakReverseCurrent(kernel, event) > gate.transconductance * (gate.drive - gate.threshold)
+  )
     return 'saturation'
   const codes = judgement.reasons.map(({ code }) => code)
   if (codes.includes('voltage-margin')) return 'voltage'
-  return codes.some((code) => code === 'junction-over-limit' || code === 'runaway-at-maximum-leakage')
-    ? 'temperature'
-    : null
+  return codes.some((code) => heatCodes.includes(code)) ? 'temperature' : null
 }
 
 /** Slopes that a part bears, and what sets the upper end. */

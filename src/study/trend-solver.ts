@@ -4,7 +4,7 @@ import type { TrendQuantity } from '../domain/study.ts'
 import { findRoot } from '../numerics/find-root.ts'
 import { type Candidate, prepareCandidate } from './candidate.ts'
 import { type Judgement, judge } from './judge-candidate.ts'
-import { deliversCold, stageLossOf } from './nominal-point.ts'
+import { stageLossOf } from './nominal-point.ts'
 import { stageAt } from './stage-variation.ts'
 
 /** One candidate somewhere along the axis. */
@@ -37,7 +37,7 @@ export function trendSolver(
 ): TrendSolver {
   const solve = (varied: Stage, record: RectifierRecord): TrendSpot => {
     const candidate = prepareCandidate(varied, record, records)
-    const judgement = deliversCold(candidate.kernel) ? judge(candidate) : nothing
+    const judgement = judge(candidate)
     const { point } = judgement
     return { candidate, judgement, stageLoss: point === null ? null : stageLossOf(candidate, point.rows) }
   }
@@ -58,12 +58,4 @@ export function trendSolver(
       return inside
     },
   }
-}
-
-/** A point at which the stage cannot deliver its power at all. */
-const nothing: Judgement = {
-  point: null,
-  mains: null,
-  peakReverseVoltage: null,
-  reasons: [{ code: 'no-stable-temperature', text: '', value: null, limit: null }],
 }

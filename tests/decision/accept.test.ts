@@ -10,7 +10,6 @@ const atEveryLimit: AcceptanceInput = {
   meanCurrent: 10,
   averageCurrent: 5,
   parts: 2,
-  thermal: 'settled',
   junction: 398.15,
   junctionLimit: 398.15,
   settledAtMaximumLeakage: true,
@@ -29,18 +28,10 @@ describe('judgeCandidate', () => {
     ['average-current', { meanCurrent: 10.001 }, 10.001, 10],
     ['average-current', { parts: 1 }, 10, 5],
     ['junction-over-limit', { junction: 398.2 }, 398.2, 398.15],
-    ['junction-over-limit', { junction: 398.2, thermal: 'over-limit' }, 398.2, 398.15],
-    ['no-stable-temperature', { junction: null, thermal: 'none' }, null, 398.15],
-    ['no-stable-temperature', { junction: null, thermal: 'none', settledAtMaximumLeakage: false }, null, 398.15],
-    ['thermal-path-missing', { junction: null, thermal: 'path-missing' }, null, null],
     ['runaway-at-maximum-leakage', { settledAtMaximumLeakage: false }, null, null],
     ['recovery-too-slow', { recovery: { value: 2.1e-6, limit: 2e-6 } }, 2.1e-6, 2e-6],
   ] as const)('says %s with the figure and its limit', (code, change, value, limit) => {
     expect(reasons(change)).toEqual([{ code, value, limit }])
-  })
-
-  it('does not contradict the outcome over-limit by rounding', () => {
-    expect(reasons({ thermal: 'over-limit' }).map(({ code }) => code)).toEqual(['junction-over-limit'])
   })
 
   it('says every reason at once, in a fixed order', () => {

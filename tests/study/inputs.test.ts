@@ -76,7 +76,7 @@ describe('inputs of the duty profile', () => {
     for (const { at: voltage, candidates } of points) {
       expect(candidates[0]!.peak_reverse_v).toBeCloseTo(alonePeak(voltage), 9)
     }
-    expect(cautions.find(({ code }) => code === 'lethal-voltage')!.data).toMatchObject({ voltage: 100 })
+    expect(cautions.find(({ code }) => code === 'lethal-voltage')!.data.voltage).toBeGreaterThanOrEqual(100)
   })
 })
 

@@ -7,6 +7,7 @@ export const reasonCodes = [
   'runaway-at-maximum-leakage',
   'recovery-too-slow',
   'thermal-path-missing',
+  'cannot-deliver',
 ] as const
 
 export type ReasonCode = (typeof reasonCodes)[number]
@@ -20,7 +21,7 @@ export const reasonWords: Readonly<Record<ReasonCode, string>> = {
   'junction-over-limit':
     'The junction reaches [{value:C_}|more than its limit][, above the limit of {limit:C_}]: improve the cooling or take a part with less loss.',
   'no-stable-temperature':
-    'No stable junction temperature exists[ at {value:V} mains]: loss rises faster with temperature than heat leaves. ' +
+    'No stable junction temperature exists[ at {value:V} input]: loss rises faster with temperature than heat leaves. ' +
     'Improve the cooling or take another part; no loss is stated because none would hold.',
   'runaway-at-maximum-leakage':
     'A part at the upper end of leakage runs away[: the surroundings are at {value:C_}, and {limit:C_} is the edge]. ' +
@@ -30,6 +31,9 @@ export const reasonWords: Readonly<Record<ReasonCode, string>> = {
     'Take a faster part or a lower frequency.',
   'thermal-path-missing':
     'The record gives no thermal resistance that this cooling can be reckoned with: add junction_to_case or junction_to_ambient.',
+  'cannot-deliver':
+    'The stage cannot deliver its power with this part[ at {value:V} input]: check the output, the resistances and the input. ' +
+    'No loss is stated because no operating point exists.',
 }
 
 /** The same in a few words, for counts of many parts. */
@@ -41,4 +45,5 @@ export const shortReasons: Readonly<Record<ReasonCode, string>> = {
   'runaway-at-maximum-leakage': 'runs away at the upper end of leakage',
   'recovery-too-slow': 'recovery does not fit its interval',
   'thermal-path-missing': 'no thermal path for this cooling',
+  'cannot-deliver': 'the stage cannot deliver its power',
 }

@@ -40,6 +40,7 @@ export function positionWords(over: TrendKey, at: number): string {
 const limits: Readonly<Record<string, readonly [string, string]>> = {
   'junction-over-limit': ['exceeds its junction limit', 'comes below its junction limit'],
   'no-stable-temperature': ['loses its stable temperature', 'gains a stable temperature'],
+  'cannot-deliver': ['cannot deliver the power', 'can deliver the power'],
   'runaway-at-maximum-leakage': ['runs away at maximum leakage', 'no longer runs away at maximum leakage'],
   'voltage-margin': ['leaves its voltage margin', 'comes within its voltage margin'],
   'average-current': ['exceeds its mean current', 'comes within its mean current'],
@@ -59,7 +60,7 @@ function ceases({ points }: TrendResult, { id, at, why }: TrendLimit): boolean {
   const below = points.findLast((point) => point.at <= at)?.candidates.find((part) => part.id === id)
   const above = points.find((point) => point.at > at)?.candidates.find((part) => part.id === id)
   if (below === undefined || above === undefined) return false
-  if (why === 'no-stable-temperature') return below.thermal === 'none'
+  if (why === 'no-stable-temperature' || why === 'cannot-deliver') return below.thermal === 'none'
   if (below.accepted !== above.accepted) return above.accepted
   const worse = why === 'voltage-margin' ? 'peak_reverse_v' : 'junction_c'
   return (below[worse] ?? 0) > (above[worse] ?? 0)

@@ -79,7 +79,8 @@ export const warningWords: Readonly<Record<CaveatCode, string>> = {
     'The reverse current peak[ of {peak:A}] is large against the current switched off[ ({current:A})]. Without gate data nobody checked ' +
     'whether the switch can carry it: state switch.gate or check its transfer curve.',
   'loop-energy':
-    'Energy in the loop inductance[ ({energy:J})] is not small against the recovery energy[ ({recovery:J})]: the split between rectifier and ' +
+    '[Energy in the loop inductance ({energy:J}) is not small against the recovery energy ({recovery:J})|' +
+    'The loop inductance takes a good part of the voltage while the current rises]: the split between rectifier and ' +
     'switch shifts and rings. Take the sum of both as the firmer figure and shorten the loop.',
   'idle-too-short':
     'The idle time[ of {idle:s}] is shorter than the recovery needs[ ({needed:s})]: charge is left when the switch turns on, and its loss is counted. ' +
