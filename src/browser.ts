@@ -26,7 +26,14 @@ interface Node {
   querySelector(selector: string): Node | null
   focus(): void
 }
+/** A cell of a table. */
+interface Cell extends Node {
+  readonly cellIndex: number
+  readonly parentElement: Node | null
+  closest(selector: string): { querySelectorAll(selector: string): Iterable<Node> } | null
+}
 declare const document: {
+  querySelectorAll(selector: `${string}[data-value]`): Iterable<Cell>
   getElementById(id: string): Node | null
   querySelectorAll(selector: string): Iterable<Node>
 }
@@ -139,13 +146,26 @@ function withProfile(changed: readonly WhatIfControl[]): Stage {
 function showIssued(): void {
   const again = exactValues(rank(inputs.stage, inputs.records, settings))
   const cells = [...document.querySelectorAll('section[id^="section-"] [data-value]')]
-  const printed = cells.map(({ dataset }) => Number(dataset.value))
-  const worst = printed.reduce((most, value, index) => Math.max(most, distance(value, again[index])), 0)
-  const agrees = printed.length === again.length && worst <= agreement
-  const found = agrees
-    ? `At the issued values: this browser recalculated ${again.length} printed figures and found the same, to ${agreement}.`
-    : 'This browser does not reproduce the printed figures; trust the printed ones.'
-  clear(found)
+  const off = cells.map(({ dataset }, index) => distance(Number(dataset.value), again[index]))
+  const worst = off.reduce((most, value, index) => (value > off[most]! ? index : most), 0)
+  if (cells.length === again.length && !(off[worst]! > agreement)) {
+    clear(
+      `At the issued values: this browser recalculated ${again.length} printed figures and found the same, to ${agreement}.`,
+    )
+    return
+  }
+  const which =
+    cells.length === again.length
+      ? `${nameOf(cells[worst]!)} is off by ${off[worst]!.toExponential(1)} of itself, the most of all`
+      : `${cells.length} are printed, it finds ${again.length}`
+  clear(`This browser does not reproduce the printed figures (${which}); trust the printed ones.`)
+}
+
+/** A printed figure by the part and the column it stands in. */
+function nameOf(cell: Cell): string {
+  const row = cell.parentElement
+  const heads = cell.closest('table')?.querySelectorAll('thead th') ?? []
+  return [row?.querySelector('th'), [...heads][cell.cellIndex]].map((head) => head?.textContent ?? '').join(', ')
 }
 
 function distance(printed: number, again: number | undefined): number {

@@ -18,8 +18,16 @@ export interface FigureErrors {
   readonly slope: number
 }
 
+const mostSteps = 100
+/** Steps of (u, y) shorter than this have the misfit too flat to tell better from worse. */
+const shortStep = 1e-4
+/** Share of the misfit that its rounding may be, generously: it is a sum of squares of small differences of logarithms. */
+const misfitRounding = 1e-6
+
 /**
  * Weighted least squares over the logarithms of the figures, by Gauss-Newton steps that are halved until they help.
+ * It goes on to a step that rounding alone keeps from shrinking: a misfit is flat at its least, and a fit that stopped
+ * there would be half the digits off, differently on every machine.
  * Two figures are met exactly. The errors of current and slope are common to all figures, so they do not weigh the fit
  * but are carried through it.
  */
@@ -32,7 +40,7 @@ export function fitFigures(input: {
 }): FittedFigures {
   let at = evaluate(input, input.start)
   if (input.names.length > 2) {
-    for (let iteration = 0; iteration < 40; iteration++) {
+    for (let iteration = 0; iteration < mostSteps; iteration++) {
       const next = improved(input, at)
       if (next === null) break
       at = next
@@ -47,12 +55,13 @@ interface Evaluation {
   readonly point: RecoveryPoint
   readonly logs: readonly LogFigure[]
   readonly misfit: number
-  /** Normal matrix J' W J and right-hand side J' W r. */
+  /** Normal matrix J' W J. */
   readonly normal: readonly [number, number, number]
-  readonly right: readonly [number, number]
+  /** Gauss-Newton step of (u, y) from here. */
+  readonly step: readonly [number, number]
 }
 
-/** Misfit of a point in squared standard deviations, with the normal equations there. */
+/** Misfit of a point in squared standard deviations, with the normal equations there and the step that they ask for. */
 function evaluate({ reading, figures, names, errors }: FitInput, point: RecoveryPoint): Evaluation {
   const event = steadyEvent(reading, point.lifetime, point.ratio)
   const logs = names.map((name) => logFigure(event, reading, name))
@@ -74,25 +83,32 @@ function evaluate({ reading, figures, names, errors }: FitInput, point: Recovery
     ru += weight * log.byLifetime * residual
     ry += weight * log.byRatio * residual
   }
-  return { point, logs, misfit, normal: [uu, uy, yy], right: [ru, ry] }
+  const determinant = uu * yy - uy * uy
+  const step = [limited((yy * ru - uy * ry) / determinant), limited((uu * ry - uy * ru) / determinant)] as const
+  return { point, logs, misfit, normal: [uu, uy, yy], step }
 }
 
 /** One step down the misfit; null when there is nothing left to gain. */
 function improved(input: FitInput, at: Evaluation): Evaluation | null {
-  const [uu, uy, yy] = at.normal
-  const [ru, ry] = at.right
-  const determinant = uu * yy - uy * uy
-  const stepLifetime = limited((yy * ru - uy * ry) / determinant)
-  const stepRatio = limited((uu * ry - uy * ru) / determinant)
-  if (!(Math.abs(stepLifetime) + Math.abs(stepRatio) > 1e-12)) return null
+  const [stepLifetime, stepRatio] = at.step
+  const length = lengthOf(at)
+  if (!(length > 0)) return null
   for (let part = 1; part > 1e-3; part *= 0.5) {
     const tried = evaluate(input, {
       lifetime: at.point.lifetime + part * stepLifetime,
       ratio: at.point.ratio + part * stepRatio,
     })
-    if (tried.misfit < at.misfit) return tried
+    const helps =
+      length < shortStep
+        ? lengthOf(tried) < length && tried.misfit <= at.misfit * (1 + misfitRounding)
+        : tried.misfit < at.misfit
+    if (helps) return tried
   }
   return null
+}
+
+function lengthOf({ step }: Evaluation): number {
+  return Math.abs(step[0]) + Math.abs(step[1])
 }
 
 /** A longer step than this only leaves the range in which the model means something. */

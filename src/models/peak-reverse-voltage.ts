@@ -91,7 +91,7 @@ function peakFrom({ voltage, loopInductance }: RingingPeakInput, law: Capacitanc
   const missing = (u: number) => energyAt(u) - energy
   let high = 2 * voltage
   for (let n = 0; n < 60 && missing(high) < 0; n++) high *= 2
-  const found = findRoot({ f: missing, low: voltage, high, tolerance: 1e-9 * voltage, maxIterations: 100 })
+  const found = findRoot({ f: missing, low: voltage, high, tolerance: 1e-13 * voltage, maxIterations: 100 })
   return found === null ? voltage : Math.max(voltage, found.root)
 }
 

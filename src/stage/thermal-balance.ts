@@ -9,6 +9,9 @@ const tolerance = 1e-6
 /** The crest of the line current is solved to this share of itself, beside the temperatures. */
 const crestTolerance = 1e-9
 const maxRounds = 25
+const refiningRounds = 12
+/** A share of the crest weighs as much as this share of the temperatures' rise. [K] */
+const restWeight = 100
 /** A root that is this far from running away, by the estimated sensitivities, is the lowest one. */
 const safeMargin = 0.35
 
@@ -26,6 +29,43 @@ const target = new Float64Array(3)
 export function settle(kernel: Kernel): boolean {
   startFromReference(kernel)
   return iterate(kernel) || settleSlowly(kernel)
+}
+
+/**
+ * Goes on from a settled kernel until rounding alone moves it, for figures that are printed and compared: at the
+ * tolerance of {@link settle}, two machines whose exp differs in its last bit stop some 1e-8 apart. Where a round does
+ * not bring it nearer (close to running away) the settled point stays.
+ */
+export function refine(kernel: Kernel): void {
+  const { temperatures, line } = kernel
+  evaluateRound(kernel)
+  placeResidual(kernel)
+  placeHeatInverse(kernel, solver.inverse)
+  for (let round = 0; round < refiningRounds; round++) {
+    const before = distanceFromRest(kernel)
+    const [hot, inSwitch, other, crest] = [temperatures[0]!, temperatures[1]!, temperatures[2]!, line.crestCurrent]
+    if (before === 0) return
+    const stepped = stepForward(kernel)
+    if (stepped) {
+      evaluateRound(kernel)
+      placeResidual(kernel)
+    }
+    if (stepped && kernel.delivers && distanceFromRest(kernel) < before) {
+      updateInverse(solver)
+      continue
+    }
+    temperatures[0] = hot
+    temperatures[1] = inSwitch
+    temperatures[2] = other
+    line.crestCurrent = crest
+    evaluateRound(kernel)
+    return
+  }
+}
+
+/** Temperatures in kelvin and the crest as its share, in one figure. */
+function distanceFromRest({ line }: Kernel): number {
+  return Math.max(largest(residual), restWeight * Math.abs(line.correction))
 }
 
 /** Keeps the present solution as the start of {@link settleFromHeld}. */

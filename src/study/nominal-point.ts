@@ -4,7 +4,7 @@ import { evaluate } from '../stage/evaluate.ts'
 import type { Instant, Kernel } from '../stage/kernel.ts'
 import { row } from '../stage/kernel.ts'
 import { crestInstant, type PointEvent, pointEvent } from '../stage/settled-point.ts'
-import { settle } from '../stage/thermal-balance.ts'
+import { refine, settle } from '../stage/thermal-balance.ts'
 import { junctionLimitOf } from '../stage/thermal-network.ts'
 import type { Candidate } from './candidate.ts'
 
@@ -26,6 +26,7 @@ export interface NominalPoint {
 export function solvePoint(candidate: Candidate): NominalPoint | null {
   const { kernel, stage, record } = candidate
   if (!settle(kernel)) return null
+  refine(kernel)
   const rows = kernel.rows.slice()
   const junction = kernel.temperatures[0]!
   const instant = crestInstant(kernel)

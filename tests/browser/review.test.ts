@@ -45,7 +45,37 @@ describe.skipIf(chromiumPath === undefined)('the review document in a browser', 
     const first = /data-value="(\d+\.\d{6,})"/.exec(text)![1]!
     const altered = folder.write('altered.html', text.replace(`"${first}"`, `"${Number(first) * (1 + 3e-9)}"`))
     const { page } = await openReview(browser, altered)
-    expect(await page.textContent('#what-if-state')).toContain('does not reproduce')
+    expect(await page.textContent('#what-if-state')).toMatch(
+      /does not reproduce the printed figures \([a-z0-9-]+, [a-z ,()%]+ is off by 3\.0e-9 of itself/i,
+    )
+    await page.close()
+  })
+
+  it('recalculates a part that three figures of one row tell about', async () => {
+    const row =
+      '{fixture: ramp, current: 10 A, slope: 200 A/us, voltage: 160 V, junction: 125 degC, trr: 42 ns, qrr: 95 nC, irrm: 4.5 A, trr_by: line-90-25}'
+    folder.write(
+      'onyx.yaml',
+      `- id: onyx
+  class: ultrafast
+  ratings: {reverse_voltage: 200 V, average_current: 10 A, junction: 175 degC}
+  thermal: {junction_to_case: 2 K/W, case_to_sink: 0.5 K/W}
+  recovery: [${row}]
+`,
+    )
+    const path = folder.write(
+      'winch.yaml',
+      `stage: buck
+input: {voltage: 100 V}
+output: {voltage: 24 V, current: 8 A}
+frequency: 120 kHz
+inductor: {inductance: 68 uH}
+cooling: {ambient: 50 degC, sink_to_ambient: 3 K/W}
+records: [onyx.yaml]
+`,
+    )
+    const { page } = await openReview(browser, folder.review(path, 'winch.html'))
+    expect(await page.textContent('#what-if-state')).toContain('found the same, to 1e-9')
     await page.close()
   })
 
