@@ -1,4 +1,5 @@
 import type { Caveat } from '../domain/caveat.ts'
+import { referenceTemperature } from '../domain/constants.ts'
 import type { Grade, LeakageRow, RampRow, RectifierRecord, RowPlace } from '../domain/rectifier.ts'
 import { figureText } from './figure-text.ts'
 
@@ -95,7 +96,8 @@ function maximumBelow(
 ): Caveat | null {
   if ((one.grade === 'maximum') === (other.grade === 'maximum')) return null
   if (one.grade === 'estimated' || other.grade === 'estimated') return null
-  if (Math.abs((one.junction ?? 298.15) - (other.junction ?? 298.15)) > sameKelvin) return null
+  if (Math.abs((one.junction ?? referenceTemperature) - (other.junction ?? referenceTemperature)) > sameKelvin)
+    return null
   const [maximum, typical] = one.grade === 'maximum' ? [first, second] : [second, first]
   if (maximum >= typical) return null
   return {

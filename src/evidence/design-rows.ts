@@ -1,7 +1,4 @@
-import { referenceSlope, referenceTemperature } from '../domain/constants.ts'
-
-/** Below this share of I0 the dependence on ln I is held: ln I has no end at zero. The stage's kernel has the same rule. */
-export const currentFloor = 0.01
+import { currentFloor, referenceSlope, referenceTemperature } from '../domain/constants.ts'
 
 /** Where a recovery takes place. */
 export interface RecoveryCondition {

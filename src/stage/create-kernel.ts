@@ -1,9 +1,10 @@
-import type { CalibratedRectifier } from '../domain/calibrated-rectifier.ts'
+import type { CalibratedRectifier, JunctionCapacitance } from '../domain/calibrated-rectifier.ts'
 import { celsiusZero, referenceSlope } from '../domain/constants.ts'
 import type { RectifierRecord } from '../domain/rectifier.ts'
 import type { Stage } from '../domain/stage.ts'
 import { capacitiveCharge, chargingCost } from '../models/junction-capacitance.ts'
-import { placeConditions } from './evaluate.ts'
+import { hottestShare, otherShare } from '../models/parallel-sharing.ts'
+import { blockingVoltage, placeConditions } from './evaluate.ts'
 import { type Kernel, type PartConstants, type PartState, type RecoveryEvent, rowCount } from './kernel.ts'
 import { createLineGrid } from './line-cycle.ts'
 import { thermalNetwork } from './thermal-network.ts'
@@ -18,18 +19,16 @@ export interface KernelSetup {
   readonly rectifier: CalibratedRectifier
 }
 
-/** Voltage that the rectifier blocks at a dc input (mains stages block the output). [V] */
+/** Voltage that a stage's rectifier blocks at its own input, or another. [V] */
 export function blockingVoltageOf(stage: Stage, inputVoltage = stage.input.voltage): number {
-  if (stage.kind === 'buck') return inputVoltage
-  if (stage.kind === 'inverting') return inputVoltage + stage.output.voltage
-  return stage.output.voltage
+  return blockingVoltage(stage.kind, inputVoltage, stage.output.voltage)
 }
 
 /** Allocates the working store of one candidate at the stage's nominal conditions. */
 export function createKernel({ stage, record, rectifier }: KernelSetup): Kernel {
   const { parts, imbalance } = stage.parallel
-  const hotShare = (1 + (parts > 1 ? imbalance : 0)) / parts
-  const otherShare = parts > 1 ? (1 - hotShare) / (parts - 1) : 0
+  const hotShare = hottestShare({ parts, imbalance })
+  const coolShare = otherShare({ parts, imbalance })
   const slope = stage.switch.slope
   const kernel: Kernel = {
     kind: stage.kind,
@@ -53,12 +52,12 @@ export function createKernel({ stage, record, rectifier }: KernelSetup): Kernel 
     turnOn: { current: 0, voltage: 0, energy: 0, addedShare: 1 },
     parts,
     hotShare,
-    otherShare,
+    otherShare: coolShare,
     thermal: thermalNetwork(stage, record),
     part: partConstants(record, rectifier),
     coefficients: nominalCoefficients(rectifier),
     hot: emptyState(hotShare, 1),
-    other: emptyState(otherShare, parts - 1),
+    other: emptyState(coolShare, parts - 1),
     instant: {
       inputVoltage: 0.5,
       blockingVoltage: 0.5,
@@ -87,16 +86,14 @@ export function createKernel({ stage, record, rectifier }: KernelSetup): Kernel 
   }
   kernel.temperatures.fill(kernel.thermal.reference)
   kernel.temperatures[1] = kernel.thermal.switchSolved ? kernel.thermal.reference : assumedSwitchJunction
-  refreshKernel(kernel, rectifier)
+  placeConditions(kernel)
+  placeCapacitance(kernel, rectifier.capacitance)
   return kernel
 }
 
-/** After a change of conditions or of the calibration: coefficients, capacitance at the blocking voltage, line nodes. */
-function refreshKernel(kernel: Kernel, rectifier: CalibratedRectifier): void {
-  kernel.coefficients.set(nominalCoefficients(rectifier))
-  placeConditions(kernel)
+/** Charge of the junction and what it costs the switch, at the blocking voltage. */
+function placeCapacitance(kernel: Kernel, capacitance: JunctionCapacitance | null): void {
   const voltage = kernel.instant.blockingVoltage
-  const capacitance = rectifier.capacitance
   kernel.part.capacitiveCharge = capacitance === null ? 0 : capacitiveCharge({ capacitance, voltage })
   kernel.part.chargingCost = capacitance === null ? 0 : chargingCost({ capacitance, voltage })
 }

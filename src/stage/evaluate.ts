@@ -1,4 +1,5 @@
 import { referenceTemperature } from '../domain/constants.ts'
+import type { StageKind } from '../domain/stage.ts'
 import { bookInstant } from './book-instant.ts'
 import { type Kernel, row, rowCount } from './kernel.ts'
 import { evaluateLine, evaluateLineRound, layLineGrid } from './line-cycle.ts'
@@ -47,12 +48,16 @@ function clearRows(rows: Float64Array): void {
   for (let k = 0; k < rowCount; k++) rows[k] = 0
 }
 
+/** Voltage that the rectifier blocks at a dc input (mains stages block the output). [V] */
+export function blockingVoltage(kind: StageKind, input: number, output: number): number {
+  if (kind === 'buck') return input
+  return kind === 'inverting' ? input + output : output
+}
+
 /** To be called after conditions other than draws of the part change: blocking voltage, and the line's nodes. */
 export function placeConditions(kernel: Kernel): void {
   const instant = kernel.instant
-  if (kernel.kind === 'buck') instant.blockingVoltage = kernel.inputVoltage
-  else if (kernel.kind === 'inverting') instant.blockingVoltage = kernel.inputVoltage + kernel.outputVoltage
-  else instant.blockingVoltage = kernel.outputVoltage
+  instant.blockingVoltage = blockingVoltage(kernel.kind, kernel.inputVoltage, kernel.outputVoltage)
   kernel.blockingLog = Math.log(instant.blockingVoltage / kernel.part.ratedVoltage)
   kernel.startCurrent = 0
   if (kernel.kind === 'mains-boost') {

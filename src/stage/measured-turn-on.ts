@@ -1,6 +1,6 @@
 import type { CalibratedRectifier } from '../domain/calibrated-rectifier.ts'
 import type { Caveat } from '../domain/caveat.ts'
-import { referenceSlope } from '../domain/constants.ts'
+import { currentFloor, referenceSlope } from '../domain/constants.ts'
 import type { MeasuredTurnOn } from '../domain/stage.ts'
 import { recoveredCharge, timeToPeak } from '../models/charge-control.ts'
 import { switchAddedEnergy, tailShare } from '../models/commutation-energy.ts'
@@ -77,7 +77,7 @@ function addedAtTest(
   // without a slope the drive cannot turn the switch on, and nothing recovers
   if (rectifier.recovery === null || !(slope > 0)) return cost
   const mean = rectifier.recovery.posterior.mean
-  const logCurrent = Math.log(Math.max(current / rectifier.ratedCurrent, 0.01))
+  const logCurrent = Math.log(Math.max(current / rectifier.ratedCurrent, currentFloor))
   const logSlope = Math.log(slope / referenceSlope)
   const lifetime = Math.exp(mean[0]! + mean[1]! * logCurrent + mean[2]! * logSlope)
   const tailTime = lifetime / (1 + Math.exp(mean[4]! + mean[5]! * logCurrent + mean[6]! * logSlope))

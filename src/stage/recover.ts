@@ -1,11 +1,8 @@
-import { referenceSlope } from '../domain/constants.ts'
+import { currentFloor, referenceSlope } from '../domain/constants.ts'
 import { chargeAtTurnOff, recoveredCharge, timeToPeak } from '../models/charge-control.ts'
 import { rectifierEnergy, switchAddedEnergy, tailShare } from '../models/commutation-energy.ts'
 import { residualRecovery } from '../models/residual-recovery.ts'
 import type { Kernel, PartState, RecoveryEvent } from './kernel.ts'
-
-/** Below this share of the rated current the lifetime's current dependence is held: ln I has no end at zero. */
-export const currentFloor = 0.01
 
 const turnOff = { peakCurrent: 0, current: 0, conductionTime: 0, lifetime: 0 }
 const ramp = { current: 0, slope: 0, lifetime: 0, tailTime: 0, storedCharge: 0 }

@@ -1,4 +1,5 @@
 import type { Caveat, CaveatCode } from '../domain/caveat.ts'
+import { currentFloor } from '../domain/constants.ts'
 import type { SentenceData } from '../domain/result.ts'
 import { chargeAtTurnOff, recoveryTimeFactor, timeToPeak } from '../models/charge-control.ts'
 import { statedSlopeAt } from '../stage/book-instant.ts'
@@ -126,7 +127,9 @@ function softnessCaveats({ kernel, rectifier }: Candidate, { event }: NominalPoi
 
 function softnessAt(c: Float64Array, ratedCurrent: number, hot: RecoveryEvent, current: number): number {
   // Lifetimes move from the event's own by the current's coefficients alone; slope and temperature stay.
-  const moved = Math.log(Math.max(current / ratedCurrent, 0.01)) - Math.log(Math.max(hot.current / ratedCurrent, 0.01))
+  const moved =
+    Math.log(Math.max(current / ratedCurrent, currentFloor)) -
+    Math.log(Math.max(hot.current / ratedCurrent, currentFloor))
   const lifetime = hot.lifetime * Math.exp(c[1]! * moved)
   const ratio = (hot.lifetime / hot.tailTime - 1) * Math.exp(c[5]! * moved)
   const tailTime = lifetime / (1 + ratio)

@@ -1,3 +1,4 @@
+import { celsiusZero } from '../domain/constants.ts'
 import type { SentenceData } from '../domain/result.ts'
 import type { SwapResult } from '../domain/study.ts'
 import { breakEvenReach } from './swap-break-even.ts'
@@ -20,7 +21,8 @@ export function swapGrounds(figures: SwapFigures): SwapResult['because'] {
   if (figures.switch_junction_change_k !== null) {
     grounds.push(ground('switch-junction-change', { change: figures.switch_junction_change_k }))
   }
-  if (to.class === 'schottky' && runaway !== null) grounds.push(ground('runaway-edge', { ambient: runaway + 273.15 }))
+  if (to.class === 'schottky' && runaway !== null)
+    grounds.push(ground('runaway-edge', { ambient: runaway + celsiusZero }))
   if (to.voltage_margin !== null && from.voltage_margin !== null) {
     grounds.push(ground('voltage-margin', { margin: to.voltage_margin, before: from.voltage_margin }))
   }
