@@ -105,3 +105,17 @@ describe('peak reverse voltage', () => {
     expect(storedChargePeakVoltage(input)).toBeCloseTo(420, 9)
   })
 })
+
+describe('a junction stated to have no capacitance', () => {
+  it('rings with nothing: 0 F and 0 C leave the blocking voltage', () => {
+    const none = [
+      { kind: 'law', zeroBias: 0, builtIn: 0.8, grading: 0.45 },
+      { kind: 'charge', charge: 0, voltage: 50 },
+    ] as const
+    for (const capacitance of none)
+      for (const voltageFall of [0, 15e-9, 1e-3]) {
+        const input = { voltage: 400, voltageFall, loopInductance: 20e-9, capacitance, parts: 2 }
+        expect(ringingPeakVoltage(input)).toBe(400)
+      }
+  })
+})
