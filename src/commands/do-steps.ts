@@ -7,11 +7,13 @@ import { openPool, type WorkerPool } from './worker-pool.ts'
 const leastForThreads = 0.25
 /** Rough cost of one solution of a dc and of a mains stage, only to choose by. [s] */
 const secondsPerSolution = { dc: 6e-6, mains: 60e-6 } as const
+/** The same of a first look at a part. [s] */
+const secondsPerLook = 80e-6
 /** More would wait for memory, not compute. */
 const mostThreads = 8
 /** Pieces per thread, so that none waits long for the last one. */
 const piecesPerThread = 4
-/** Parts of a first look between two turns of the event loop. */
+/** Parts of a first look in one piece: few enough to be sent quickly and to let a Ctrl-C through between them. */
 const partsAtOnce = 2000
 
 /**
@@ -41,12 +43,9 @@ export async function doSteps<Result>(
   }
 }
 
-/**
- * A first look takes less than sending its record to a thread and reading it there: measured 110 µs against 35 µs on
- * either side, so two threads would save nothing (tests/bench/catalogue.ts).
- */
+/** Sending a record to a thread and reading it there costs a fifth of a first look at it (tests/bench/catalogue.ts). */
 function worthThreads({ kind, stage, parts, draws }: PartWork): boolean {
-  if (kind === 'screen') return false
+  if (kind === 'screen') return parts.length * secondsPerLook > leastForThreads
   const solutions = kind === 'draw' ? draws : (stage.dutyProfile?.length ?? 0)
   const each = stage.kind === 'mains-boost' ? secondsPerSolution.mains : secondsPerSolution.dc
   return parts.length * solutions * each > leastForThreads

@@ -19,6 +19,14 @@ describe('the number of threads', () => {
     expect(JSON.stringify(await doSteps(rankSteps(stage, parts, long), session, threads))).toBe(here)
   })
 
+  it('changes no byte of the first look at thousands', async () => {
+    const many = inventedParts(4200, 6)
+    const short = { ...settings, draws: 0, top: 8 }
+    const shared = await doSteps(rankSteps(stage, many, short), session, 2)
+    expect(JSON.stringify(shared)).toBe(JSON.stringify(rank(stage, many, short)))
+    expect(shared.not_listed!.count).toBe(many.length - 8)
+  })
+
   it('changes no byte of a mains stage with a profile', async () => {
     const mains = openStage('cold-store-mains')
     const rows = Array.from({ length: 200 }, (_, k) => `0.5,${20 + (k % 81)},${20 + (k % 7)},${225 + (k % 5)}`)
