@@ -109,11 +109,13 @@ function checkForward(record: RectifierRecord, prior: Gaussian): Caveat[] {
     const scale = row.grade === 'maximum' ? maximumShift.forward : 1
     // Between the class's own level and that of its highest voltages any drop is an ordinary one.
     const above = record.class === 'schottky' ? schottkyRise(record.ratings.reverseVoltage) : 0
+    const { mean, range } = expected
     const typical = row.drop / scale
-    if (!expected.far(Math.min(typical, Math.max(typical - above, expected.range[0])))) return []
-    const [low, high] = [expected.range[0], expected.range[1] + above].map((drop) => digits(Math.max(drop * scale, 0)))
-    const property = `The forward voltage at ${digits(row.current)} A, ${celsius(junction)}`
-    return [implausible(record.id, property, row.place.name, `${digits(row.drop)} V`, `${low} to ${high} V`)]
+    if (!expected.far(typical > mean ? Math.max(typical - above, mean) : typical)) return []
+    const [low, high] = [range[0], range[1] + above].map((drop) => digits(Math.max(drop * scale, 0)))
+    const condition = `${digits(row.current)} A, ${celsius(junction)}`
+    const value = `${digits(row.drop)} V`
+    return [implausible(record.id, 'The forward voltage', row.place.name, value, `${low} to ${high} V`, condition)]
   })
 }
 
@@ -135,8 +137,9 @@ function checkLeakage(record: RectifierRecord, prior: Gaussian): Caveat[] {
     const shift = row.grade === 'maximum' ? maximumShift.leakage : 0
     if (!expected.far(Math.log(row.current) - shift)) return []
     const [low, high] = expected.range.map((ln) => digits(1e6 * Math.exp(ln + shift)))
-    const property = `The leakage at ${digits(row.voltage)} V, ${celsius(junction)}`
-    return [implausible(record.id, property, row.place.name, `${digits(1e6 * row.current)} µA`, `${low} to ${high} µA`)]
+    const condition = `${digits(row.voltage)} V, ${celsius(junction)}`
+    const value = `${digits(1e6 * row.current)} µA`
+    return [implausible(record.id, 'The leakage', row.place.name, value, `${low} to ${high} µA`, condition)]
   })
 }
 
@@ -170,13 +173,21 @@ function expectation(prior: Gaussian, design: Float64Array, methodVariance = 0) 
   const mean = predictedMean(prior, design)
   const deviation = Math.hypot(predictedDeviation(prior, design), Math.sqrt(methodVariance))
   return {
+    mean,
     range: [mean - expectedWithin * deviation, mean + expectedWithin * deviation] as const,
     far: (value: number) => Math.abs(value - mean) > implausibleBeyond * deviation,
   }
 }
 
-function implausible(candidate: string, property: string, row: string, value: string, expected: string): Caveat {
-  return { code: 'implausible-for-class', candidate, data: { property, row, value, expected } }
+function implausible(
+  candidate: string,
+  property: string,
+  row: string,
+  value: string,
+  expected: string,
+  condition = '',
+): Caveat {
+  return { code: 'implausible-for-class', candidate, data: { property, row, value, expected, condition } }
 }
 
 function celsius(kelvin: number): string {

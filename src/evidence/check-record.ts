@@ -1,6 +1,6 @@
 import type { CalibratedRectifier } from '../domain/calibrated-rectifier.ts'
 import type { Caveat, CaveatCode } from '../domain/caveat.ts'
-import type { Grade, RectifierRecord } from '../domain/rectifier.ts'
+import type { RectifierRecord } from '../domain/rectifier.ts'
 import { checkPlausibility } from './check-plausibility.ts'
 import { compareRows } from './compare-rows.ts'
 import { findContradiction } from './find-contradiction.ts'
@@ -46,21 +46,42 @@ function contradictions(record: RectifierRecord, readings: readonly RowReading[]
   ]
 }
 
-/** Typical figures only, or guaranteed ones only, in the rows that carry the part's main loss. */
-function checkGrades(record: RectifierRecord): Caveat[] {
-  const stores = priorGaussians(record.class).recovery !== null
-  const rows = stores
-    ? record.recovery
-    : [...record.forward, ...(record.forwardLine ? [record.forwardLine] : []), ...record.leakage]
-  const has = (grade: Grade) => rows.some((row) => row.grade === grade)
-  if (has('maximum') && rows.every((row) => row.grade === 'maximum')) {
-    return [
-      { code: 'maximum-only', candidate: record.id, data: stores ? { factor: Math.exp(-maximumShift.lifetime) } : {} },
-    ]
+/** Typical figures only in what carries the part's main loss; guaranteed ones only in any property that is read. */
+function checkGrades(read: RectifierRecord): Caveat[] {
+  const prior = priorGaussians(read.class)
+  const forward = { property: 'forward voltage', rows: read.forwardLine ? [read.forwardLine] : read.forward }
+  const properties = [
+    ...(prior.recovery
+      ? [{ property: 'recovery', rows: read.recovery, factor: Math.exp(-maximumShift.lifetime), main: true }]
+      : []),
+    { ...forward, factor: 1 / maximumShift.forward, main: prior.recovery === null },
+    ...(prior.leakage
+      ? [
+          {
+            property: 'leakage',
+            rows: read.leakage,
+            factor: Math.exp(-maximumShift.leakage),
+            main: prior.recovery === null,
+          },
+        ]
+      : []),
+  ]
+  const stated = properties.filter(({ rows }) => rows.length > 0)
+  const maximal = stated.filter(({ rows }) => rows.every(({ grade }) => grade === 'maximum'))
+  const typical = stated.filter(
+    ({ rows, main }) =>
+      main &&
+      rows.some(({ grade }) => grade === 'typical') &&
+      !rows.some(({ grade }) => grade === 'maximum' || grade === 'measured'),
+  )
+  const list = (found: typeof properties) => found.map(({ property }) => property).join(' and of ')
+  const caveats: Caveat[] = []
+  if (maximal.length > 0) {
+    const factors = maximal.map(({ factor }) => factor.toFixed(2)).join(' and ')
+    caveats.push({ code: 'maximum-only', candidate: read.id, data: { property: list(maximal), factors } })
   }
-  if (has('typical') && !has('maximum') && !has('measured'))
-    return [{ code: 'typical-only', candidate: record.id, data: {} }]
-  return []
+  if (typical.length > 0) caveats.push({ code: 'typical-only', candidate: read.id, data: { property: list(typical) } })
+  return caveats
 }
 
 /** What the record does not say. */

@@ -197,6 +197,19 @@ describe('plausibility by class', () => {
     expect(found).toEqual(['The carrier lifetime', 'Lifetime over tail time', 'The forward voltage', 'The leakage'])
   })
 
+  it('expects a higher drop of a Schottky part for more reverse voltage, and names the condition', () => {
+    const drop = (reverseVoltage: number, volts: number) =>
+      calibrated({
+        class: 'schottky',
+        ratings: { reverseVoltage, averageCurrent: 10, junction: kelvin(150) },
+        forward: [forwardRow({ current: 10, drop: volts })],
+      }).caveats.find(({ code }) => code === 'implausible-for-class')?.data
+    expect(drop(200, 0.9)).toBeUndefined()
+    expect(drop(40, 0.45)).toBeUndefined()
+    expect(drop(200, 1.4)).toMatchObject({ property: 'The forward voltage', condition: '10 A, 25 °C' })
+    expect(drop(40, 0.95)).toMatchObject({ value: '0.95 V' })
+  })
+
   it('expects more of a guaranteed maximum than of a typical figure', () => {
     expect(implausible({ leakage: [leakageRow({ current: 30e-6 })] })).toEqual(['The leakage'])
     expect(implausible({ leakage: [leakageRow({ current: 30e-6, grade: 'maximum' })] })).toEqual([])
@@ -213,5 +226,18 @@ describe('plausibility by class', () => {
     )
     expect(snappy!.data).toEqual({ softness: expect.closeTo(0.3, 6), current: 8 })
     expect(calibrated({ recovery: [rampRow({ recoveryTime: 42e-9, softness: 0.8 })] }).codes).not.toContain('snappy')
+  })
+})
+
+describe('the grades of a record', () => {
+  it('are told by property: typical recovery only, whatever the others have, and maxima only of the others', () => {
+    const { caveats } = calibrated({
+      recovery: [rampRow({ charge: 90e-9 })],
+      forward: [forwardRow({ grade: 'maximum' })],
+      leakage: [leakageRow({ grade: 'maximum' })],
+    })
+    const dataOf = (wanted: string) => caveats.find(({ code }) => code === wanted)?.data
+    expect(dataOf('typical-only')).toEqual({ property: 'recovery' })
+    expect(dataOf('maximum-only')).toEqual({ property: 'forward voltage and of leakage', factors: '0.93 and 0.20' })
   })
 })

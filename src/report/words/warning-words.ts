@@ -23,7 +23,7 @@ export const warningWords: Readonly<Record<CaveatCode, string>> = {
   'charge-computed':
     'Qrr in [{row}|a recovery row] is trr times I_RM over 2 within rounding, so it was most likely computed and not measured. It is not counted as a third reading.',
   'implausible-for-class':
-    '[{property}|A figure][ in {row}] is far from what its class shows[ ({value} against {expected})]. ' +
+    '[{property}|A figure][ at {condition}][ in {row}] is far from what its class shows[ ({value} against {expected})]. ' +
     'Check the value, its unit and the class; the figure is used as it stands.',
   'row-condition-assumed':
     '[{row}|A recovery row] does not state its [{condition}|current or slope]: the rated current and 100 A/µs are assumed with 50 % error. ' +
@@ -34,10 +34,10 @@ export const warningWords: Readonly<Record<CaveatCode, string>> = {
     '[{row}|A recovery row] does not say how the end of trr was defined: the line through 90 % and 25 % is assumed with 15 % more doubt. ' +
     'Set trr_by from the source.',
   'typical-only':
-    'The record holds typical figures only, so the high figure rests on the assumed spread between parts. ' +
+    'Of [{property}|its main property] the record holds typical figures only, so the high figure rests on the assumed spread between parts. ' +
     'Ask the maker for a guaranteed maximum or measure several parts.',
   'maximum-only':
-    'The record holds a guaranteed maximum only: the nominal figure is an estimated typical one[ ({factor:x} of the maximum)]. ' +
+    'Of [{property}|a property] the record holds a guaranteed maximum only: the nominal figure is an estimated typical one[ ({factors} of the maximum)]. ' +
     'Measure one part before the difference to another is relied upon.',
   'recovery-guess':
     'The record says nothing about recovery: it is a guess from the class, and its interval is wide. ' +
