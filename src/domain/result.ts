@@ -84,6 +84,8 @@ export interface CandidateResult {
   readonly title: string | null
   readonly price: number | null
   readonly evidence: EvidenceGrade
+  /** Which figures are guesses, where the grade is D. */
+  readonly evidence_because: string | null
   readonly point: PointResult | null
   readonly event: EventResult | null
   readonly event_maximum: EventResult | null

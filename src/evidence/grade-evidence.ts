@@ -22,14 +22,24 @@ export function gradeEvidence(input: {
   readonly condition: OperatingCondition
 }): EvidenceGrade {
   const { record, rectifier, condition } = input
-  if (guessed(rectifier)) return 'D'
+  if (guessedFigures(rectifier).length > 0) return 'D'
   return rectifier.storesCharge ? gradeRecovery(record, condition) : gradeForward(record, condition)
 }
 
-function guessed({ storesCharge, recovery, forward, capacitance, leakage }: CalibratedRectifier): boolean {
-  if (forward.origin === 'class-guess') return true
-  if (storesCharge) return recovery?.origin === 'class-guess'
-  return capacitance === null || leakage?.origin === 'class-guess'
+/** What makes the grade D, in words; null for the other grades, which the rows give. */
+export function guessWords(rectifier: CalibratedRectifier): string | null {
+  const figures = guessedFigures(rectifier)
+  if (figures.length === 0) return null
+  return `${figures.join(' and ')} ${figures.length > 1 ? 'are class guesses' : 'is a class guess'}`
+}
+
+function guessedFigures({ storesCharge, recovery, forward, capacitance, leakage }: CalibratedRectifier): string[] {
+  const figures: string[] = []
+  if (storesCharge && recovery?.origin === 'class-guess') figures.push('recovery')
+  if (forward.origin === 'class-guess') figures.push('forward voltage')
+  if (!storesCharge && capacitance === null) figures.push('capacitance')
+  if (!storesCharge && leakage?.origin === 'class-guess') figures.push('leakage')
+  return figures
 }
 
 /** Rows that state their current and slope; a step fixture has no slope. */

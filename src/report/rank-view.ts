@@ -31,7 +31,15 @@ function tableNote(ranked: readonly CandidateResult[]): string {
     level === undefined
       ? ''
       : ` Low and high hold ${significant(level * 100)} % of the draws; Tj high is the 95th percentile.`
-  return `Ranked by stage loss. Total is the sum of the six loss rows.${interval}`
+  return `Ranked by stage loss. Total is the sum of the six loss rows.${interval}${guessNote(ranked)}`
+}
+
+/** What the evidence grade D is for. */
+function guessNote(ranked: readonly CandidateResult[]): string {
+  const guesses = ranked.flatMap(({ id, evidence, evidence_because: because }) =>
+    evidence === 'D' && because !== null ? [`${id}: ${because}`] : [],
+  )
+  return guesses.length > 0 ? ` Evidence D: ${guesses.join('; ')}.` : ''
 }
 
 /** The rest of very many, in numbers. */

@@ -1,7 +1,7 @@
 import type { Caveat } from '../domain/caveat.ts'
 import { celsiusZero } from '../domain/constants.ts'
 import type { CandidateResult, PointResult, Reason } from '../domain/result.ts'
-import { gradeEvidence } from '../evidence/grade-evidence.ts'
+import { gradeEvidence, guessWords } from '../evidence/grade-evidence.ts'
 import { forwardDrop } from '../models/forward-drop.ts'
 import type { Instant } from '../stage/kernel.ts'
 import { row } from '../stage/kernel.ts'
@@ -98,6 +98,7 @@ function identity(candidate: Candidate) {
     class: record.class,
     title: record.title,
     price: record.price,
+    evidence_because: guessWords(candidate.rectifier),
     interval_w: null,
     odds_best: null,
     odds_error: null,

@@ -1,7 +1,7 @@
 import { describe, expect, it } from 'vitest'
 import type { RectifierRecord } from '../../src/domain/rectifier.ts'
 import { calibrate } from '../../src/evidence/calibrate.ts'
-import { gradeEvidence } from '../../src/evidence/grade-evidence.ts'
+import { gradeEvidence, guessWords } from '../../src/evidence/grade-evidence.ts'
 import { posteriorAfterRow } from '../../src/evidence/posterior-after-row.ts'
 import { provenanceAt } from '../../src/evidence/provenance.ts'
 import { forwardDropAt, recoveryAt } from '../../src/evidence/recovery-at.ts'
@@ -62,6 +62,11 @@ describe('the evidence grade', () => {
     expect(grade({ ...whole, forward: [forwardRow(), forwardRow({ junction: kelvin(90) })] })).toBe('C')
     expect(grade({ ...whole, capacitance: null })).toBe('D')
     expect(grade({ ...whole, leakage: [] })).toBe('D')
+    const because = (fields: Parameters<typeof record>[0]) =>
+      guessWords(calibrate({ record: record({ forward: [forwardRow()], ...fields }), blockingVoltage: 400 }).rectifier)
+    expect(because({ ...whole, leakage: [] })).toBe('leakage is a class guess')
+    expect(because({ ...whole, leakage: [], capacitance: null })).toBe('capacitance and leakage are class guesses')
+    expect(because(whole)).toBeNull()
   })
 })
 

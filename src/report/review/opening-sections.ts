@@ -32,7 +32,10 @@ function bestFacts(best: CandidateResult): Fact[] {
     { label: 'Of it caused by the rectifier', text: total },
     { label: 'Efficiency', text: best.efficiency === null ? '–' : `${(best.efficiency * 100).toFixed(2)} %` },
     { label: 'Odds of being cheapest', text: best.odds_best === null ? 'not computed' : odds(best.odds_best) },
-    { label: 'Evidence grade', text: `${best.evidence} (A: rows at the operating point; D: class guess)` },
+    {
+      label: 'Evidence grade',
+      text: `${best.evidence} (${best.evidence_because ?? 'A: rows at the operating point; D: class guess'})`,
+    },
   ]
 }
 
