@@ -12,7 +12,7 @@ export type JunctionCapacitance =
   | { readonly kind: 'charge'; readonly charge: number; readonly voltage: number }
 
 /** How a property came about. */
-export type PropertyOrigin = 'given' | 'class-guess'
+type PropertyOrigin = 'given' | 'class-guess'
 
 /**
  * A record together with its class prior: linear models of its properties with their doubt.
