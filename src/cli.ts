@@ -1,8 +1,9 @@
 #!/usr/bin/env node
 import { Command, CommanderError, InvalidArgumentError } from 'commander'
-import { outcomeOf, outcomeOfStream, usageFailure } from './commands/outcome.ts'
+import { outcomeOf, outcomeOfStream } from './commands/outcome.ts'
 import type { StudyOptions } from './commands/read-study.ts'
 import { openSession } from './commands/session.ts'
+import { usageFailure } from './commands/usage-failure.ts'
 
 /** Both `src/` and `dist/` lie right under the package's folder. */
 const session = openSession(new URL('..', import.meta.url))

@@ -2,6 +2,7 @@ import { closeSync, openSync, rmSync, statSync, writeSync } from 'node:fs'
 import type { CaptureDocument } from '../domain/capture.ts'
 import { storesCharge } from '../domain/rectifier.ts'
 import { appendRecoveryRow, type RowTexts } from '../input/append-recovery-row.ts'
+import { listedIds } from '../input/check-references.ts'
 import { readRecords } from '../input/read-records.ts'
 import { didYouMean } from '../problems/nearest.ts'
 import { CommandFailure, failure } from './failure.ts'
@@ -48,8 +49,9 @@ export function appendRow(path: string, document: CaptureDocument, source: strin
 }
 
 function unknownId(path: string, id: string, known: readonly string[]) {
-  const hint = [didYouMean(id, known), `known: ${known.join(', ')}`].filter((part) => part !== '').join('; ')
-  return failure({ code: 'id-unknown', file: path, found: id, hint })
+  const expected = listedIds(known)
+  const hint = [didYouMean(id, known), expected].filter((part) => part !== '').join('; ')
+  return failure({ code: 'id-unknown', file: path, found: id, expected, hint })
 }
 
 function unusable(found: string, expected: string, hint = '') {
@@ -72,11 +74,19 @@ function locked<T>(path: string, work: () => T): T {
     throw failure({ code: 'file-unwritable', file: path, found: 'another process is appending to it', hint })
   }
   try {
-    writeSync(handle, String(process.pid))
+    noteOwner(handle, path)
     return work()
   } finally {
     closeSync(handle)
     rmSync(lock, { force: true })
+  }
+}
+
+function noteOwner(handle: number, path: string): void {
+  try {
+    writeSync(handle, String(process.pid))
+  } catch (error) {
+    throw writingFailure(path, error)
   }
 }
 

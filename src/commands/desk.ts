@@ -1,5 +1,5 @@
 import type { TableCount } from '../domain/study.ts'
-import { formatProblem } from '../problems/format-problem.ts'
+import { formatWarning } from '../problems/format-problem.ts'
 import { type Problem, type Reading, sortProblems } from '../problems/problem.ts'
 import { CommandFailure } from './failure.ts'
 import { readText } from './read-file.ts'
@@ -44,10 +44,12 @@ export function collecting<T>(desk: Desk, work: () => T): T | null {
 
 /** Tells the warnings on stderr, then ends the run where there is a problem. */
 export function settleDesk(desk: Desk, quiet: boolean, session: Session): void {
-  if (!quiet) for (const text of warningTexts(desk)) session.tell(`${text}\n`)
-  if (desk.problems.length > 0) throw new CommandFailure(desk.problems, desk.texts)
+  const warnings = quiet ? [] : desk.warnings
+  // With a problem they stand in one list with it, in the order of the lines.
+  if (desk.problems.length > 0) throw new CommandFailure(desk.problems, desk.texts, warnings)
+  for (const text of warningTexts(desk, warnings)) session.tell(`${text}\n`)
 }
 
-function warningTexts({ warnings, texts }: Desk): readonly string[] {
-  return sortProblems(warnings).map((warning) => formatProblem(warning, texts.get(warning.file) ?? null))
+function warningTexts({ texts }: Desk, warnings: readonly Problem[]): readonly string[] {
+  return sortProblems(warnings).map((warning) => formatWarning(warning, texts.get(warning.file) ?? null))
 }

@@ -1,4 +1,4 @@
-import { formatProblem } from '../problems/format-problem.ts'
+import { formatProblem, formatWarning } from '../problems/format-problem.ts'
 import { type Problem, type ProblemCode, sortProblems } from '../problems/problem.ts'
 
 /** Texts of files already read, by path, so that a message can show the line it speaks of. */
@@ -7,10 +7,14 @@ export type SourceTexts = ReadonlyMap<string, string>
 /** The run cannot go on and the person can mend it: exit code 2. */
 export class CommandFailure extends Error {
   readonly problems: readonly Problem[]
-  constructor(problems: readonly Problem[], sources: SourceTexts = new Map()) {
-    const sorted = sortProblems(problems)
-    super(sorted.map((problem) => formatProblem(problem, sources.get(problem.file) ?? null)).join('\n'))
-    this.problems = sorted
+  constructor(problems: readonly Problem[], sources: SourceTexts = new Map(), warnings: readonly Problem[] = []) {
+    const isWarning = new Set(warnings)
+    const told = sortProblems([...problems, ...warnings]).map((problem) => {
+      const source = sources.get(problem.file) ?? null
+      return isWarning.has(problem) ? formatWarning(problem, source) : formatProblem(problem, source)
+    })
+    super(told.join('\n'))
+    this.problems = sortProblems(problems)
   }
 }
 

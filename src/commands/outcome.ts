@@ -1,4 +1,7 @@
-import { CommandFailure, failure, failureDocument } from './failure.ts'
+import { formatProblem } from '../problems/format-problem.ts'
+import type { Problem } from '../problems/problem.ts'
+import { problemSentence } from '../problems/words.ts'
+import { CommandFailure, failureDocument, onCommandLine } from './failure.ts'
 import { writingFailure } from './replace-file.ts'
 import type { Session } from './session.ts'
 
@@ -34,10 +37,22 @@ interface Told {
 }
 
 function tellFailure(error: CommandFailure): Told {
-  const count = error.problems.length
-  const summary = count === 1 ? error.message : `${count} problems stand in the way`
-  const code = count === 1 ? error.problems[0]!.code : 'input-unusable'
+  const [only] = error.problems
+  const count = error.problems.reduce((sum, problem) => sum + countOf(problem), 0)
+  const summary = count === 1 && only !== undefined ? sentenceOf(only) : `${count} problems stand in the way`
+  const code = count === 1 && only !== undefined ? only.code : 'input-unusable'
   return { exitCode: 2, text: error.message, document: failureDocument(code, summary, error.problems) }
+}
+
+/** Where very many were found, the last one says how many more there are. */
+function countOf({ code, found }: Problem): number {
+  return code === 'more-problems' ? Number(found) : 1
+}
+
+/** The document names the command line and the code beside it already. */
+function sentenceOf(problem: Problem): string {
+  if (problem.file !== onCommandLine('').file) return formatProblem(problem)
+  return `${problem.path === '' ? '' : `${problem.path}: `}${problemSentence(problem)}`
 }
 
 function tellFault(error: unknown): Told {
@@ -54,22 +69,4 @@ function firstLine(text: string): string {
 function asksForJson(argv: readonly string[]): boolean {
   const end = argv.indexOf('--')
   return argv.slice(0, end === -1 ? argv.length : end).includes('--json')
-}
-
-/** What the command line parser says, as a problem of ours. */
-export function usageFailure(code: string, message: string): CommandFailure {
-  if (code === 'commander.help')
-    return failure({ code: 'option-unusable', found: 'no command is given', hint: seeCommands })
-  const [sentence = '', ...rest] = message.replace(/^error: /, '').split('\n')
-  const subject = /'([^']*)'/.exec(sentence)?.[1] ?? ''
-  const suggestion = /\(Did you mean (.*)\?\)/.exec(rest.join(' '))?.[1]
-  const hint = suggestion === undefined ? (nextStep[code] ?? '') : `did you mean ${suggestion}?`
-  return failure({ code: 'option-unusable', path: subject, found: sentence.replace(/\.$/, ''), hint })
-}
-
-const seeCommands = 'ebbwatt --help lists them'
-
-const nextStep: Readonly<Record<string, string>> = {
-  'commander.unknownCommand': seeCommands,
-  'commander.unknownOption': 'ebbwatt COMMAND --help lists them',
 }

@@ -1,6 +1,8 @@
 import { isUtf8 } from 'node:buffer'
 import { createHash } from 'node:crypto'
-import { closeSync, constants, fstatSync, openSync, readFileSync } from 'node:fs'
+import { closeSync, constants, fstatSync, openSync, readdirSync, readFileSync } from 'node:fs'
+import { basename, dirname } from 'node:path'
+import { didYouMean } from '../problems/nearest.ts'
 import { CommandFailure, failure } from './failure.ts'
 
 const largestFile = 64 * 1024 * 1024
@@ -78,6 +80,21 @@ const reasons: Readonly<Record<string, string>> = {
 /** Turns what the system says about a path into a problem; what is no system error passes as it is. */
 export function readingFailure(path: string, error: unknown, hint = ''): unknown {
   if (error instanceof CommandFailure || !(error instanceof Error) || !('code' in error)) return error
-  if (error.code === 'ENOENT') return failure({ file: path, code: 'file-missing', hint })
+  if (error.code === 'ENOENT') return missing(path, hint)
   return failure({ file: path, code: 'file-unreadable', found: reasons[String(error.code)] ?? error.message, hint })
+}
+
+function missing(path: string, hint: string): CommandFailure {
+  const near = didYouMean(basename(path), neighbours(dirname(path)))
+  const hints = [hint, near].filter((part) => part !== '').join('; ')
+  return failure({ file: path, code: 'file-missing', expected: 'an existing file or folder', hint: hints })
+}
+
+/** What stands in the folder, as far as it can be told. */
+function neighbours(folder: string): readonly string[] {
+  try {
+    return readdirSync(folder).slice(0, 1000)
+  } catch {
+    return []
+  }
 }

@@ -2,8 +2,8 @@ import { dirname, isAbsolute, join, relative, sep } from 'node:path'
 import type { RectifierRecord } from '../domain/rectifier.ts'
 import type { Stage } from '../domain/stage.ts'
 import type { StudySettings } from '../domain/study.ts'
-import { checkReferences } from '../input/check-references.ts'
-import { readStage, type StageDocument } from '../input/read-stage.ts'
+import { checkReferences, listedIds } from '../input/check-references.ts'
+import { readStage, recordPaths, type StageDocument } from '../input/read-stage.ts'
 import { didYouMean } from '../problems/nearest.ts'
 import type { Problem } from '../problems/problem.ts'
 import type { OutputOptions } from './delivery.ts'
@@ -63,7 +63,10 @@ export async function readStageAndRecords(
 ): Promise<{ readonly stage: Stage | null; readonly records: readonly RectifierRecord[] }> {
   const { records: further = [], only = [] } = options
   const document = await readStageFile(desk, stagePath)
-  const named = (document?.records ?? []).map((path) => seenFrom(stagePath, path))
+  const text = desk.texts.get(stagePath)
+  // A stage with problems still says where its records are: theirs belong into the same list.
+  const paths = document?.records ?? (text === undefined ? [] : recordPaths(text, stagePath))
+  const named = paths.map((path) => seenFrom(stagePath, path))
   const files = [
     ...named.flatMap((path) => collecting(desk, () => recordFiles(path, `named by ${stagePath}`)) ?? []),
     ...further.flatMap((path) => collecting(desk, () => recordFiles(path)) ?? []),
@@ -101,7 +104,13 @@ export function unknownIds(
   const known = records.map(({ id }) => id)
   return ids
     .filter((id) => !known.includes(id))
-    .map((id) => ({ ...onCommandLine(option), code: 'id-unknown', found: id, hint: didYouMean(id, known) }))
+    .map((id) => ({
+      ...onCommandLine(option),
+      code: 'id-unknown',
+      found: id,
+      expected: listedIds(known),
+      hint: didYouMean(id, known),
+    }))
 }
 
 /** Paths as reached from the stage file, with slashes, so that the same inputs give the same bytes from any folder. */

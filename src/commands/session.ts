@@ -9,7 +9,7 @@ export interface Session {
   readonly print: (text: string) => void
   /** Writes to stderr: everything else. */
   readonly tell: (text: string) => void
-  /** Columns of the terminal that shows stdout; a fixed width where there is none. */
+  /** Columns to fill: COLUMNS of the environment, else those of the terminal that shows stdout, else a fixed width. */
   readonly width: number
   readonly colour: boolean
   /** Shows a passing line on a terminal's stderr; "" removes it. Silent elsewhere. */
@@ -17,6 +17,7 @@ export interface Session {
 }
 
 const widthWithoutTerminal = 120
+const [narrowest, widest] = [40, 400]
 
 /** The session of this process. */
 export function openSession(root: URL): Session {
@@ -26,12 +27,19 @@ export function openSession(root: URL): Session {
     version: JSON.parse(readFileSync(new URL('package.json', root), 'utf8')).version,
     print: (text) => void stdout.write(text),
     tell: (text) => void stderr.write(text),
-    width: stdout.isTTY ? stdout.columns : widthWithoutTerminal,
+    width: widthOf(env.COLUMNS, stdout.isTTY ? stdout.columns : undefined),
     colour: stdout.isTTY && (env.NO_COLOR ?? '') === '' && env.TERM !== 'dumb',
     progress: (text) => {
       if (stderr.isTTY) stderr.write(`\r\u001B[K${text}`)
     },
   }
+}
+
+/** COLUMNS counts where it is a sensible whole number, with and without a terminal. */
+export function widthOf(asked: string | undefined, terminal: number | undefined): number {
+  const columns = /^\d{1,4}$/.test(asked ?? '') ? Number(asked) : 0
+  if (columns >= narrowest && columns <= widest) return columns
+  return terminal === undefined || terminal === 0 ? widthWithoutTerminal : terminal
 }
 
 /** Lets a waiting Ctrl-C through: signals are heard only between two turns of the event loop. */

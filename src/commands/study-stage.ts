@@ -5,14 +5,25 @@ import { quantity } from '../report/format.ts'
 import { failure } from './failure.ts'
 import { breathe, type Session } from './session.ts'
 
-/** Runs a study; what it refuses becomes a problem of the stage file. */
-export async function studyStage<R>(stagePath: string, session: Session, study: () => R | Promise<R>): Promise<R> {
+/** The option of the command line that a refusal is about, and what was typed there. */
+export interface AskedBy {
+  readonly path: string
+  readonly found?: string
+}
+
+/** Runs a study; what it refuses becomes a problem of the stage file, or of the option that asked for it. */
+export async function studyStage<R>(
+  stagePath: string,
+  session: Session,
+  study: () => R | Promise<R>,
+  askedBy: (refusal: StudyRefusal) => AskedBy | null = () => null,
+): Promise<R> {
   session.progress('studying the stage ...')
   await breathe()
   try {
     return await study()
   } catch (error) {
-    throw error instanceof StudyRefusal ? refusalFailure(stagePath, error) : error
+    throw error instanceof StudyRefusal ? refusalFailure(stagePath, error, askedBy(error)) : error
   } finally {
     session.progress('')
     await breathe()
@@ -34,9 +45,10 @@ const nextStep: Readonly<Partial<Record<RefusalCode, string>>> = {
   'no-candidate': 'name records in the stage file or with --records',
 }
 
-function refusalFailure(stagePath: string, { code, data }: StudyRefusal) {
+function refusalFailure(stagePath: string, { code, data }: StudyRefusal, asked: AskedBy | null) {
   const { path = '', found = powerOf(data), expected = '', hint = nextStep[code] ?? '' } = data
   const texts = { path: String(path), found: String(found), expected: String(expected), hint: String(hint) }
+  if (asked !== null) return failure({ code: problemOfRefusal[code], ...texts, ...asked })
   return failure({ code: problemOfRefusal[code], file: stagePath, ...texts })
 }
 

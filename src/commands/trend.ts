@@ -1,4 +1,6 @@
+import type { StageKind } from '../domain/stage.ts'
 import type { TrendQuantity, TrendRequest, TrendResult } from '../domain/study.ts'
+import type { StudyRefusal } from '../domain/study-refusal.ts'
 import { parseQuantity } from '../input/units/parse-quantity.ts'
 import type { QuantityKindName } from '../input/units/quantity-kinds.ts'
 import { didYouMean } from '../problems/nearest.ts'
@@ -10,7 +12,7 @@ import { failure } from './failure.ts'
 import { readStudy, type StudyOptions } from './read-study.ts'
 import { checkTarget } from './replace-file.ts'
 import type { Session } from './session.ts'
-import { studyStage } from './study-stage.ts'
+import { type AskedBy, studyStage } from './study-stage.ts'
 
 export interface TrendOptions extends StudyOptions {
   readonly over: string
@@ -26,7 +28,8 @@ export async function runTrend(stagePath: string, options: TrendOptions, session
   const request = readRequest(options)
   const { stage, records, settings, files } = await readStudy(stagePath, options, session)
   if (delivery.target !== null) checkTarget(delivery.target, files)
-  const result = words(await studyStage(stagePath, session, () => trend(stage, records, request, settings)))
+  const study = () => trend(stage, records, request, settings)
+  const result = words(await studyStage(stagePath, session, study, askedBy(options, stage.kind)))
   await deliverResult(result, delivery, files, session)
   return exitCode(result, options.strict === true)
 }
@@ -37,6 +40,15 @@ function exitCode({ points, warnings }: TrendResult, strict: boolean): 0 | 3 | 4
   if (accepted.length === 0) return 3
   const warned = new Set(warnings.map(({ candidate }) => candidate))
   return strict && accepted.some(({ id, extrapolated }) => extrapolated || warned.has(id)) ? 4 : 0
+}
+
+/** Which option asked for what the study refuses. A buck cannot run from too little, the others from too much. */
+function askedBy({ from, to }: TrendOptions, kind: StageKind) {
+  return ({ code, data: { path } }: StudyRefusal): AskedBy | null => {
+    if (code === 'quantity-not-applicable') return { path: '--over' }
+    if (code !== 'range-outside') return null
+    return path === 'input' && kind !== 'buck' ? { path: '--to', found: to } : { path: '--from', found: from }
+  }
 }
 
 const kindOf: Readonly<Record<TrendQuantity, QuantityKindName>> = {

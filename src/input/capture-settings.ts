@@ -3,6 +3,7 @@ import type { CaptureColumn, CaptureSettings } from '../domain/capture.ts'
 import type { RecoveryTimeDefinition } from '../domain/rectifier.ts'
 import type { Reading } from '../problems/problem.ts'
 import { boundProblems } from './bound-problems.ts'
+import { tableInstead, wrongKind } from './file-kind.ts'
 import {
   addProblem,
   group,
@@ -23,8 +24,12 @@ import { readYaml } from './yaml/read-yaml.ts'
 
 /** Reads a file with capture settings: SI, defaults filled in and listed in `assumed`; all problems at once. */
 export function readCapture(sourceText: string, file: string): Reading<CaptureSettings> {
+  const table = tableInstead(file, 'capture')
+  if (table !== null) return { value: null, problems: table, warnings: [] }
   const { yaml, problems } = readYaml(sourceText, file, 'capture settings')
   if (yaml === null) return { value: null, problems: boundProblems(problems), warnings: [] }
+  const wrong = wrongKind(yaml.data, file, 'capture')
+  if (wrong !== null) return { value: null, problems: wrong, warnings: [] }
   const reader = startReader(yaml)
   const shape = checkShape(yaml, validateCapture)
   const settings = settingsFrom(rootSection(reader))

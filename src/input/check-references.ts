@@ -42,12 +42,14 @@ function unknownIds({ file, named }: StageDocument, records: readonly RectifierR
       ...place,
       path,
       found: shown(id),
-      expected: listed(ids),
+      expected: listedIds(ids),
       hint: didYouMean(id, ids),
     }))
 }
 
-function listed(ids: readonly string[]): string {
+/** The ids that are known, the first eight by name. */
+export function listedIds(known: readonly string[]): string {
+  const ids = [...new Set(known)].sort()
   const first = ids.slice(0, 8).map(shown).join(', ')
   if (ids.length === 0) return 'no record was read'
   return ids.length > 8 ? `known are ${first} and ${ids.length - 8} more` : `known are ${first}`

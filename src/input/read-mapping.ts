@@ -1,6 +1,7 @@
 import { validateMapping, validateRectifier } from '#validators'
 import type { Problem, Reading } from '../problems/problem.ts'
 import { boundProblems, joinProblems } from './bound-problems.ts'
+import { tableInstead, wrongKind } from './file-kind.ts'
 import { recordFrom } from './record.ts'
 import { plainNumber, rootSection, startReader, text, texts } from './section.ts'
 import { checkShape } from './shape.ts'
@@ -27,8 +28,12 @@ export interface CatalogueMapping {
  * so that a wrong unit or a missing key is told here and once, not for every row of the table.
  */
 export function readMapping(sourceText: string, file: string): Reading<CatalogueMapping> {
+  const table = tableInstead(file, 'mapping')
+  if (table !== null) return { value: null, problems: table, warnings: [] }
   const { yaml, problems } = readYaml(sourceText, file, 'a mapping of columns')
   if (yaml === null) return { value: null, problems: boundProblems(problems), warnings: [] }
+  const wrong = wrongKind(yaml.data, file, 'mapping')
+  if (wrong !== null) return { value: null, problems: wrong, warnings: [] }
   const shape = checkShape(yaml, validateMapping)
   const values = shape.length === 0 ? checkRecord(yaml) : []
   const all = joinProblems(problems, shape, values)

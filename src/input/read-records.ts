@@ -2,6 +2,7 @@ import { validateRectifier } from '#validators'
 import type { RectifierRecord } from '../domain/rectifier.ts'
 import type { Reading } from '../problems/problem.ts'
 import { boundProblems, joinProblems } from './bound-problems.ts'
+import { tableInstead, wrongKind } from './file-kind.ts'
 import { recordFrom } from './record.ts'
 import { type Reader, type Section, startReader } from './section.ts'
 import { checkShape } from './shape.ts'
@@ -12,8 +13,12 @@ import { readYaml } from './yaml/read-yaml.ts'
  * once with its place; the records come only when there is none.
  */
 export function readRecords(text: string, file: string): Reading<readonly RectifierRecord[]> {
+  const table = tableInstead(file, 'records')
+  if (table !== null) return { value: null, problems: table, warnings: [] }
   const { yaml, problems } = readYaml(text, file, 'one rectifier record or a list of them')
   if (yaml === null) return { value: null, problems: boundProblems(problems), warnings: [] }
+  const wrong = wrongKind(yaml.data, file, 'records')
+  if (wrong !== null) return { value: null, problems: wrong, warnings: [] }
   const reader = startReader(yaml)
   const shape = checkShape(yaml, validateRectifier)
   const records = recordSections(reader).map(recordFrom)

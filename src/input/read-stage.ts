@@ -3,6 +3,7 @@ import type { Stage, StageKind } from '../domain/stage.ts'
 import type { Reading } from '../problems/problem.ts'
 import { boundProblems, joinProblems } from './bound-problems.ts'
 import { checkStage } from './check-stage.ts'
+import { tableInstead, wrongKind } from './file-kind.ts'
 import {
   group,
   has,
@@ -44,8 +45,12 @@ export interface StageDocument {
  * of shape, unit and sense is told at once with its place; the stage comes only when there is none.
  */
 export function readStage(sourceText: string, file: string): Reading<StageDocument> {
+  const table = tableInstead(file, 'stage')
+  if (table !== null) return { value: null, problems: table, warnings: [] }
   const { yaml, problems } = readYaml(sourceText, file, 'a stage')
   if (yaml === null) return { value: null, problems: boundProblems(problems), warnings: [] }
+  const wrong = wrongKind(yaml.data, file, 'stage')
+  if (wrong !== null) return { value: null, problems: wrong, warnings: [] }
   const reader = startReader(yaml)
   const shape = checkShape(yaml, validateStage)
   const root = rootSection(reader)
@@ -56,6 +61,12 @@ export function readStage(sourceText: string, file: string): Reading<StageDocume
   return all.length > 0
     ? { value: null, problems: boundProblems(all), warnings }
     : { value: document, problems: [], warnings }
+}
+
+/** The records that a stage file names, also where the stage itself cannot be used. */
+export function recordPaths(sourceText: string, file: string): readonly string[] {
+  const { yaml } = readYaml(sourceText, file, 'a stage')
+  return yaml === null ? [] : texts(rootSection(startReader(yaml)), 'records').map(({ text }) => text)
 }
 
 function documentFrom(root: Section, file: string): StageDocument {

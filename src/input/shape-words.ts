@@ -26,7 +26,8 @@ export function expectedBySchema(schema: unknown): string {
   if (kind !== null) return wantedQuantity(kind)
   if (words !== undefined) return `one of ${words.join(', ')}`
   const sentence = (description ?? 'a value').replace(/\.$/, '')
-  return sentence.slice(0, 1).toLowerCase() + sentence.slice(1)
+  // An abbreviation keeps its capitals: CSV.
+  return /^[A-Z][A-Z]/.test(sentence) ? sentence : sentence.slice(0, 1).toLowerCase() + sentence.slice(1)
 }
 
 const typeWords: Readonly<Record<string, string>> = {

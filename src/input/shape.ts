@@ -1,7 +1,8 @@
 import type { SchemaError, Validator } from '#validators'
-import { didYouMean } from '../problems/nearest.ts'
+import { didYouMean, nearestWords } from '../problems/nearest.ts'
 import type { Problem } from '../problems/problem.ts'
 import { shown } from '../problems/shown.ts'
+import { mergeCommas } from './decimal-commas.ts'
 import type { ShapeFault } from './shape-fault.ts'
 import { valueProblem } from './shape-of-value.ts'
 import { expectedBySchema } from './shape-words.ts'
@@ -11,7 +12,11 @@ import type { YamlFile } from './yaml/read-yaml.ts'
 /** What the schema finds wrong with the data, as problems with places; everything at once. */
 export function checkShape(yaml: YamlFile, validate: Validator<unknown>): readonly Problem[] {
   if (validate(yaml.data)) return []
-  const faults = withoutPairs(yaml.data, validate.errors ?? []).flatMap((error) => faultOf(yaml.data, error))
+  const errors = withoutMisspelt(withoutPairs(yaml.data, validate.errors ?? []))
+  const faults = mergeCommas(
+    yaml.data,
+    errors.flatMap((error) => faultOf(yaml.data, error)),
+  )
   const told = new Map(faults.map((fault) => [`${pathText(fault.path)} ${pathText(fault.at)} ${fault.code}`, fault]))
   return [...told.values()].map(({ at, of, path, ...fault }) => ({
     ...fault,
@@ -59,7 +64,6 @@ function missingOneOf(path: Path, error: SchemaError): ShapeFault {
 function unknownKey(path: Path, error: SchemaError): ShapeFault {
   const key = String(error.params.additionalProperty)
   const known = Object.keys((error.parentSchema?.properties as object | undefined) ?? {})
-  // "{resistance: 0,5 ohm}" reads as a second key "5 ohm".
   const hint = /^\d/.test(key) ? 'if a decimal comma stands before it, write a point' : didYouMean(key, known)
   return {
     code: 'key-unknown',
@@ -90,6 +94,24 @@ function withoutPairs(data: unknown, errors: readonly SchemaError[]): readonly S
     if (other === undefined || rank(error) > rank(other)) last.set(parent, error)
   }
   return errors.filter((error) => !isPair(error) || last.get(parentOf(error)) === error)
+}
+
+/** A key that is missing because it stands there misspelt is told once, where it stands. */
+function withoutMisspelt(errors: readonly SchemaError[]): readonly SchemaError[] {
+  const meant = new Set(
+    errors
+      .filter(({ keyword }) => keyword === 'additionalProperties')
+      .flatMap(({ instancePath, params, parentSchema }) => {
+        const known = Object.keys((parentSchema?.properties as object | undefined) ?? {})
+        return nearestWords(String(params.additionalProperty), known).map((key) => `${instancePath} ${key}`)
+      }),
+  )
+  return errors.filter(({ keyword, instancePath, params, schema }) => {
+    if (keyword === 'required') return !meant.has(`${instancePath} ${params.missingProperty}`)
+    if (keyword !== 'anyOf') return true
+    const alternatives = (schema as readonly { readonly required: readonly string[] }[]).flatMap((one) => one.required)
+    return !alternatives.some((key) => meant.has(`${instancePath} ${key}`))
+  })
 }
 
 /** "/recovery/1/slope" as keys and positions; a step is a position where the data hold a list. */

@@ -6,7 +6,16 @@ import { problemSentence } from './words.ts'
  * under what was found, when the text is at hand.
  */
 export function formatProblem(problem: Problem, sourceText: string | null = null): string {
-  const head = `${place(problem)}  ${problem.code}  ${problem.path === '' ? '' : `${problem.path}: `}${problemSentence(problem)}`
+  return formatted(problem, problem.code, sourceText)
+}
+
+/** The same for what is said and does not stand in the way. */
+export function formatWarning(warning: Problem, sourceText: string | null = null): string {
+  return formatted(warning, `warning  ${warning.code}`, sourceText)
+}
+
+function formatted(problem: Problem, code: string, sourceText: string | null): string {
+  const head = `${place(problem)}  ${code}  ${problem.path === '' ? '' : `${problem.path}: `}${problemSentence(problem)}`
   const line = sourceText === null || isTable.test(problem.file) ? undefined : sourceLine(sourceText, problem.line)
   return line === undefined || line.trim() === '' ? head : `${head}\n${pointed(line, problem)}`
 }

@@ -1,6 +1,6 @@
 /**
  * The known words closest to what was typed: equal but for case first, else the fewest edits, at most a third
- * of the word's length (one edit is always allowed). Empty when nothing is near.
+ * of the word's length (one edit is always allowed), else those that begin like it. Empty when nothing is near.
  */
 export function nearestWords(typed: string, known: readonly string[]): readonly string[] {
   if (typed === '' || typed.length > 64) return []
@@ -10,8 +10,15 @@ export function nearestWords(typed: string, known: readonly string[]): readonly 
   const limit = Math.max(1, Math.floor(typed.length / 3))
   const distances = known.map((word) => ({ word, edits: edits(folded, fold(word), limit) }))
   const least = Math.min(...distances.map(({ edits }) => edits), limit + 1)
-  if (least > limit) return []
+  if (least > limit) return known.filter((word) => isBeginning(folded, fold(word)))
   return distances.filter(({ edits }) => edits === least).map(({ word }) => word)
+}
+
+/** Three letters or more that a word begins with, or its first part but for one edit: "max", "freq", the "onix" of "onyx-600v". */
+function isBeginning(typed: string, word: string): boolean {
+  if (typed.length < 3) return false
+  const [first = ''] = word.split('_')
+  return word.startsWith(typed) || (typed.length > 3 && first !== word && edits(typed, first, 1) <= 1)
 }
 
 /** "did you mean "a" or "b"?", or "" when nothing is near. */

@@ -6,7 +6,7 @@ export const problemCodes = [
   'file-too-large',
   'file-empty',
   'file-not-text',
-  'file-kind-unknown',
+  'file-kind',
   'file-exists',
   'file-is-input',
   'file-unwritable',

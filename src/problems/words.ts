@@ -11,7 +11,7 @@ const words: Readonly<Record<ProblemCode, (problem: Problem) => string>> = {
   'file-too-large': (p) => `is too large (${p.found}); at most ${p.expected} are read${next(p.hint)}`,
   'file-empty': (p) => `holds nothing; wanted is ${p.expected}`,
   'file-not-text': (p) => `is not text in UTF-8: ${p.found}${next(p.hint)}`,
-  'file-kind-unknown': (p) => `cannot tell what this file is; wanted is ${p.expected}${next(p.hint)}`,
+  'file-kind': (p) => `this is ${p.found}; wanted is ${p.expected}${aside(p.hint)}`,
   'file-exists': (p) => `exists already and is not overwritten${next(p.hint)}`,
   'file-is-input': (p) => `is read by this command and is not overwritten${next(p.hint)}`,
   'file-unwritable': (p) => `cannot be written${because(p.found)}${next(p.hint)}`,

@@ -1,6 +1,6 @@
 import { describe, expect, it } from 'vitest'
 import { CommandFailure } from '../../src/commands/failure.ts'
-import { outcomeOf, usageFailure } from '../../src/commands/outcome.ts'
+import { outcomeOf } from '../../src/commands/outcome.ts'
 import type { Problem } from '../../src/problems/problem.ts'
 import { recordingSession } from './session-double.ts'
 
@@ -66,6 +66,27 @@ describe('the end of a run', () => {
     expect(JSON.parse(out).error).toMatchObject({ code: 'input-unusable', text: '2 problems stand in the way' })
   })
 
+  it('counts those that a bounded list only numbers, and no warning', async () => {
+    const warning = { ...problem, code: 'value-implausible', line: 1 } as const
+    const { out, err } = await outcome(['--json'], async () => {
+      throw new CommandFailure([problem, { ...problem, code: 'more-problems', found: '30' }], new Map(), [warning])
+    })
+    expect(JSON.parse(out).error).toMatchObject({ text: '31 problems stand in the way', problems: [{}, {}] })
+    expect(err.split('\n').map((line) => /warning {2}[a-z-]+|[a-z]+-[a-z]+/.exec(line)?.[0])).toEqual([
+      'warning  value-implausible',
+      'more-problems',
+      'unit-unknown',
+      undefined,
+    ])
+  })
+
+  it('does not repeat in the text what the document says of the command line', async () => {
+    const { out } = await outcome(['--json'], async () => {
+      throw new CommandFailure([{ ...problem, file: 'command line', line: 0, column: 0, path: '--from' }])
+    })
+    expect(JSON.parse(out).error.text).toBe('--from: "100 khz": "khz" is no unit here (did you mean "kHz"?)')
+  })
+
   it('takes --json after -- for a name', async () => {
     const { out } = await outcome(['rank', '--', '--json'], async () => {
       throw new CommandFailure([problem])
@@ -86,19 +107,5 @@ describe('the end of a run', () => {
       text: 'TypeError: x is not a function',
       problems: [],
     })
-  })
-})
-
-describe('what the command line parser refuses', () => {
-  it('keeps its suggestion', () => {
-    expect(
-      usageFailure('commander.unknownOption', "error: unknown option '--jsn'\n(Did you mean --json?)").message,
-    ).toBe("command line  option-unusable  --jsn: unknown option '--jsn' (did you mean --json?)")
-  })
-
-  it('points to the help where it has none', () => {
-    expect(usageFailure('commander.unknownCommand', "error: unknown command 'xyz'").message).toBe(
-      "command line  option-unusable  xyz: unknown command 'xyz' (ebbwatt --help lists them)",
-    )
   })
 })

@@ -49,7 +49,7 @@ const stages: readonly Case[] = [
   {
     name: 'misspelt keys and words, and what is missing through them',
     text: stageWith(['frequency', 'freqency'], ['boost', 'bost'], ['inductor: {inductance: 150 uH}\n', '']),
-    problems: ['1:1 key-missing frequency', '1:1 key-missing inductor', '1:8 word-unknown stage', '4:1 key-unknown '],
+    problems: ['1:1 key-missing inductor', '1:8 word-unknown stage', '4:1 key-unknown '],
   },
   {
     name: 'quantities of another kind, zero, negative and not finite',
@@ -93,6 +93,22 @@ const stages: readonly Case[] = [
     text: stageWith(['good.yaml', 'nowhere, good.yaml']),
     problems: ['0:0 file-missing '],
   },
+  {
+    name: 'a decimal comma in braces, told once, and a missing word beside its misspelling',
+    text: stageWith(['case: 80 degC', 'ambient: 45 degC, sink_to_ambient: 3,5 K/W'], ['current: 5 A', 'curent: 5 A']),
+    problems: ['3:26 key-unknown output', '6:46 number-decimal-comma cooling.sink_to_ambient'],
+  },
+  {
+    name: 'a key that is indented too far',
+    text: stageWith(['frequency', ' frequency']),
+    problems: ['3:33 yaml-syntax '],
+  },
+  {
+    name: 'the file of another command',
+    text: 'capture: ramp\nfile: a.csv\ncolumns: {current: {column: 1, unit: A}}\n',
+    problems: ['1:1 file-kind '],
+  },
+  { name: 'records instead of a stage', text: goodRecord, problems: ['1:1 file-kind '] },
   { name: 'nothing at all', text: '', problems: ['1:1 file-empty '] },
 ]
 
@@ -165,6 +181,25 @@ describe('a broken stage file is refused with all its problems and their places'
   it.each(stages)('$name', ({ text, problems }) => {
     expect(problemsOf('rank', text)).toEqual({ code: 2, problems })
   })
+})
+
+it('a broken stage and its broken records are told in one list, warnings at their lines and marked', () => {
+  const folder = scratchFolder()
+  writeFileSync(join(folder, 'good.yaml'), goodRecord.replace('16 A', '16').replace('class: ultrafast', 'class: ultra'))
+  writeFileSync(join(folder, 'case.yaml'), stageWith(['100 kHz', '100'], ['48 V', '48'], ['150 uH', '150 H']))
+  for (const command of ['rank', 'check']) {
+    const { code, out, err } = ebbwatt([command, 'case.yaml', '--json'], { cwd: folder })
+    expect(code).toBe(2)
+    const told = err.match(/^\S+:\d+:\d+ {2}(?:warning {2})?[a-z-]+/gm)
+    expect(told).toEqual([
+      'case.yaml:2:18  unit-missing',
+      'case.yaml:4:12  unit-missing',
+      'case.yaml:5:24  warning  value-implausible',
+      'good.yaml:2:8  word-unknown',
+      'good.yaml:3:52  unit-missing',
+    ])
+    expect(JSON.parse(out).error.text).toBe('4 problems stand in the way')
+  }
 })
 
 describe('a broken record file is refused with all its problems and their places', () => {

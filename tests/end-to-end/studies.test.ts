@@ -56,8 +56,8 @@ describe('trend', () => {
     [['load', '--from', '10', '--to', '9 %'], 'unit-missing  --from: "10" has no unit'],
     [['laod', '--from', '1 %', '--to', '9 %'], 'option-unusable  --over: "laod" is no quantity of a trend'],
     [['ambient', '--from', '20 degC', '--to', '60 degC', '--log'], 'option-unusable  --log: '],
-    [['ambient', '--from', '20 degC', '--to', '60 degC'], 'quantity-not-applicable  '],
-    [['input', '--from', '10 V', '--to', '300 V'], 'range-outside  input: '],
+    [['ambient', '--from', '20 degC', '--to', '60 degC'], 'command line  quantity-not-applicable  --over: '],
+    [['input', '--from', '10 V', '--to', '300 V'], 'range-outside  --to: 300 V '],
   ])('refuses %j', (args, message) => {
     const { code, out, err } = ebbwatt([...trend, ...args], { cwd: smallStage() })
     expect({ code, out }).toEqual({ code: 2, out: '' })

@@ -46,12 +46,9 @@ duty_profile: [{load: 1}]
       file.yaml:5:12  unit-unknown  frequency: "100 khz": "khz" is no unit here (did you mean "kHz"?)
           frequency: 100 khz
                      ^^^^^^^
-      file.yaml:6:42  unit-missing  inductor.resistance: "0" has no unit; wanted is a resistance such as "22 mohm"
+      file.yaml:6:42  number-decimal-comma  inductor.resistance: "0,5 ohm" has a comma in its number, which is never guessed at (write the decimals after a point and leave out thousands separators)
           inductor: {inductance: 10 H, resistance: 0,5 ohm}
-                                                   ^
-      file.yaml:6:44  key-unknown  inductor: "5 ohm" is no key here (if a decimal comma stands before it, write a point)
-          inductor: {inductance: 10 H, resistance: 0,5 ohm}
-                                                     ^^^^^
+                                                   ^^^^^^^
       file.yaml:7:17  number-zero  switch.slope: "0 A/us" is zero; wanted is a slope of current such as "200 A/us"
           switch: {slope: 0 A/us, gate: {drive: 3 V}, voltage_fall: 18 V, turn_off: {voltage_rise: 1 ns}}
                           ^^^^^^

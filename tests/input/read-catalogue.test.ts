@@ -190,9 +190,6 @@ describe('a mapping file', () => {
       file.yaml:3:1  key-missing  record.ratings: is missing; wanted is the limits of the part: {reverse_voltage: 600 V, average_current: 8 A, junction: 175 degC}
           record: {id: {colum: 1}, class: fast}
           ^
-      file.yaml:3:10  key-missing  record.id.column: is missing; wanted is the position of the column counted from 1, or its name in the header row
-          record: {id: {colum: 1}, class: fast}
-                   ^
       file.yaml:3:15  key-unknown  record.id: "colum" is no key here (did you mean "column"?)
           record: {id: {colum: 1}, class: fast}
                         ^^^^^

@@ -78,6 +78,8 @@ it('problems are sorted by file, line, column and code', () => {
 describe('the nearest word', () => {
   const known = ['frequency', 'inductor', 'input', 'output', 'kHz', 'MHz', 'mHz']
   it.each<[string, readonly string[]]>([
+    ['freq', ['frequency']],
+    ['outpt-of-stage', []],
     ['frequenzy', ['frequency']],
     ['freqeuncy', ['frequency']],
     ['FREQUENCY', ['frequency']],

@@ -38,7 +38,7 @@ export function parseQuantity(text: string, rule: QuantityRule): number | Quanti
   return checked(value, typedZero, kind, sign)
 }
 
-const commaHint = 'write the decimals after a point and leave out thousands separators'
+export const commaHint = 'write the decimals after a point and leave out thousands separators'
 
 function malformedRest(rest: string, kind: QuantityKindName): QuantityRefusal | null {
   if (/^ ?[a-zA-Z%]/.test(rest)) return null

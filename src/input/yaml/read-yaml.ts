@@ -104,8 +104,11 @@ const mostSyntaxFaults = 5
 
 function syntaxFaults(documents: readonly Document.Parsed<ParsedNode>[]): readonly YamlFault[] {
   const [first, second] = documents
-  const faults = (first === undefined ? [] : [...first.errors, ...first.warnings]).map((error): YamlFault => {
-    const [expected, hint] = syntaxWords[error.code] ?? [lowerFirst(error.message), '']
+  const errors = first === undefined ? [] : [...first.errors, ...first.warnings]
+  const runOn = new Set(errors.filter(({ code }) => code === 'MULTILINE_IMPLICIT_KEY').map(({ pos }) => pos[0]))
+  const faults = errors.filter(isFirstAtItsPlace).map((error): YamlFault => {
+    const indented = error.code === 'BLOCK_AS_IMPLICIT_KEY' && runOn.has(error.pos[0])
+    const [expected, hint] = indented ? indentedWords : (syntaxWords[error.code] ?? [lowerFirst(error.message), ''])
     if (error.code === 'TAG_RESOLVE_FAILED')
       return forbidden(error.pos[0], 'a tag', 'write plain text, numbers and lists')
     if (error.code === 'BAD_DIRECTIVE')
@@ -117,6 +120,21 @@ function syntaxFaults(documents: readonly Document.Parsed<ParsedNode>[]): readon
   }
   return faults.slice(0, mostSyntaxFaults)
 }
+
+/** The package tells one slip under several codes. */
+function isFirstAtItsPlace(
+  { pos }: { readonly pos: readonly number[] },
+  index: number,
+  errors: readonly { readonly pos: readonly number[] }[],
+): boolean {
+  return errors.findIndex((other) => other.pos[0] === pos[0]) === index
+}
+
+/** A value that runs on into the next line and finds a key there. */
+const indentedWords: readonly [string, string] = [
+  'the line below is indented too far: a value stands here already',
+  'begin both keys in one column',
+]
 
 /** In our own words, by the code of the package; what is not listed keeps the package's sentence. */
 const syntaxWords: Readonly<Record<string, readonly [string, string]>> = {
