@@ -100,8 +100,8 @@ const stages: readonly Case[] = [
   },
   {
     name: 'a key that is indented too far',
-    text: stageWith(['frequency', ' frequency']),
-    problems: ['3:33 yaml-syntax '],
+    text: stageWith(['inductor', ' inductor']),
+    problems: ['4:12 yaml-syntax '],
   },
   {
     name: 'the file of another command',

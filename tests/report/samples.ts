@@ -22,21 +22,6 @@ const event: EventResult = {
   none: null,
 }
 
-const noEvent: EventResult = {
-  ...event,
-  tau_s: null,
-  tau_rr_s: null,
-  stored_c: 0,
-  peak_reverse_a: 0,
-  ta_s: 0,
-  trr_s: 0,
-  qrr_c: 0,
-  softness: null,
-  rectifier_j: 0,
-  switch_added_j: 0,
-  none: 'no stored charge',
-}
-
 const base: CandidateResult = {
   id: 'larch-200v-10a-soft',
   rank: 1,
@@ -153,8 +138,6 @@ const lost: CandidateResult = {
   inductor_w: nothing,
 }
 
-const schottky: CandidateResult = { ...base, id: 'aspen-200v-10a', class: 'schottky', event: noEvent }
-
 /** Boost of three candidates and one without a stable temperature. */
 export function rankSample(): RankResult {
   return structuredClone({
@@ -216,5 +199,3 @@ export function rankSample(): RankResult {
     not_covered: ['loss-feedback', 'electromagnetic-noise'],
   } satisfies RankResult)
 }
-
-export { base as acceptedCandidate, schottky as schottkyCandidate }
