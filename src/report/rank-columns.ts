@@ -16,6 +16,7 @@ export function rankColumns(result: Ranked): readonly Spec[] {
     ...keyColumns,
     ...rankingColumns(result),
     ...ledgerColumns,
+    ...stageColumns,
     ...eventColumns,
     ...mainsColumns(result.candidates),
     ...yearColumns(result.candidates),
@@ -68,6 +69,19 @@ const ledgerColumns: readonly Spec[] = [
   watts('total', 'Losses', ({ losses_w }) => losses_w.total),
 ]
 
+const stageGroup = 'Rest of the stage loss'
+
+/** What the stage loses beside the rectifier's six rows: with the total they make the stage loss. */
+const stageColumns: readonly Spec[] = [
+  watts('over\u00ADlap', stageGroup, ({ switch: part }) => part.turn_on_base_w),
+  watts('turn-off', stageGroup, ({ switch: part }) => part.turn_off_w),
+  watts('stored', stageGroup, ({ switch: part }) => part.stored_w),
+  watts('switch conduc\u00ADtion', stageGroup, ({ switch: part }) => part.conduction_w),
+  watts('induc\u00ADtor', stageGroup, ({ inductor_w }) => inductor_w),
+  watts('snub\u00ADber', stageGroup, ({ snubber_w }) => snubber_w),
+  watts('fixed', stageGroup, ({ fixed_w }) => fixed_w),
+]
+
 const marginGroup = 'Efficiency, margin and price'
 const eventGroup = 'Part and recovery event at the operating point'
 
@@ -77,6 +91,7 @@ const eventColumns: readonly Spec[] = [
     scale: 100,
     decimals: 1,
   }),
+  numberColumn('peak reverse', 'V', eventGroup, ({ event }) => event?.peak_reverse_v ?? null, { decimals: 0 }),
   numberColumn('V_F hot', 'V', eventGroup, ({ forward_v }) => forward_v, { decimals: 3 }),
   numberColumn('Qrr', 'nC', eventGroup, ({ event }) => event?.qrr_c ?? null, { scale: 1e9 }),
   numberColumn('I_RM', 'A', eventGroup, ({ event }) => event?.peak_reverse_a ?? null),

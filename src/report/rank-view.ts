@@ -31,7 +31,13 @@ function tableNote(ranked: readonly CandidateResult[]): string {
     level === undefined
       ? ''
       : ` Low and high hold ${significant(level * 100)} % of the draws; Tj high is the 95th percentile.`
-  return `Ranked by stage loss. Total is the sum of the six loss rows.${interval}${guessNote(ranked)}`
+  return `Ranked by stage loss. Total is the sum of the six loss rows; with the rest it makes the stage loss.${interval}${containedNote(ranked)}${guessNote(ranked)}`
+}
+
+/** A 0 that says where the loss stands, not that nobody gave it. */
+function containedNote(ranked: readonly CandidateResult[]): string {
+  const contained = ranked.some(({ losses_w, event }) => losses_w.capacitive === 0 && (event?.stored_c ?? 0) > 0)
+  return contained ? ' Capacitive is 0 where the recovery charge (Qrr) of a part already contains it.' : ''
 }
 
 /** What the evidence grade D is for. */

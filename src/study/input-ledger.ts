@@ -5,11 +5,23 @@ import type { Stage } from '../domain/stage.ts'
 
 type Figure = readonly [path: string, value: number | string | null, unit: string]
 
+/** Inputs that may be left out, with the value that leaves their effect out; who states just that changes nothing. */
+const neutral: Readonly<Record<string, number>> = {
+  'inductor.core_loss': 0,
+  'snubber.capacitance': 0,
+  fixed_losses: 0,
+  'parallel.parts': 1,
+  'switch.turn_off.energy': 0,
+  'switch.stored_energy': 0,
+}
+
 /** Every input of the stage with its value, unit and whether it was given or took its default. */
 export function stageLedger(stage: Stage): LedgerEntry[] {
   const assumed = new Set(stage.assumed.map(({ path }) => path))
-  const origin = (path: string): string =>
-    [...assumed].some((each) => each === path || path.startsWith(`${each}.`)) ? 'default' : 'given'
+  const origin = (path: string, value: number | string): string => {
+    if ([...assumed].some((each) => each === path || path.startsWith(`${each}.`))) return 'default'
+    return neutral[path] === value ? `not given, taken as ${value}` : 'given'
+  }
   return [...stageFigures(stage), ...switchFigures(stage), ...coolingFigures(stage)]
     .filter((figure): figure is readonly [string, number | string, string] => figure[1] !== null)
     .map(([path, value, unit]) => ({
@@ -17,7 +29,7 @@ export function stageLedger(stage: Stage): LedgerEntry[] {
       path,
       value,
       unit,
-      origin: origin(path),
+      origin: origin(path, value),
       grade: null,
       source: null,
       place: '',
@@ -70,7 +82,7 @@ function switchFigures({ switch: part }: Stage): Figure[] {
     ['switch.voltage_fall', part.voltageFall, 's'],
     ['switch.turn_off.voltage_rise', turnOff?.kind === 'times' ? turnOff.voltageRise : null, 's'],
     ['switch.turn_off.current_fall', turnOff?.kind === 'times' ? turnOff.currentFall : null, 's'],
-    ['switch.turn_off.energy', turnOff?.kind === 'energy' ? turnOff.energy : null, 'J'],
+    ['switch.turn_off.energy', turnOff === null ? 0 : turnOff.kind === 'energy' ? turnOff.energy : null, 'J'],
     ['switch.stored_energy', part.storedEnergy, 'J'],
     ['switch.turn_on.energy', turnOn?.energy ?? null, 'J'],
     ['switch.turn_on.current', turnOn?.current ?? null, 'A'],

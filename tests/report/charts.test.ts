@@ -3,8 +3,10 @@ import { lineChart } from '../../src/report/charts/line-chart.ts'
 import { placeLabels } from '../../src/report/charts/place-labels.ts'
 import { renderChart } from '../../src/report/charts/render-chart.ts'
 import { stackedBars } from '../../src/report/charts/stacked-bars.ts'
+import { escapeText } from '../../src/report/charts/svg.ts'
 import { isLogarithmic, renderTrendChart } from '../../src/report/charts/trend-chart.ts'
 import { waveformChart } from '../../src/report/charts/waveform-chart.ts'
+import { words } from '../../src/report/words/words.ts'
 import { swapSample, trendSample } from './more-samples.ts'
 import { rankSample } from './samples.ts'
 
@@ -127,6 +129,19 @@ describe('stacked bars', () => {
     expect(svg).toContain('>12.5</text>')
     expect(svg).toContain('hazel-150v-10a-fast (rejected)')
     expect(svg).not.toContain('rowan-150v-20a-schottky')
+  })
+
+  it('say below that the voltage is hazardous, with every caution in full', () => {
+    const rank = words(rankSample())
+    const drawings = [rank, words(trendSample()), words(swapSample())].map(renderChart)
+    for (const svg of drawings) {
+      expectDrawn(svg)
+      expect(svg).toContain('>Hazardous voltage: see the cautions of the result; qualified persons only,')
+      for (const { text } of rank.cautions) expect(svg).toContain(escapeText(text))
+    }
+    const harmless = renderChart({ ...rank, cautions: [{ code: 'estimate-only', text: 'E', data: {} }] })
+    expect(harmless).not.toContain('Hazardous')
+    expect(harmless).toContain('confirm them on the bench')
   })
 
   it('survive no bars at all', () => {

@@ -98,7 +98,7 @@ describe('the ranking', () => {
   })
 
   it('is one table where it fits', () => {
-    const rows = plain(rankSample(), 240)
+    const rows = plain(rankSample(), 320)
       .split('\n')
       .filter((line) => line.includes('larch-200v-10a-soft') && line.startsWith('1 '))
     expect(rows).toHaveLength(1)

@@ -6,7 +6,7 @@ import { type LineMark, lineChart } from './line-chart.ts'
 const most = 700
 
 /** The captured event with its fit as a drawing: samples, fitted ramp and tail, peak and end of the recovery time. */
-export function captureChart({ row, device }: CaptureDocument, trace: CaptureTrace): string {
+export function captureChart({ row, device, cautions }: CaptureDocument, trace: CaptureTrace): string {
   const [timeSize, timePrefix] = prefixFor(trace.time[trace.time.length - 1]! - trace.time[0]!, 's')
   const largest = trace.current.reduce((sum, value) => Math.max(sum, Math.abs(value)), 0)
   const [size, prefix] = prefixFor(largest, 'A')
@@ -29,5 +29,6 @@ export function captureChart({ row, device }: CaptureDocument, trace: CaptureTra
       { name: 'fit', points: points(trace.fitted, size) },
     ],
     marks: [...mark('ta_s', 'peak'), ...mark('storage_s', 'storage'), ...mark('trr_s', 'trr')],
+    cautions,
   })
 }

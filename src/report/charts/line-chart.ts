@@ -1,5 +1,7 @@
 import { line } from 'd3-shape'
+import type { Caution } from '../../domain/result.ts'
 import { type Axis, type AxisSpec, type Box, makeAxis } from './axis.ts'
+import { cautionFoot } from './caution-foot.ts'
 import { colourOf, marker } from './palette.ts'
 import { placeLabels } from './place-labels.ts'
 import { drawing, element, fittingText, ink, label, labelWidth, pixels } from './svg.ts'
@@ -37,6 +39,8 @@ export interface LineChartData {
   readonly given?: readonly { readonly x: number; readonly y: number; readonly text: string }[]
   readonly width?: number
   readonly height?: number
+  /** Told below, where the drawing may leave its document. */
+  readonly cautions?: readonly Caution[]
 }
 
 /** Lines over a linear or logarithmic axis, each named at its end; marks stand in numbered columns above. */
@@ -56,9 +60,10 @@ export function lineChart(data: LineChartData): string {
   const ends = data.series.map((series, index) => endOf(series, index, x, y))
   const bodies = data.series.map((series, index) => seriesMarkup(series, index, x, y))
   const rings = (data.given ?? []).map((point) => ring(x.place(point.x), y.place(point.y), point.text))
+  const foot = cautionFoot(data.cautions ?? [], data.height ?? 420)
   return drawing(
     width,
-    data.height ?? 420,
+    (data.height ?? 420) + foot.height,
     data.title,
     `${data.y.title} against ${data.x.title} for ${data.series.map(({ name }) => name).join(', ')}`,
     label(12, 22, fittingText(data.title, width - 24, 14), { bold: true, size: 14 }),
@@ -70,6 +75,7 @@ export function lineChart(data: LineChartData): string {
     ...bodies,
     ...rings,
     ...nameLabels(data.series, ends, box),
+    foot.markup,
   )
 }
 

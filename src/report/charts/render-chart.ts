@@ -1,4 +1,4 @@
-import type { CandidateResult } from '../../domain/result.ts'
+import type { CandidateResult, Caution } from '../../domain/result.ts'
 import type { AnyResult } from '../../domain/study.ts'
 import { isRank, isSwap } from '../words/words.ts'
 import { stackedBars } from './stacked-bars.ts'
@@ -6,12 +6,18 @@ import { renderTrendChart } from './trend-chart.ts'
 
 /** The drawing of any result: bars of the losses for rank and swap, lines for a trend. */
 export function renderChart(result: AnyResult): string {
-  if (isRank(result)) return lossBars(result.candidates, result.stage.title)
-  return isSwap(result) ? lossBars([result.from, result.to], result.stage.title) : renderTrendChart(result)
+  const { stage, cautions } = result
+  if (isRank(result)) return lossBars(result.candidates, stage.title, 'losses', cautions)
+  return isSwap(result) ? lossBars([result.from, result.to], stage.title, 'losses', cautions) : renderTrendChart(result)
 }
 
 /** The six rows of every part that has a temperature; rejected ones say so. */
-export function lossBars(candidates: readonly CandidateResult[], title: string, idPrefix = 'losses'): string {
+export function lossBars(
+  candidates: readonly CandidateResult[],
+  title: string,
+  idPrefix = 'losses',
+  cautions: readonly Caution[] = [],
+): string {
   const bars = candidates
     .filter(({ losses_w }) => losses_w.total !== null)
     .map(({ id, accepted, losses_w, interval_w }) => ({
@@ -21,7 +27,7 @@ export function lossBars(candidates: readonly CandidateResult[], title: string, 
       high: interval_w?.high ?? null,
     }))
   const heading = title === '' ? 'Losses by part' : `Losses by part: ${title}`
-  return `${stackedBars({ title: heading, axis: 'loss caused by the rectifier (W)', parts: lossParts.map(([, name]) => name), bars, idPrefix })}\n`
+  return `${stackedBars({ title: heading, axis: 'loss caused by the rectifier (W)', parts: lossParts.map(([, name]) => name), bars, idPrefix, cautions })}\n`
 }
 
 const lossParts = [

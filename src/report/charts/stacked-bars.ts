@@ -1,7 +1,9 @@
 import { scaleLinear } from 'd3-scale'
 import { stack } from 'd3-shape'
+import type { Caution } from '../../domain/result.ts'
 import { significant } from '../format.ts'
 import { makeAxis } from './axis.ts'
+import { cautionFoot } from './caution-foot.ts'
 import { filling, fillingId } from './palette.ts'
 import { drawing, element, escapeText, fittingText, ink, label, labelWidth, pixels } from './svg.ts'
 
@@ -20,6 +22,8 @@ export interface StackedBarsData {
   /** Keeps the ids of several drawings in one page apart. */
   readonly idPrefix: string
   readonly width?: number
+  /** Told below, where the drawing may leave its document. */
+  readonly cautions?: readonly Caution[]
 }
 
 const barHeight = 24
@@ -51,9 +55,10 @@ export function stackedBars(data: StackedBarsData): string {
   })
   const definitions = element('defs', {}, ...data.parts.map((_, index) => filling(data.idPrefix, index)), ' ')
   const heading = label(12, 22, fittingText(data.title, width - 24, 14), { bold: true, size: 14 })
+  const foot = cautionFoot(data.cautions ?? [], box.bottom + 48)
   return drawing(
     width,
-    box.bottom + 48,
+    box.bottom + 48 + foot.height,
     data.title,
     describe(data, sums),
     definitions,
@@ -61,6 +66,7 @@ export function stackedBars(data: StackedBarsData): string {
     legend.markup,
     axis.markup,
     ...bars,
+    foot.markup,
   )
 }
 

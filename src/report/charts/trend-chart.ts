@@ -1,5 +1,6 @@
 import type { TrendCandidate, TrendResult } from '../../domain/study.ts'
 import { axisTitle, limitWords, positionWords, trendAxes } from '../words/trend-words.ts'
+import { cautionFoot } from './caution-foot.ts'
 import { type LineMark, type LineSeries, lineChart } from './line-chart.ts'
 import { drawing } from './svg.ts'
 
@@ -22,7 +23,9 @@ export function renderTrendChart(trend: TrendResult): string {
     return group
   })
   const title = trend.stage.title === '' ? 'Trend' : trend.stage.title
-  return `${drawing(760, y, title, `Trend over ${trendAxes[trend.over].name}`, ...placed)}\n`
+  const foot = cautionFoot(trend.cautions, y)
+  const about = `Trend over ${trendAxes[trend.over].name}`
+  return `${drawing(760, y + foot.height, title, about, ...placed, foot.markup)}\n`
 }
 
 function percent({ efficiency }: TrendCandidate): number | null {

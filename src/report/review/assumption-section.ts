@@ -97,7 +97,9 @@ function ledgerTables(ledger: readonly LedgerEntry[]): ReviewBlock[] {
     const stage = subject === 'stage'
     return tableBlock(stage ? 'Inputs of the stage' : `Inputs of ${subject}`, tableOf(ledgerColumns(rows), rows), {
       long: true,
-      note: stage ? 'Given: in the stage file. Default: not in it, so the tool’s own value stands in.' : null,
+      note: stage
+        ? 'Given: in the stage file. Default: not in it, so the tool’s own value stands in. Not given, taken as 0 or 1: left out, or stated as just that; nothing is counted for it.'
+        : null,
     })
   })
 }

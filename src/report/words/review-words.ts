@@ -1,5 +1,6 @@
 import type { CandidateResult, RankResult } from '../../domain/result.ts'
 import { celsius, odds, quantity, significant, withInterval } from '../format.ts'
+import { lostWords } from './verdict-words.ts'
 
 /** The decision in three sentences: what is cheapest and by how much, how sure, and what holds it or is still open. */
 export function decisionSentences(result: RankResult): readonly [string, string, string] {
@@ -11,9 +12,9 @@ export function decisionSentences(result: RankResult): readonly [string, string,
 function cheapest({ verdict }: RankResult, best: CandidateResult): string {
   const loss = quantity(best.stage_loss_w, 'W')
   const { gap_w: gap, gap_low_w: low, gap_high_w: high, runner_up: next } = verdict
-  if (next === null) return `${best.id} is the only acceptable candidate: it costs the stage ${loss}.`
+  if (next === null) return `${best.id} is the only acceptable candidate: it costs the stage ${loss}${lostWords(best)}.`
   const lead = gap === null ? '' : `, ${withInterval(gap, low, high, 'W')} less than ${next}`
-  return `${best.id} costs the stage least: ${loss}${lead}.`
+  return `${best.id} costs the stage least: ${loss}${lead}${lostWords(best)}.`
 }
 
 function certainty({ verdict }: RankResult, best: CandidateResult): string {

@@ -8,11 +8,11 @@ export function verdictWords(result: RankResult): string {
   if (best === undefined) return nothingAcceptable(result)
   const loss = quantity(best.stage_loss_w, 'W')
   if (verdict.runner_up === null)
-    return `${best.id} is the only acceptable candidate, with ${loss} stage loss. ${rejectedCount(result)}`.trim()
+    return `${best.id} is the only acceptable candidate, with ${loss} stage loss${lostWords(best)}. ${rejectedCount(result)}`.trim()
   if (verdict.decided === null)
     return `${best.id} is the cheapest by nominal figures: ${loss} stage loss, ${gap(result)}. How sure this is was not computed.`
   if (verdict.decided)
-    return `${best.id} is the cheapest: ${loss} stage loss, ${gap(result)}; decided${withOdds(best)}.`
+    return `${best.id} is the cheapest: ${loss} stage loss, ${gap(result)}; decided${withOdds(best)}${lostWords(best)}.`
   return `${undecided(result, best, loss)} ${advice(verdict.measure_next)}`.trim()
 }
 
@@ -20,7 +20,7 @@ function undecided(result: RankResult, best: CandidateResult, loss: string): str
   const others = result.verdict.tied.filter((id) => id !== best.id)
   const chance = best.odds_best === null ? '' : ` Its odds of being the cheapest are ${oddsText(best)}.`
   const rivals = others.length > 0 ? others : [result.verdict.runner_up!]
-  return `Not decided: ${best.id} has the lowest stage loss, ${loss}, but is not distinguishable from ${list(rivals)}; it is ${gap(result)}.${chance}`
+  return `Not decided: ${best.id} has the lowest stage loss, ${loss}, but is not distinguishable from ${list(rivals)}; it is ${gap(result)}${lostWords(best)}.${chance}`
 }
 
 function gap(result: RankResult): string {
@@ -31,6 +31,16 @@ function gap(result: RankResult): string {
 
 function withOdds(best: CandidateResult): string {
   return best.odds_best === null ? '' : ` with odds ${oddsText(best)}`
+}
+
+/** Above this share of draws without a temperature a part is not simply the best. */
+const muchLost = 0.05
+
+/** What follows a part's loss where it may have no temperature: the loss holds for the other draws alone. */
+export function lostWords({ thermal_lost_share: lost }: CandidateResult): string {
+  return lost !== null && lost > muchLost
+    ? `, but in ${significant(lost * 100, 2)} % of the draws it has no stable temperature`
+    : ''
 }
 
 /** Odds with their standard error where it shows. */
