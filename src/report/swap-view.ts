@@ -35,7 +35,7 @@ export function swapView(swap: SwapResult): ReportView {
   }
 }
 
-const differenceNote = 'Difference is new less old: negative saves.'
+const differenceNote = 'Nominal figures. Difference is new less old: negative saves.'
 
 interface DifferenceRow {
   readonly name: string
@@ -63,7 +63,6 @@ function differenceRows({ from, to, difference_w }: SwapResult): DifferenceRow[]
     'forward recovery',
     'total',
   ]
-  const less = (a: number | null | undefined, b: number | null | undefined) => (a == null || b == null ? null : a - b)
   return [
     ...keys.map((key, index) => ({
       name: names[index]!,
@@ -71,12 +70,6 @@ function differenceRows({ from, to, difference_w }: SwapResult): DifferenceRow[]
       to: to.losses_w[key],
       difference: difference_w[key],
     })),
-    {
-      name: 'total, high',
-      from: from.interval_w?.high ?? null,
-      to: to.interval_w?.high ?? null,
-      difference: less(to.interval_w?.high, from.interval_w?.high),
-    },
     { name: 'stage loss', from: from.stage_loss_w, to: to.stage_loss_w, difference: difference_w.stage },
   ]
 }
@@ -101,7 +94,10 @@ function swapFacts(swap: SwapResult): Fact[] {
   const facts: (Fact | null)[] = [
     saves_w.median === null
       ? null
-      : { label: 'Saves', text: withInterval(saves_w.median, saves_w.low, saves_w.high, 'W') },
+      : {
+          label: 'Saves, median and 90 % of the draws in pairs',
+          text: withInterval(saves_w.median, saves_w.low, saves_w.high, 'W'),
+        },
     swap.odds_better === null ? null : { label: 'Odds that it saves', text: odds(swap.odds_better) },
     change('Junction of the rectifier', temperature(from), temperature(to), swap.junction_change_k),
     change(
@@ -115,7 +111,7 @@ function swapFacts(swap: SwapResult): Fact[] {
       label: 'Ambient margin',
       text: `${quantity(from.ambient_margin_k, 'K')} to ${quantity(to.ambient_margin_k, 'K')}`,
     },
-    swap.runaway_ambient_c === null
+    swap.runaway_ambient_c === null || swap.runaway_ambient_c > to.junction_limit_c
       ? null
       : {
           label: 'Runaway of the new part at maximum leakage',

@@ -8,7 +8,7 @@ import { edgeWords, limitWords, positionWords, trendAxes } from './words/trend-w
 /** Everything `trend` shows; the chart is drawn beside it by each renderer that can. */
 export function trendView(trend: TrendResult): ReportView {
   const blocks: Block[] = [
-    { kind: 'facts', items: [...stageFacts(trend.stage), drawsFact(trend)] },
+    { kind: 'facts', items: [...stageFacts(trend.stage), ownPoint, drawsFact(trend)] },
     { kind: 'chart' },
     {
       kind: 'table',
@@ -19,12 +19,52 @@ export function trendView(trend: TrendResult): ReportView {
     { kind: 'table', heading: 'Part by part', table: tableOf(partColumns(trend), trend.points), note: partNote },
     ...listBlock('Crossings', 'plain', crossingItems(trend)),
     ...listBlock('Limits', 'plain', limitItems(trend)),
-    ...listBlock('Slope', 'plain', (trend.slope ?? []).map(slopeItem)),
+    ...listBlock('Slope', 'plain', slopeItems(trend)),
+    ...listBlock('Conduction mode', 'plain', modeItems(trend)),
     ...closingBlocks(trend),
   ]
   const points = trend.points.flatMap(({ at, candidates }) => candidates.map((candidate) => ({ at, candidate })))
   const data = withCautions(tableOf(pointColumns(trend.over), points), trend.cautions)
   return { title: titleOf(trend.stage, `trend over ${trendAxes[trend.over].name}`), blocks, data }
+}
+
+const ownPoint = {
+  label: "The stage's own point",
+  text: 'mode and slope above and the warnings below hold there; the tables go along the trend',
+}
+
+/** Parts in order with the modes they pass through; parts alike in one item. */
+function modeItems({ over, points }: TrendResult) {
+  const parts = new Map<string, string[]>()
+  for (const { id } of points[0]?.candidates ?? []) {
+    const steps: { mode: string; from: number; to: number }[] = []
+    for (const { at, candidates } of points) {
+      const mode = candidates.find((each) => each.id === id)?.mode ?? null
+      const last = steps.at(-1)
+      if (mode === null) continue
+      if (last?.mode === mode) last.to = at
+      else steps.push({ mode, from: at, to: at })
+    }
+    const text = steps.map(({ mode, from, to }) => modeWords(over, mode, from, to)).join('; ')
+    if (text !== '') parts.set(text, [...(parts.get(text) ?? []), id])
+  }
+  return [...parts].map(([text, ids]) => ({ lead: ids.join(', '), text: `${text}.` }))
+}
+
+function modeWords(over: TrendKey, mode: string, from: number, to: number): string {
+  const range =
+    from === to ? `at ${positionWords(over, from)}` : `from ${positionWords(over, from)} to ${positionWords(over, to)}`
+  return `${mode === 'boundary' ? 'at the mode boundary' : mode} ${range}`
+}
+
+/** What is said of the slope, and why its peaks stay as they are. */
+function slopeItems({ slope }: TrendResult) {
+  if (slope === null) return []
+  const ringing = {
+    lead: null,
+    text: 'Overshoot is driven by the voltage_fall of the switch, which is held: the peak reverse voltage from ringing does not move with the slope.',
+  }
+  return [...slope.map(slopeItem), ringing]
 }
 
 const partNote = 'In parentheses: the part is not acceptable there. None: it has no stable temperature.'
@@ -128,7 +168,9 @@ function gapOf(point: Point): number | null {
 
 function crossingItems({ over, crossings }: TrendResult) {
   const interval = ({ low, high }: Crossing) =>
-    low === null || high === null ? '' : ` (${positionWords(over, low)} to ${positionWords(over, high)})`
+    low === null || high === null
+      ? ''
+      : ` (in 90 % of the draws it lies within ${positionWords(over, low)} to ${positionWords(over, high)})`
   return crossings.map((crossing) => ({
     lead: positionWords(over, crossing.at),
     text: `${crossing.from} is cheaper below, ${crossing.to} above${interval(crossing)}.`,
@@ -147,7 +189,9 @@ function slopeItem(study: SlopeStudy) {
   const sentences = [
     study.largest_a_per_s === null
       ? `Not admissible at the lowest slope looked at${study.largest_because === 'range' ? '' : `, because of ${edgeWords(study.largest_because)}`}.`
-      : `Largest admissible slope ${slope(study.largest_a_per_s)}, set by ${edgeWords(study.largest_because)}.`,
+      : study.largest_because === 'range'
+        ? `No limit met up to the end of the range (${slope(study.largest_a_per_s)}).`
+        : `Largest admissible slope ${slope(study.largest_a_per_s)}, set by ${edgeWords(study.largest_because)}.`,
     study.knee_a_per_s === null ? '' : `Knee at ${slope(study.knee_a_per_s)}: above it at most 5 % is left to gain.`,
     study.gain_w === null ? '' : `Going from the slope of the stage to the largest ${gainWords(study.gain_w)}.`,
     study.optimum_a_per_s === null

@@ -63,7 +63,7 @@ export function* rankSteps(
     warnings: warningsOf([
       ...assessments.flatMap(candidateCaveats),
       ...stageCaveats(assessments),
-      ...incumbentCaveats(stage, competing.parts),
+      ...incumbentCaveats(stage, competing.parts, records),
       ...orderCaveats(stage, candidates, profiles),
       ...(listed?.caveats ?? []),
       ...tableCaveats(settings),
@@ -137,10 +137,15 @@ export function warningsOf(caveats: readonly Caveat[]): Warning[] {
   return sortCaveats(caveats).map(({ code, candidate, data }) => ({ code, candidate, text: '', data }))
 }
 
-function incumbentCaveats(stage: Stage, parts: readonly RectifierRecord[]): Caveat[] {
+function incumbentCaveats(
+  stage: Stage,
+  parts: readonly RectifierRecord[],
+  records: readonly RectifierRecord[],
+): Caveat[] {
   const { incumbent } = stage
   if (incumbent === null || parts.some(({ id }) => id === incumbent)) return []
-  return [{ code: 'incumbent-missing', candidate: '', data: { incumbent } }]
+  const known = records.some(({ id }) => id === incumbent)
+  return [{ code: 'incumbent-missing', candidate: '', data: known ? { excluded: incumbent } : { incumbent } }]
 }
 
 /** Tables from which rows are missing. */

@@ -74,14 +74,26 @@ describe('the ranking', () => {
       2  alder-200v-8a-            4.56    1.40    8.29     0.03  <0.01       0  14.28
          ultrafast
 
+      Rest of the stage loss
+                                                          switch
+                                over-                    conduc-  induc-  snub-
+                                  lap  turn-off  stored     tion     tor    ber  fixed
+      #  part                       W         W       W        W       W      W      W
+      ─  ─────────────────────  ─────  ────────  ──────  ───────  ──────  ─────  ─────
+      1  larch-200v-10a-soft     3.80      2.40    0.40     3.90    5.30      0   3.00
+      2  alder-200v-8a-          3.80      2.40    0.40     3.90    5.30      0   3.00
+         ultrafast
+
       Part and recovery event at the operating point
-                                                   volt-
-                                                     age    V_F
-                                                  margin    hot    Qrr  I_RM
-      #  part                     class                %      V     nC     A  softness
-      ─  ───────────────────────  ──────────────  ──────  ─────  ─────  ────  ────────
-      1  larch-200v-10a-soft      soft-ultrafast    34.5  0.912  225.0  7.62       1.6
-      2  alder-200v-8a-ultrafast  ultrafast         34.5  0.912  310.0  9.90   unknown
+                                           volt-
+                                             age     peak    V_F
+                                          margin  reverse    hot    Qrr  I_RM    soft-
+      #  part             class                %        V      V     nC     A     ness
+      ─  ───────────────  ──────────────  ──────  ───────  ─────  ─────  ────  ───────
+      1  larch-200v-10a-  soft-ultrafast    34.5      131  0.912  225.0  7.62      1.6
+         soft
+      2  alder-200v-8a-   ultrafast         34.5      131  0.912  310.0  9.90  unknown
+         ultrafast
 
       Efficiency, margin and price
                                               ambient
@@ -90,8 +102,9 @@ describe('the ranking', () => {
       ─  ───────────────────────  ──────────  ───────  ─────
       1  larch-200v-10a-soft           96.12       31   0.62
       2  alder-200v-8a-ultrafast       95.84       31   0.62
-      Ranked by stage loss. Total is the sum of the six loss rows. Low and high hold
-      90 % of the draws; Tj high is the 95th percentile.
+      Ranked by stage loss. Total is the sum of the six loss rows; with the rest it
+      makes the stage loss. Low and high hold 90 % of the draws; Tj high is the 95th
+      percentile.
 
       "
     `)

@@ -146,6 +146,23 @@ describe('the verdict', () => {
     )
   })
 
+  it('says where the best part has no temperature in many draws', () => {
+    const sample = rankSample()
+    const lose = (share: number) => sample.candidates.map((part) => ({ ...part, thermal_lost_share: share }))
+    const said = (share: number, runner_up: string | null) =>
+      verdictWords({ ...sample, candidates: lose(share), verdict: { ...sample.verdict, runner_up } })
+    for (const rival of ['alder-200v-8a-ultrafast', null]) {
+      expect(said(0.3, rival)).toContain('in 30 % of the draws it has no stable temperature')
+      expect(said(0.05, rival)).not.toContain('no stable temperature')
+    }
+  })
+
+  it('an incumbent left out is not one without a record', () => {
+    const text = (data: Record<string, string>) => warningText({ code: 'incumbent-missing', data })
+    expect(text({ excluded: 'larch' })).toContain('larch is not among the candidates compared')
+    expect(text({ incumbent: 'larch' })).toContain('larch has no record')
+  })
+
   it('says when there is only one, or none', () => {
     expect(verdict({ decided: true, tied: [], runner_up: null, gap_w: null })).toBe(
       'larch-200v-10a-soft is the only acceptable candidate, with 24.2 W stage loss. 2 are rejected, each with its reason.',

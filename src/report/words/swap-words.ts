@@ -63,9 +63,10 @@ export function swapVerdictWords(result: SwapResult): string {
 function savingWords({ saves_w, difference_w }: SwapResult): string {
   const saves = saves_w.median ?? (difference_w.stage === null ? null : -difference_w.stage)
   if (saves === null) return 'no saving can be stated'
-  if (saves >= 0) return `it saves ${withInterval(saves, saves_w.low, saves_w.high, 'W')} of stage loss`
+  const which = saves_w.median === null ? 'nominal' : 'median of the draws'
+  if (saves >= 0) return `it saves ${withInterval(saves, saves_w.low, saves_w.high, 'W')} of stage loss (${which})`
   const turned = (value: number | null) => (value === null ? null : -value)
-  return `it costs ${withInterval(-saves, turned(saves_w.high), turned(saves_w.low), 'W')} more stage loss`
+  return `it costs ${withInterval(-saves, turned(saves_w.high), turned(saves_w.low), 'W')} more stage loss (${which})`
 }
 
 function oddsWords({ odds_better, energy_kwh_per_year: energy }: SwapResult): string {

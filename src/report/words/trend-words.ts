@@ -71,7 +71,7 @@ const edges: Readonly<Record<string, string>> = {
   loop: 'voltage over loop inductance',
   saturation: 'the saturation of the switch',
   temperature: 'a temperature limit',
-  range: 'the range looked at; no limit was met',
+  range: 'the end of the range',
   evidence: 'the evidence, whose rows make charge grow faster with the slope than the model alone',
 }
 

@@ -10,7 +10,7 @@ export const warningWords: Readonly<Record<CaveatCode, string>> = {
     'The figures of [{row}|a row] cannot all be right[: {found} against a bound of {bound}]. ' +
     'The row is used without the culprit; look it up again in its source.',
   'row-inconsistent':
-    'In [{row}|a recovery row] the third figure is off by [{difference:%}|more than 15 %] from what the other two give. ' +
+    'In [{row}|a recovery row] one of trr, Qrr and I_RM is off by [{difference:%}|more than 15 %] from what the other two give; which one, the row cannot tell. ' +
     'All are used with more doubt; check the definition of trr and the conditions of the row.',
   'rows-contradict':
     '[{row} and {other}|Two rows] contradict each other[: they lie {distance:x} standard deviations apart]. ' +
@@ -111,7 +111,9 @@ export const warningWords: Readonly<Record<CaveatCode, string>> = {
   'turn-on-rectifier-missing':
     'The rectifier of the measured turn-on energy[ ({rectifier})] is not among the records, so its recovery stays inside. Add its record.',
   'incumbent-missing':
-    'The incumbent[ {incumbent}] is not among the candidates. Add its record to compare against the part in use.',
+    '[The incumbent {excluded} is not among the candidates compared. Take it in to compare against the part in use.|' +
+    'The incumbent {incumbent} has no record. Add its record to compare against the part in use.|' +
+    'The incumbent is not among the candidates. Add its record to compare against the part in use.]',
   'negative-valley':
     'The inductor current is negative when the switch turns on[ ({valley:A})]: there is no hard recovery of this part in that interval. ' +
     'Check the ripple if that was not intended.',
