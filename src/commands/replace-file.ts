@@ -41,6 +41,8 @@ export function replaceFile(path: string, text: string, inputs: readonly string[
   // Same folder, because a rename is one step only within a file system.
   const temporary = join(dirname(path), `.ebbwatt-${process.pid}.tmp`)
   try {
+    // What lies there is left over from a process that was killed, or a link that must not be followed.
+    rmSync(temporary, { force: true })
     writeDurably(temporary, text, mode)
     renameSync(temporary, path)
     syncFolder(dirname(path))
@@ -51,7 +53,7 @@ export function replaceFile(path: string, text: string, inputs: readonly string[
 }
 
 function writeDurably(path: string, text: string, mode: number): void {
-  const handle = openSync(path, 'w', mode)
+  const handle = openSync(path, 'wx', mode)
   try {
     writeFileSync(handle, text)
     fsyncSync(handle)

@@ -1,4 +1,4 @@
-import { lstatSync, mkdirSync, writeFileSync } from 'node:fs'
+import { closeSync, existsSync, lstatSync, mkdirSync, openSync, rmSync, writeFileSync } from 'node:fs'
 import { dirname, join } from 'node:path'
 import { CommandFailure, failure } from './failure.ts'
 import { writingFailure } from './replace-file.ts'
@@ -29,12 +29,28 @@ function refuseTaken(paths: readonly string[]): void {
 }
 
 function writeNew(path: string, text: string): void {
+  let handle: number
   try {
-    mkdirSync(dirname(path), { recursive: true })
-    writeFileSync(path, text, { flag: 'wx' })
+    makeFolder(dirname(path))
+    handle = openSync(path, 'wx')
   } catch (error) {
     throw (error as NodeJS.ErrnoException).code === 'EEXIST' ? overwriting(path) : writingFailure(path, error)
   }
+  try {
+    writeFileSync(handle, text)
+  } catch (error) {
+    rmSync(path, { force: true })
+    throw writingFailure(path, error)
+  } finally {
+    closeSync(handle)
+  }
+}
+
+/** Folder by folder: node's own way down says ENOENT of a read-only disk, and never ends in /proc. */
+function makeFolder(path: string): void {
+  if (existsSync(path)) return
+  makeFolder(dirname(path))
+  mkdirSync(path)
 }
 
 function overwriting(path: string): CommandFailure {
