@@ -21,7 +21,8 @@ export function swapGrounds(figures: SwapFigures): SwapResult['because'] {
   if (figures.switch_junction_change_k !== null) {
     grounds.push(ground('switch-junction-change', { change: figures.switch_junction_change_k }))
   }
-  if (to.class === 'schottky' && runaway !== null)
+  // Above the junction limit that limit is reached first.
+  if (to.class === 'schottky' && runaway !== null && runaway <= to.junction_limit_c)
     grounds.push(ground('runaway-edge', { ambient: runaway + celsiusZero }))
   if (to.voltage_margin !== null && from.voltage_margin !== null) {
     grounds.push(ground('voltage-margin', { margin: to.voltage_margin, before: from.voltage_margin }))
