@@ -9,7 +9,7 @@ const hazardousDc = 60
 const hazardousPeak = 42.4
 
 /**
- * The cautions of a stage: below every limit only that its figures are estimates. No option reaches this rule.
+ * The cautions of a stage: none below every limit, all of them above any. No option reaches this rule.
  *
  * @param peaks Computed peak reverse voltages of the candidates, with overshoot; null where there is none. [V]
  */
@@ -20,8 +20,7 @@ export function stageCautions(
 ): Caution[] {
   const mains = stage.input.kind === 'mains'
   const limits = limitsMet(stage, Math.max(0, ...peaks.map((peak) => peak ?? 0)))
-  const estimate = caution('estimate-only', {})
-  if (!mains && Object.keys(limits.met).length === 0) return [estimate]
+  if (!mains && Object.keys(limits.met).length === 0) return []
   const cautions = [caution('lethal-voltage', { voltage: limits.highest, ...limits.met })]
   if (mains) cautions.push(caution('mains-fed', { mains: stage.input.voltage, peak: highestMainsPeak(stage) }))
   cautions.push(
@@ -29,7 +28,7 @@ export function stageCautions(
     caution('bulk-capacitor', bulkData(stage)),
     caution('isolated-probing', {}),
     caution('fuse-and-insulation', {}),
-    estimate,
+    caution('estimate-only', {}),
   )
   const carbide = parts.filter((part) => part.class === 'sic-schottky').map(({ id }) => id)
   if (mains && carbide.length > 0) cautions.push(caution('surge-silicon-carbide', { parts: carbide.sort().join(', ') }))
