@@ -29,7 +29,7 @@ describe('exit codes', () => {
         column: 0,
         path: '--only',
         found: 'plian',
-        expected: '',
+        expected: expect.stringMatching(/^known are .*plain/),
         hint: 'did you mean "plain"?',
       },
     ])
@@ -51,14 +51,14 @@ describe('exit codes', () => {
 describe('the command line', () => {
   it.each([
     [[], 'no command is given (ebbwatt --help lists them)'],
-    [['rnk'], "rnk: unknown command 'rnk' (did you mean rank?)"],
-    [['rank', 'a', '--jsonn'], "--jsonn: unknown option '--jsonn' (did you mean --json?)"],
-    [['rank'], "stage: missing required argument 'stage'"],
-    [['rank', 'a', 'b'], "too many arguments for 'rank'. Expected 1 argument but got 2"],
-    [['rank', 'a', '--seed'], "--seed <n>: option '--seed <n>' argument missing"],
-    [['rank', 'a', '--seed', '-1'], 'Wanted is a whole number from 0 to 4294967295'],
-    [['rank', 'a', '--draws', '0'], 'Wanted is a whole number from 1 to 1000000'],
-    [['rank', 'a', '--draws', '1e3'], 'Wanted is a whole number from 1 to 1000000'],
+    [['rnk'], 'rnk: there is no such command (did you mean rank?)'],
+    [['rank', 'a', '--jsonn'], '--jsonn: there is no such option (did you mean --json?)'],
+    [['rank'], 'no file is named; wanted is a stage file'],
+    [['rank', 'a', 'b'], 'rank: there are more words than this command takes'],
+    [['rank', 'a', '--seed'], '--seed: no value follows; wanted is --seed <n>'],
+    [['rank', 'a', '--seed', '-1'], '--seed: "-1" cannot be used; wanted is a whole number from 0 to 4294967295'],
+    [['rank', 'a', '--draws', '0'], '--draws: "0" cannot be used; wanted is a whole number from 1 to 1000000'],
+    [['rank', 'a', '--draws', '1e3'], '--draws: "1e3" cannot be used; wanted is a whole number from 1 to 1000000'],
     [['rank', 'a', '--json', '--csv'], '--json --csv: these ask for different forms; wanted is one of them'],
   ] as const)('refuses %j in one line', (args, sentence) => {
     const { code, out, err } = ebbwatt(args)
