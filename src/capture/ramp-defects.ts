@@ -42,7 +42,7 @@ export function rampDefects(
   const clipped = clipping(context, ramp)
   if (clipped !== null) add('clipping', clipped)
   const followed = window.time[window.time.length - 1]! - ramp.fitted.curve.corner
-  const wanted = ramp.fitted.curve.tailTime * Math.log(1 / context.settings.chargeUntil)
+  const wanted = ramp.fitted.curve.tailTime * Math.log(1 / Math.max(context.settings.chargeUntil, 0.01))
   const truncated = followed < 0.9 * wanted
   // a jump, a cut peak, a cut tail or a ringing bends the fit: what it then says of the other defects is not believed
   const jump = inductiveJump(window, ramp)

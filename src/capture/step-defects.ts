@@ -35,7 +35,7 @@ export function stepDefects(
   const ringing = tailRinging(window, step.fitted)
   if (ringing !== null) add('ringing', { frequency: ringing.frequency, amplitude: ringing.amplitude })
   const followed = window.time[window.time.length - 1]! - step.fitted.curve.corner
-  const wanted = figures.tailTime * Math.log(1 / settings.chargeUntil)
+  const wanted = figures.tailTime * Math.log(1 / Math.max(settings.chargeUntil, 0.01))
   if (followed < 0.9 * wanted) add('tail-truncated', { followed, wanted })
   const conduction = (event.edge - event.first) * waveform.interval
   if (event.startVisible && chargedShare(conduction, figures.lifetime) < chargedEnough)

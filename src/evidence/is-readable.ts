@@ -10,10 +10,10 @@ const charges: Range = [1e-18, 1e3]
 const temperatures: Range = [1, 1e4]
 const largestSoftness = 1e6
 
-/** Whether every figure and condition that a recovery row states is one that the model can be solved for. */
-export function isReadable(row: RecoveryRow): boolean {
-  const { junction } = row
-  if (!inside(row.current, currents) || !inside(junction, temperatures) || !inside(row.recoveryTime, times))
+/** Whether every figure and condition of a recovery row, the current assumed where none is stated, is one that the model can be solved for. */
+export function isReadable(row: RecoveryRow, ratedCurrent: number): boolean {
+  const { junction, current } = row
+  if (!inside(current ?? ratedCurrent, currents) || !inside(junction, temperatures) || !inside(row.recoveryTime, times))
     return false
   if (row.fixture === 'step') return inside(row.reverse, currents) && inside(row.until, currents) && storageFits(row)
   const level = row.recoveryTimeBy.kind === 'level' ? row.recoveryTimeBy.until : null

@@ -13,7 +13,7 @@ export function readRecoveryRows(
   const readings: RowReading[] = []
   const caveats: Caveat[] = []
   for (const row of rows) {
-    if (!isReadable(row)) {
+    if (!isReadable(row, context.ratedCurrent)) {
       caveats.push({ code: 'row-impossible', candidate: context.id, data: { row: row.place.name } })
       continue
     }

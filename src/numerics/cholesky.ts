@@ -11,6 +11,8 @@ export class NotCovarianceError extends Error {
 
 /** A pivot below this share of its variance is rounding: the direction has no doubt of its own. */
 const negligible = 1e-12
+/** After a pivot just above that, rounding may leave the next ones this much below zero. */
+const rounding = 1e-6
 
 /**
  * Lower triangular L with L Lᵀ = S, for a symmetric positive semi-definite S of size n × n by rows.
@@ -34,7 +36,7 @@ export function choleskyFactor(
     let pivot = variance
     for (let k = 0; k < column; k++) pivot -= into[column * size + k]! ** 2
     const floor = negligible * Math.abs(variance)
-    if (!(pivot >= -floor)) throw new NotCovarianceError(column, pivot)
+    if (!(pivot >= -rounding * Math.abs(variance))) throw new NotCovarianceError(column, pivot)
     const root = pivot > floor ? Math.sqrt(pivot) : 0
     into[diagonal] = root
     for (let row = column + 1; row < size; row++) {

@@ -20,11 +20,15 @@ function formatted(problem: Problem, code: string, sourceText: string | null): s
   return line === undefined || line.trim() === '' ? head : `${head}\n${pointed(line, problem)}`
 }
 
+/** Would steer a terminal, turn the direction of writing or break the line. */
+const unprintable = /[\p{Cc}\p{Cf}\p{Cs}\p{Zl}\p{Zp}]/gu
+
 /** In a table the column of a problem counts columns, not characters: there is nothing for a caret to point at. */
 const isTable = /\.csv$/i
 
 function place({ file, line, column }: Problem): string {
-  return line === 0 ? file : `${file}:${line}:${column}`
+  const name = file.replace(unprintable, ' ')
+  return line === 0 ? name : `${name}:${line}:${column}`
 }
 
 function sourceLine(text: string, line: number): string | undefined {
@@ -44,7 +48,7 @@ const widest = 120
 function pointed(line: string, { column, found }: Problem): string {
   const start = Math.max(0, column - 1)
   const from = start > widest - 30 ? start - 30 : 0
-  const shown = line.slice(from, from + widest).replace(/[\p{Cc}\p{Cf}\p{Cs}\p{Zl}\p{Zp}]/gu, ' ')
+  const shown = line.slice(from, from + widest).replace(unprintable, ' ')
   const rest = line.slice(start)
   const bare = found.replace(/^"(.*)"$/, '$1')
   const length = [`"${bare}"`, `'${bare}'`, bare].find((text) => bare !== '' && rest.startsWith(text))?.length ?? 1

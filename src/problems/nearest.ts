@@ -1,3 +1,5 @@
+import { shown } from './shown.ts'
+
 /**
  * The known words closest to what was typed: equal but for case first, else the fewest edits, at most a third
  * of the word's length (one edit is always allowed), else those that begin like it. Empty when nothing is near.
@@ -24,7 +26,7 @@ function isBeginning(typed: string, word: string): boolean {
 /** "did you mean "a" or "b"?", or "" when nothing is near. */
 export function didYouMean(typed: string, known: readonly string[]): string {
   const near = [...new Set(nearestWords(typed, known))].slice(0, 2)
-  return near.length === 0 ? '' : `did you mean ${near.map((word) => `"${word}"`).join(' or ')}?`
+  return near.length === 0 ? '' : `did you mean ${near.map((word) => `"${shown(word)}"`).join(' or ')}?`
 }
 
 /** Case, and the difference between a hyphen, an underscore and a space, count for nothing. */

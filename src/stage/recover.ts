@@ -4,6 +4,11 @@ import { rectifierEnergy, switchAddedEnergy, tailShare } from '../models/commuta
 import { residualRecovery } from '../models/residual-recovery.ts'
 import type { Kernel, PartState, RecoveryEvent } from './kernel.ts'
 
+/** Bounds of u and y far outside any part: 1e-18 s to 100 s, a tail of 1e-13 lifetimes. They keep products finite. */
+const shortestLog = Math.log(1e-18)
+const longestLog = Math.log(100)
+const steepest = 30
+
 const turnOff = { peakCurrent: 0, current: 0, conductionTime: 0, lifetime: 0 }
 const ramp = { current: 0, slope: 0, lifetime: 0, tailTime: 0, storedCharge: 0 }
 const tail = { voltageFall: 0, tailTime: 0 }
@@ -49,8 +54,10 @@ function placeLifetimes(kernel: Kernel, state: PartState, event: RecoveryEvent):
     state.slopeLog = Math.log(event.slope / referenceSlope)
   }
   const logSlope = state.slopeLog
-  event.lifetime = Math.exp(state.lifetimeLog + c[1]! * logCurrent + c[2]! * logSlope)
-  event.tailTime = event.lifetime / (1 + Math.exp(state.ratioLog + c[5]! * logCurrent + c[6]! * logSlope))
+  const lifetimeLog = state.lifetimeLog + c[1]! * logCurrent + c[2]! * logSlope
+  const ratioLog = state.ratioLog + c[5]! * logCurrent + c[6]! * logSlope
+  event.lifetime = Math.exp(Math.min(Math.max(lifetimeLog, shortestLog), longestLog))
+  event.tailTime = event.lifetime / (1 + Math.exp(Math.min(ratioLog, steepest)))
 }
 
 function placeStoredCharge(kernel: Kernel, state: PartState, event: RecoveryEvent): void {

@@ -1,11 +1,15 @@
 import { describe, expect, it } from 'vitest'
 import { calibrate } from '../../src/evidence/calibrate.ts'
 import { readRecords } from '../../src/input/read-records.ts'
+import { readStage } from '../../src/input/read-stage.ts'
 import { chargeAtTurnOff } from '../../src/models/charge-control.ts'
 import { ringingPeakVoltage } from '../../src/models/peak-reverse-voltage.ts'
 import { scaledTimeToPeak } from '../../src/models/ramp-root.ts'
+import { choleskyFactor } from '../../src/numerics/cholesky.ts'
 import { formatProblem } from '../../src/problems/format-problem.ts'
+import { didYouMean } from '../../src/problems/nearest.ts'
 import { turnOnMeaning } from '../../src/stage/measured-turn-on.ts'
+import { rank } from '../../src/study/rank.ts'
 
 /** The ranks-and-ratings part of a record; rows follow. */
 const part = 'id: a\nclass: standard\nratings: {reverse_voltage: 200 V, average_current: 2 A, junction: 100 degC}\n'
@@ -82,4 +86,39 @@ describe('defects that random inputs found', () => {
     const meaning = turnOnMeaning({ given, testRectifier: rectifier, slope: -1e9, voltageFall: 1e-8 })
     expect(meaning.nominal.energy).toBeGreaterThan(0)
   })
+
+  it('a covariance that rounding leaves a hair below zero is still one', () => {
+    const [a, b] = [1, 1 - 1e-13]
+    expect(() => choleskyFactor(Float64Array.from([a, b, b, b * b - 1e-9]), 2)).not.toThrow()
+    expect(() => choleskyFactor(Float64Array.from([1, 2, 2, 1]), 2)).toThrow('not a covariance')
+  })
+
+  it('a hint repeats no control character of the word that is near', () => {
+    expect(didYouMean('Part', ['\u0007Part'])).toBe('did you mean " Part"?')
+  })
+
+  it('a path repeats no control character in a message', () => {
+    const problem = { code: 'file-missing', line: 0, column: 0, path: '', found: '', expected: '', hint: '' } as const
+    expect(formatProblem({ ...problem, file: 'a\u001B[2J\u202E.csv' })).toMatch(/^a \[2J \.csv {2}file-missing/)
+  })
+
+  it.each(['-273 degC', '0.001 K', '1 K'])(
+    'surroundings at %s, where a search may pass absolute zero, have a result',
+    (cold) => {
+      const text = `stage: buck
+input: {voltage: 5.1 V}
+output: {voltage: 5 V, current: 50 mA}
+frequency: 5 kHz
+inductor: {inductance: 1 uH}
+switch: {thermal: {junction_to_sink: 0.1 K/W}}
+cooling: {case: ${cold}}
+`
+      const stage = readStage(text, 'stage.yaml').value!.stage
+      const thermal = 'thermal: {junction_to_ambient: 10 K/W}\nforward_line: {threshold: 0.2 V, resistance: 1 mohm}\n'
+      const { value: records } = readRecords(part + thermal, 'part.yaml')
+      const { candidates } = rank(stage, records!, { seed: 0, draws: 1, version: '', inputs: [] })
+      expect(JSON.stringify(candidates)).not.toContain('NaN')
+      expect(candidates).toHaveLength(1)
+    },
+  )
 })
