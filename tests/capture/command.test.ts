@@ -152,7 +152,7 @@ describe('--into', () => {
     }
     rename('bench-schottky', 'bench-unit-33')
     expect(await refusal('schottky', { into: record() })).toMatch(
-      /id-unknown {2}no record has the id "bench-unit-33" \(did you mean "bench-unit-3"\?; known: medlar-sheet-alone, .*\)/,
+      /id-unknown {2}no record has the id "bench-unit-33" \(did you mean "bench-unit-3"\?; known are bench-schottky, .*\)/,
     )
     rename('bench-unit-33', 'bench-unit-3')
     expect(await refusal('schottky', { into: record() })).toContain('no recovery could be told from the fixture')
