@@ -1,6 +1,7 @@
 import type { RectifierRecord } from '../domain/rectifier.ts'
 import { checkReferences } from '../input/check-references.ts'
 import { readRecords } from '../input/read-records.ts'
+import { renderJson } from '../report/render-json.ts'
 import { collecting, type Desk, openDesk, readAt, settleDesk } from './desk.ts'
 import { readText } from './read-file.ts'
 import { readStageAndRecords } from './read-study.ts'
@@ -26,7 +27,7 @@ export async function runCheck(paths: readonly string[], options: CheckOptions, 
   for (const { path, kind } of checked) records.push(...(await checkAs[kind](desk, path, session)))
   desk.problems.push(...checkReferences(null, records))
   settleDesk(desk, options.quiet === true, session)
-  if (options.json === true) session.print(`${JSON.stringify({ files: checked, warnings: desk.warnings }, null, 2)}\n`)
+  if (options.json === true) session.print(renderJson({ files: checked, warnings: desk.warnings }))
   else if (options.quiet !== true) session.print(checked.map(({ path, kind }) => `${path}: ${kind}, usable\n`).join(''))
   return 0
 }

@@ -1,6 +1,7 @@
 import { formatProblem } from '../problems/format-problem.ts'
 import type { Problem } from '../problems/problem.ts'
 import { problemSentence } from '../problems/words.ts'
+import { renderJson } from '../report/render-json.ts'
 import { CommandFailure, failureDocument, onCommandLine } from './failure.ts'
 import { writingFailure } from './replace-file.ts'
 import type { Session } from './session.ts'
@@ -17,7 +18,7 @@ export async function outcomeOf(
     session.progress('')
     const told = error instanceof CommandFailure ? tellFailure(error) : tellFault(error)
     session.tell(`${told.text}\n`)
-    if (asksForJson(argv)) session.print(`${JSON.stringify(told.document, null, 2)}\n`)
+    if (asksForJson(argv)) session.print(renderJson(told.document))
     return told.exitCode
   }
 }

@@ -1,5 +1,6 @@
 import { closeSync, existsSync, lstatSync, mkdirSync, openSync, rmSync, writeFileSync } from 'node:fs'
 import { dirname, join } from 'node:path'
+import { renderJson } from '../report/render-json.ts'
 import { CommandFailure, failure } from './failure.ts'
 import { writingFailure } from './replace-file.ts'
 import type { Session } from './session.ts'
@@ -17,7 +18,7 @@ export async function runStart(folder: string, options: StartOptions, session: S
   refuseTaken([stage, record])
   writeNew(stage, starterStage)
   writeNew(record, starterRecords)
-  if (options.json === true) session.print(`${JSON.stringify({ written: [stage, record] }, null, 2)}\n`)
+  if (options.json === true) session.print(renderJson({ written: [stage, record] }))
   else if (options.quiet !== true) session.print(`${stage}\n${record}\n\nNext: ebbwatt rank ${stage}\n`)
   return 0
 }

@@ -2,7 +2,7 @@ import fc, { type Arbitrary } from 'fast-check'
 import { mutatedCapture, mutatedCatalogue, mutatedCheck, mutatedProfile, mutatedStudy, noise } from './demo-cases.ts'
 import type { FuzzCase } from './fuzz-case.ts'
 import { randomCapture } from './random-capture.ts'
-import { rankOptions, swapOptions, trendOptions } from './random-options.ts'
+import { rankOptions, reviewOptions, swapOptions, trendOptions } from './random-options.ts'
 import { randomRecord } from './random-records.ts'
 import { randomStage } from './random-stage.ts'
 
@@ -13,9 +13,10 @@ const validStudy: Arbitrary<FuzzCase> = fc
     randomRecord('a'),
     randomRecord('b'),
     fc.oneof(
-      { weight: 3, arbitrary: rankOptions },
-      { weight: 1, arbitrary: trendOptions },
-      { weight: 1, arbitrary: swapOptions(['a', 'b']) },
+      { weight: 9, arbitrary: rankOptions },
+      { weight: 3, arbitrary: trendOptions },
+      { weight: 3, arbitrary: swapOptions(['a', 'b']) },
+      { weight: 1, arbitrary: reviewOptions },
     ),
   )
   .map(([stage, one, other, { command, options }]) => ({

@@ -50,3 +50,8 @@ export function swapOptions(ids: readonly string[]): Arbitrary<Wish> {
     .tuple(common, fc.constantFrom(...ids), fc.constantFrom(...ids))
     .map(([options, from, to]) => ({ command: 'swap', options: { ...options, from, to } }))
 }
+
+/** A document does much of what the other commands do, so few draws have to do. */
+export const reviewOptions: Arbitrary<Wish> = fc
+  .tuple(fc.constantFrom('out.html', 'out.md'), fc.integer({ min: 0, max: 1000 }), fc.boolean())
+  .map(([output, seed, quiet]) => ({ command: 'review', options: { output, seed, draws: 2, quiet } }))

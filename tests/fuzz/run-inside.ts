@@ -5,6 +5,7 @@ import { runCheck } from '../../src/commands/check.ts'
 import { outcomeOf } from '../../src/commands/outcome.ts'
 import { runRank } from '../../src/commands/rank.ts'
 import { runReduce } from '../../src/commands/reduce.ts'
+import { runReview } from '../../src/commands/review.ts'
 import type { Session } from '../../src/commands/session.ts'
 import { runSwap } from '../../src/commands/swap.ts'
 import { runTrend } from '../../src/commands/trend.ts'
@@ -85,7 +86,7 @@ async function dispatch({ command, operands, options }: FuzzCase, { folder }: Ru
     case 'check':
       return runCheck(paths, all, session)
     case 'review':
-      throw new Error('the review document is run as a command only')
+      return runReview(path, all, session)
   }
 }
 
