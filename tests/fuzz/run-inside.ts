@@ -1,6 +1,7 @@
 import { mkdirSync, mkdtempSync, readdirSync, readFileSync, rmSync, writeFileSync } from 'node:fs'
 import { tmpdir } from 'node:os'
 import { dirname, join } from 'node:path'
+import { pathToFileURL } from 'node:url'
 import { runCheck } from '../../src/commands/check.ts'
 import { outcomeOf } from '../../src/commands/outcome.ts'
 import { runRank } from '../../src/commands/rank.ts'
@@ -45,7 +46,7 @@ export async function runInside(fuzzCase: FuzzCase, place: RunPlace): Promise<Fu
   layOut(fuzzCase, place)
   const streams = { out: '', err: '' }
   const session: Session = {
-    root: new URL('../..', import.meta.url),
+    root: pathToFileURL(`${process.cwd()}/`),
     version: '0.0.0',
     print: (text) => {
       streams.out += text
