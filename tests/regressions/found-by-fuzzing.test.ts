@@ -66,6 +66,19 @@ describe('defects that random inputs found', () => {
     ])
   })
 
+  it('twenty thousand levels on one line are refused at once', () => {
+    const begin = process.cpuUsage().user
+    for (const opening of ['a: ', '- ', '? ', '"k": ']) {
+      const text = part.replace('id: a', `id: a\n ${opening.repeat(20_000)}`)
+      expect(readRecords(text, 'part.yaml').problems.map(({ code, line }) => [code, line])).toEqual([
+        ['yaml-too-deep', 2],
+      ])
+    }
+    expect((process.cpuUsage().user - begin) / 1e6).toBeLessThan(2)
+    const title = part.replace('class', 'title: "see a: b: c: - ? d: one"\nclass')
+    expect(readRecords(title, 'part.yaml').problems).toEqual([])
+  })
+
   it('a line separator of another alphabet stays on its line in a message', () => {
     const problem = {
       code: 'word-unknown',

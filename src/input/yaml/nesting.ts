@@ -22,3 +22,34 @@ export function isNestedTooDeep(root: Token): number | null {
   }
   return null
 }
+
+const [tab, lineEnd, carriage, space, dash, colon, question] = [9, 10, 13, 32, 45, 58, 63] as const
+
+/**
+ * The line on which more than the most levels open one behind the other, as in "a: a: a: ...", or null; counted from 1.
+ * The package takes time with the square of their number, so they are looked for before it begins.
+ */
+export function lineNestedTooDeep(text: string): number | null {
+  let line = 1
+  let open = 0
+  let word = -1
+  for (let index = 0; index < text.length; index++) {
+    const sign = text.charCodeAt(index)
+    if (sign !== space && sign !== lineEnd && sign !== tab && sign !== carriage) {
+      if (word === -1) word = index
+      continue
+    }
+    if (word !== -1) {
+      const last = text.charCodeAt(index - 1)
+      const opens = last === colon || (word === index - 1 && (last === dash || last === question))
+      open = opens ? open + 1 : 0
+      if (open > mostLevels) return line
+      word = -1
+    }
+    if (sign === lineEnd) {
+      line++
+      open = 0
+    }
+  }
+  return null
+}

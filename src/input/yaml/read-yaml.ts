@@ -4,7 +4,7 @@ import { shown } from '../../problems/shown.ts'
 import { checkText } from './check-text.ts'
 import { forbidden, type YamlFault } from './fault.ts'
 import { locateIn } from './locate.ts'
-import { isNestedTooDeep, mostLevels } from './nesting.ts'
+import { isNestedTooDeep, lineNestedTooDeep, mostLevels } from './nesting.ts'
 import { nodeToData } from './node-to-data.ts'
 import type { Path } from './path.ts'
 
@@ -35,6 +35,8 @@ export interface YamlReading {
 export function readYaml(text: string, file: string, wanted: string): YamlReading {
   const notText = checkText(text, file)
   if (notText !== null) return { yaml: null, problems: [notText] }
+  const deep = lineNestedTooDeep(text)
+  if (deep !== null) return { yaml: null, problems: [{ ...levels, file, line: deep, column: 1 }] }
   const lines = new LineCounter()
   const placeOf = (offset: number): Place => {
     const { line, col } = lines.linePos(offset)
@@ -90,8 +92,10 @@ function compose(text: string, lines: LineCounter): Composed {
   return { documents }
 }
 
+const levels = { code: 'yaml-too-deep', path: '', found: '', expected: `${mostLevels} levels`, hint: '' } as const
+
 function tooDeep(offset: number): YamlFault {
-  return { code: 'yaml-too-deep', offset, path: '', found: '', expected: `${mostLevels} levels`, hint: '' }
+  return { ...levels, offset }
 }
 
 function isEmpty(document: Document.Parsed<ParsedNode>): boolean {
