@@ -30,6 +30,8 @@ export function ambientForJunction(kernel: Kernel, junction: number): number {
     const moved = slaveOthers(kernel, reference, junction)
     if (!(temperatures[1]! < switchCeiling)) return Number.NaN
     if (moved <= 1e-9) return reference
+    // Heat beyond all numbers: nothing settles there.
+    if (!(moved < Number.POSITIVE_INFINITY)) return Number.NaN
     if (thermal.switchSolved && kernel.parts === 1) {
       // The switch is the only unknown: the secant through two rounds saves two thirds of the rounds.
       const step = temperatures[1]! - inSwitch
