@@ -1,20 +1,14 @@
 import { defineConfig } from 'vitest/config'
+import { campaigns } from './mutation/campaigns.ts'
 
-/**
- * For mutation testing, which runs the tests thousands of times: what starts processes, needs a built program or a
- * browser, or only repeats the core through other entrances is left out.
- */
-const mutating = process.env.STRYKER_MUTATOR_WORKER !== undefined
-const left = ['bench', 'commands', 'demo', 'end-to-end', 'faults', 'fuzz', 'report', 'security', 'study']
+/** Trying deliberate faults in one folder of the core takes the tests beside it alone. */
+const mutated = process.env.EBBWATT_MUTATED
 
 /** Threads without isolation: the core is pure, so files cannot disturb one another and share their imports. */
 export default defineConfig({
   root: new URL('..', import.meta.url).pathname,
   test: {
-    include: ['tests/**/*.test.ts'],
-    exclude: mutating
-      ? ['tests/*.test.ts', `tests/{${left.join(',')}}/**`, 'tests/{capture/command,capture/defects}.test.ts']
-      : [],
+    include: mutated === undefined ? ['tests/**/*.test.ts'] : [...campaigns[mutated]!],
     pool: 'threads',
     isolate: false,
     maxWorkers: 2,
