@@ -1,0 +1,12 @@
+/**
+ * What must notice a deliberate fault in each folder of the core: the tests that stand beside it.
+ * The built command and the long tests of accuracy would notice more, but thousands of faults cannot wait for them.
+ */
+export const campaigns: Readonly<Record<string, readonly string[]>> = {
+  models: ['tests/models/*.test.ts', 'tests/published/published.test.ts', 'tests/properties/models-*.test.ts'],
+  evidence: ['tests/evidence/!(coverage).test.ts', 'tests/properties/evidence.test.ts'],
+  stage: ['tests/stage/*.test.ts', 'tests/properties/{stage,settling}.test.ts'],
+  decision: ['tests/decision/*.test.ts'],
+  capture: ['tests/capture/!(accuracy|command|defects|demo).test.ts'],
+  units: ['tests/input/{parse-quantity,unit-class}.test.ts'],
+}
