@@ -8,7 +8,7 @@ import { rampWorld } from './worlds.ts'
 const part = { current: 8, slope: 200e6, lifetime: 60e-9, tailTime: 20e-9, voltage: 400, voltageFall: 15e-9 }
 const ideal = {
   seed: 1,
-  samplesPerRecovery: 600,
+  samplesPerRecovery: 150,
   bandwidth: Number.POSITIVE_INFINITY,
   noise: 0,
   offset: 0,
