@@ -23,19 +23,28 @@ export function reverseCurrentAt(curve: RecoveryCurve, time: number): number {
   const { slope, amplitude, tailTime, rounding } = curve
   const x = time - curve.corner
   if (x <= 0) return amplitude + slope * (x - rounding)
-  if (rounding < 1e-6 * tailTime) return amplitude * Math.exp(-x / tailTime)
+  if (isSharp(curve)) return amplitude * Math.exp(-x / tailTime)
+  const { w, settled } = parts(curve)
+  return settled * Math.exp(-x / tailTime) + (amplitude - slope * w - settled) * Math.exp(-x / w)
+}
+
+/** A rounding that cannot be told from none. */
+function isSharp({ rounding, tailTime }: RecoveryCurve): boolean {
+  return rounding < 1e-6 * tailTime
+}
+
+/** Rounding w and the share I tau/(tau − w) of the current that falls with the tail. */
+function parts({ amplitude, tailTime, rounding }: RecoveryCurve): { readonly w: number; readonly settled: number } {
   // equal time constants have a limit of their own; a hair beside it is as good
   const w = Math.abs(rounding / tailTime - 1) < 1e-4 ? tailTime * 0.9999 : rounding
-  const settled = (amplitude * tailTime) / (tailTime - w)
-  return settled * Math.exp(-x / tailTime) + (amplitude - slope * w - settled) * Math.exp(-x / w)
+  return { w, settled: (amplitude * tailTime) / (tailTime - w) }
 }
 
 /** Time of the highest reverse current. [s] */
 export function peakTime(curve: RecoveryCurve): number {
   const { slope, amplitude, tailTime, corner } = curve
-  if (curve.rounding < 1e-6 * tailTime || slope <= 0) return corner
-  const w = Math.abs(curve.rounding / tailTime - 1) < 1e-4 ? tailTime * 0.9999 : curve.rounding
-  const settled = (amplitude * tailTime) / (tailTime - w)
+  if (isSharp(curve) || slope <= 0) return corner
+  const { w, settled } = parts(curve)
   const ratio = ((settled - amplitude + slope * w) * tailTime) / (settled * w)
   const x = ratio > 0 ? Math.log(ratio) / (1 / w - 1 / tailTime) : 0
   return corner + Math.max(0, x)
@@ -59,14 +68,13 @@ export function fallsTo(reverse: (time: number) => number, peak: number, tailTim
 
 /** Charge under the curve between two times, the first at or before the corner. [C] */
 export function chargeUnder(curve: RecoveryCurve, from: number, to: number): number {
-  const { slope, amplitude, tailTime, rounding, corner } = curve
+  const { slope, amplitude, tailTime, corner } = curve
   const atCorner = reverseCurrentAt(curve, corner)
   const rise = corner - from
   const ramp = rise * (atCorner - 0.5 * slope * rise)
   const x = to - corner
-  if (rounding < 1e-6 * tailTime) return ramp - amplitude * tailTime * Math.expm1(-x / tailTime)
-  const w = Math.abs(rounding / tailTime - 1) < 1e-4 ? tailTime * 0.9999 : rounding
-  const settled = (amplitude * tailTime) / (tailTime - w)
+  if (isSharp(curve)) return ramp - amplitude * tailTime * Math.expm1(-x / tailTime)
+  const { w, settled } = parts(curve)
   return (
     ramp - settled * tailTime * Math.expm1(-x / tailTime) - (amplitude - slope * w - settled) * w * Math.expm1(-x / w)
   )

@@ -7,6 +7,6 @@ export const campaigns: Readonly<Record<string, readonly string[]>> = {
   evidence: ['tests/evidence/!(coverage).test.ts', 'tests/properties/evidence.test.ts'],
   stage: ['tests/stage/*.test.ts', 'tests/properties/{stage,settling}.test.ts'],
   decision: ['tests/decision/*.test.ts'],
-  capture: ['tests/capture/!(accuracy|append|command|defects|demo|robust|settings|table).test.ts'],
+  capture: ['tests/capture/!(accuracy|append|command|defects|demo|reduce|robust|settings|table).test.ts'],
   units: ['tests/input/{parse-quantity,unit-class}.test.ts'],
 }
