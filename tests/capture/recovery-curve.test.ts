@@ -1,5 +1,11 @@
 import { describe, expect, it } from 'vitest'
-import { chargeUnder, fallsTo, peakTime, type RecoveryCurve, reverseCurrentAt } from '../../src/capture/recovery-curve.ts'
+import {
+  chargeUnder,
+  fallsTo,
+  peakTime,
+  type RecoveryCurve,
+  reverseCurrentAt,
+} from '../../src/capture/recovery-curve.ts'
 
 /** A corner at 5 after a rise of 2 per unit of time, a tail of time 4. */
 const sharp: RecoveryCurve = { corner: 5, slope: 2, amplitude: 10, tailTime: 4, rounding: 0 }
