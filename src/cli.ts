@@ -1,33 +1,43 @@
 #!/usr/bin/env node
 import { Command, CommanderError, InvalidArgumentError } from 'commander'
-import { outcomeOf, outcomeOfStream } from './commands/outcome.ts'
 import type { StudyOptions } from './commands/read-study.ts'
 import { openSession } from './commands/session.ts'
-import { usageFailure } from './commands/usage-failure.ts'
+import { loadProgram, type Program } from './load-program.ts'
 
 /** Both `src/` and `dist/` lie right under the package's folder. */
 const session = openSession(new URL('..', import.meta.url))
+let loaded: Program | undefined
+
+/** Needed once there is work, so that --help does not wait for it. */
+function loadOnce(): Program {
+  loaded ??= loadProgram(session.root)
+  return loaded
+}
 
 process.on('SIGINT', () => process.exit(130))
 for (const stream of [process.stdout, process.stderr]) {
-  stream.on('error', (error) => process.exit(outcomeOfStream(error, session) ?? process.exitCode ?? 0))
+  stream.on('error', (error) => process.exit(loadOnce().outcomeOfStream(error, session) ?? process.exitCode ?? 0))
 }
 
-process.exitCode = await outcomeOf(session, process.argv.slice(2), async (argv) => {
-  const program = new Command('ebbwatt')
+const argv = process.argv.slice(2)
+process.exitCode = await obey(argv)
+
+async function obey(argv: readonly string[]): Promise<number> {
+  const command = new Command('ebbwatt')
   let outcome = 0
-  const settle = async (run: Promise<number>) => {
+  describe(command, async (run) => {
     outcome = await run
-  }
-  describe(program, settle)
+  })
   try {
-    await program.parseAsync([...argv], { from: 'user' })
+    await command.parseAsync([...argv], { from: 'user' })
+    return outcome
   } catch (error) {
-    if (!(error instanceof CommanderError)) throw error
-    if (error.exitCode !== 0) throw usageFailure(error.code, error.message)
+    if (!(error instanceof CommanderError)) return loadOnce().outcomeOf(session, argv, () => Promise.reject(error))
+    if (error.exitCode === 0) return 0
+    const refused = loadOnce().usageFailure(error.code, error.message)
+    return loadOnce().outcomeOf(session, argv, () => Promise.reject(refused))
   }
-  return outcome
-})
+}
 
 type Settle = (run: Promise<number>) => Promise<void>
 
@@ -55,9 +65,7 @@ First steps: ebbwatt start my-stage && ebbwatt rank my-stage/stage.yaml`
 function describeStudies(program: Command, settle: Settle): void {
   studyCommand(program, 'rank', 'rank the candidate rectifiers of a stage: losses, temperature, margin, odds')
     .option('--top <n>', 'list at most so many; the others are counted', wholeNumber(2, 1e6), 50)
-    .action((stage: string, options: StudyOptions) =>
-      settle(import('./commands/rank.ts').then(({ runRank }) => runRank(stage, options, session))),
-    )
+    .action((stage: string, options: StudyOptions) => settle(loadOnce().runRank(stage, options, session)))
   studyCommand(
     program,
     'trend',
@@ -68,18 +76,13 @@ function describeStudies(program: Command, settle: Settle): void {
     .requiredOption('--to <value>', 'upper end, with its unit')
     .option('--steps <n>', 'number of points', wholeNumber(2, 1000), 25)
     .option('--log', 'equal ratios between the points instead of equal steps')
-    .action((stage, options) =>
-      settle(import('./commands/trend.ts').then(({ runTrend }) => runTrend(stage, options, session))),
-    )
+    .action((stage, options) => settle(loadOnce().runTrend(stage, options, session)))
   studyCommand(program, 'swap', 'is replacing one rectifier by another justified?')
     .option('--from <id>', "the part in use (default: the stage's incumbent)")
     .requiredOption('--to <id>', 'the part to replace it')
-    .action((stage, options) =>
-      settle(import('./commands/swap.ts').then(({ runSwap }) => runSwap(stage, options, session))),
-    )
+    .action((stage, options) => settle(loadOnce().runSwap(stage, options, session)))
   studyCommand(program, 'review', 'write the document for a design review: -o review.html or -o review.md').action(
-    (stage: string, options: StudyOptions) =>
-      settle(import('./commands/review.ts').then(({ runReview }) => runReview(stage, options, session))),
+    (stage: string, options: StudyOptions) => settle(loadOnce().runReview(stage, options, session)),
   )
 }
 
@@ -114,9 +117,7 @@ function describeFiles(program: Command, settle: Settle): void {
     .option('--into <record>', 'append the row to the record whose id is device.id')
     .option('--strict', 'exit code 4 where the capture is warned about')
     .option('--quiet', 'no notes')
-    .action((capture, options) =>
-      settle(import('./commands/reduce.ts').then(({ runReduce }) => runReduce(capture, options, session))),
-    )
+    .action((capture, options) => settle(loadOnce().runReduce(capture, options, session)))
   program
     .command('check')
     .argument('<file...>', 'stage, record, capture and mapping files')
@@ -124,9 +125,7 @@ function describeFiles(program: Command, settle: Settle): void {
     .description('check files; all problems at once')
     .option('--json', 'print one JSON document')
     .option('--quiet', 'print problems only')
-    .action((files, options) =>
-      settle(import('./commands/check.ts').then(({ runCheck }) => runCheck(files, options, session))),
-    )
+    .action((files, options) => settle(loadOnce().runCheck(files, options, session)))
   program
     .command('start')
     .argument('[folder]', 'where to put them', '.')
@@ -134,9 +133,7 @@ function describeFiles(program: Command, settle: Settle): void {
     .description('write a commented starter stage and record')
     .option('--json', 'print one JSON document')
     .option('--quiet', 'print nothing')
-    .action((folder, options) =>
-      settle(import('./commands/start.ts').then(({ runStart }) => runStart(folder, options, session))),
-    )
+    .action((folder, options) => settle(loadOnce().runStart(folder, options, session)))
 }
 
 function collect(value: string, earlier: readonly string[] = []): readonly string[] {

@@ -21,16 +21,18 @@ const allowed: Readonly<Record<string, readonly string[]>> = {
   report: ['units', 'domain', 'd3-scale', 'd3-shape', 'cli-table3'],
   input: ['units', 'domain', 'problems', 'yaml', '#validators', 'mathjs', 'papaparse'],
   commands: ['input', 'problems', 'domain', 'units', 'study', 'report', 'node:'],
-  build: ['esbuild', 'ajv', 'json-schema-to-typescript', 'node:'],
+  build: ['load-program.ts', 'esbuild', 'ajv', 'json-schema-to-typescript', 'node:'],
   'browser.ts': ['study', 'report', 'domain', 'units'],
   'worker.ts': ['study', 'domain', 'node:worker_threads'],
-  'cli.ts': ['commands', 'problems', 'commander'],
+  'cli.ts': ['commands', 'load-program.ts', 'commander'],
+  'load-program.ts': ['program.ts', 'node:'],
+  'program.ts': ['commands'],
   'index.ts': ['input', 'study', 'report', 'domain'],
 }
 
 /** Folders that never touch the outside world. */
 const pure = Object.keys(allowed).filter(
-  (name) => !['commands', 'build', 'browser.ts', 'worker.ts', 'cli.ts'].includes(name),
+  (name) => !['commands', 'build', 'browser.ts', 'worker.ts', 'cli.ts', 'program.ts', 'load-program.ts'].includes(name),
 )
 
 /** Which packages may be used in one corner only. */

@@ -4,11 +4,13 @@ import { join } from 'node:path'
 import { buildBundles } from './bundles.ts'
 import { writeDeclarations } from './declarations.ts'
 import { writeLicences } from './licences.ts'
+import { precompile } from './precompile.ts'
 import { buildValidators } from './validators.ts'
 
 const begun = Date.now()
 const validatorPackages = await buildValidators()
 const [bundledPackages] = await Promise.all([buildBundles(), writeDeclarations()])
+await precompile()
 writeLicences([...validatorPackages, ...bundledPackages])
 removeOlderThan(begun)
 

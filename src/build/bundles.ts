@@ -1,5 +1,5 @@
-import { existsSync } from 'node:fs'
 import { type BuildOptions, build } from 'esbuild'
+import { programFile } from '../load-program.ts'
 import { packagesOf } from './licences.ts'
 
 const shared: BuildOptions = {
@@ -12,8 +12,7 @@ const shared: BuildOptions = {
 }
 
 /**
- * Node programs share their pieces: what a command imports dynamically becomes a file of its own that `--help` never reads.
- * The banner gives bundled CommonJS packages the `require` that ESM lacks.
+ * The command line's first steps, the library and its threads share their pieces. The banner gives bundled CommonJS packages the `require` that ESM lacks.
  */
 const node: BuildOptions = {
   ...shared,
@@ -21,9 +20,22 @@ const node: BuildOptions = {
   platform: 'node',
   target: 'node20',
   splitting: true,
+  entryPoints: ['src/cli.ts', 'src/index.ts', 'src/worker.ts'],
   outdir: 'dist',
   chunkNames: 'piece-[hash]',
   banner: { js: "import{createRequire as requireMaker}from'node:module';const require=requireMaker(import.meta.url);" },
+}
+
+/** One function expression: load-program.ts compiles it, or finds it compiled, and calls it. */
+const program: BuildOptions = {
+  ...shared,
+  format: 'cjs',
+  platform: 'node',
+  target: 'node20',
+  entryPoints: ['src/program.ts'],
+  outfile: programFile,
+  banner: { js: '(function(require){const module={exports:{}};' },
+  footer: { js: 'return module.exports})' },
 }
 
 /** The review document carries this text inside itself. */
@@ -39,8 +51,6 @@ const browser: BuildOptions = {
 
 /** Builds the command, the library, the worker and the browser engine; returns the packages they contain. */
 export async function buildBundles(): Promise<readonly string[]> {
-  const programs = ['src/cli.ts', 'src/index.ts', 'src/worker.ts'].filter((file) => existsSync(file))
-  const options = [{ ...node, entryPoints: programs }, ...(existsSync('src/browser.ts') ? [browser] : [])]
-  const results = await Promise.all(options.map((option) => build(option)))
+  const results = await Promise.all([node, program, browser].map((option) => build(option)))
   return results.flatMap(({ metafile }) => (metafile ? packagesOf(metafile) : []))
 }

@@ -1,5 +1,7 @@
 import type { RectifierRecord } from '../domain/rectifier.ts'
+import { readCapture } from '../input/capture-settings.ts'
 import { checkReferences } from '../input/check-references.ts'
+import { readMapping } from '../input/read-mapping.ts'
 import { readRecords } from '../input/read-records.ts'
 import { renderJson } from '../report/render-json.ts'
 import { collecting, type Desk, openDesk, readAt, settleDesk } from './desk.ts'
@@ -24,7 +26,7 @@ export async function runCheck(paths: readonly string[], options: CheckOptions, 
     return kind === null ? [] : [{ path, kind }]
   })
   const records: RectifierRecord[] = []
-  for (const { path, kind } of checked) records.push(...(await checkAs[kind](desk, path, session)))
+  for (const { path, kind } of checked) records.push(...checkAs[kind](desk, path, session))
   desk.problems.push(...checkReferences(null, records))
   settleDesk(desk, options.quiet === true, session)
   if (options.json === true) session.print(renderJson({ files: checked, warnings: desk.warnings }))
@@ -32,23 +34,23 @@ export async function runCheck(paths: readonly string[], options: CheckOptions, 
   return 0
 }
 
-type Check = (desk: Desk, path: string, session: Session) => Promise<readonly RectifierRecord[]>
+type Check = (desk: Desk, path: string, session: Session) => readonly RectifierRecord[]
 
 /** Returns the records of a record file: those that were named together must not share an id. */
 const checkAs: Readonly<Record<FileKind, Check>> = {
-  stage: async (desk, path, session) => {
-    await readStageAndRecords(desk, path, {}, session)
+  stage: (desk, path, session) => {
+    readStageAndRecords(desk, path, {}, session)
     return []
   },
-  capture: async (desk, path) => {
-    readAt(desk, path, (await import('../input/capture-settings.ts')).readCapture)
+  capture: (desk, path) => {
+    readAt(desk, path, readCapture)
     return []
   },
-  mapping: async (desk, path) => {
-    readAt(desk, path, (await import('../input/read-mapping.ts')).readMapping)
+  mapping: (desk, path) => {
+    readAt(desk, path, readMapping)
     return []
   },
-  records: async (desk, path) => readAt(desk, path, readRecords) ?? [],
+  records: (desk, path) => readAt(desk, path, readRecords) ?? [],
 }
 
 /** Each kind of file has a key at its top that no other has; what has none of them is read as records. */

@@ -13,7 +13,7 @@ export async function deliverResult(
   inputs: readonly string[],
   session: Session,
 ): Promise<void> {
-  const text = await renderResult(result, format, target === null ? session : plainLook)
+  const text = renderResult(result, format, target === null ? session : plainLook)
   await breathe()
   if (target !== null) replaceFile(target, text, inputs)
   if (target === null || jsonOnStdout) session.print(text)

@@ -12,7 +12,7 @@ import { studyStage } from './study-stage.ts'
 /** `ebbwatt rank STAGE` */
 export async function runRank(stagePath: string, options: StudyOptions, session: Session): Promise<number> {
   const delivery = chooseDelivery(options, resultForms)
-  const { stage, records, settings, files } = await readStudy(stagePath, options, session)
+  const { stage, records, settings, files } = readStudy(stagePath, options, session)
   if (delivery.target !== null) checkTarget(delivery.target, files)
   const result = words(
     await studyStage(stagePath, session, () => doSteps(rankSteps(stage, records, settings), session)),

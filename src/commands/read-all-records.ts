@@ -1,6 +1,7 @@
 import { extname, resolve } from 'node:path'
 import type { RectifierRecord } from '../domain/rectifier.ts'
-import type { CatalogueMapping } from '../input/read-mapping.ts'
+import { readCatalogue } from '../input/read-catalogue.ts'
+import { type CatalogueMapping, readMapping } from '../input/read-mapping.ts'
 import { readRecords } from '../input/read-records.ts'
 import { type Desk, readAt } from './desk.ts'
 import { onCommandLine } from './failure.ts'
@@ -13,16 +14,16 @@ export interface RecordOptions {
 }
 
 /** All records of YAML files and, through the mapping, of CSV tables; each file once, however it was spelt. */
-export async function readAllRecords(
+export function readAllRecords(
   desk: Desk,
   paths: readonly string[],
   options: RecordOptions,
   session: Session,
-): Promise<readonly RectifierRecord[]> {
+): readonly RectifierRecord[] {
   const files = [...new Map(paths.map((path) => [resolve(path), path])).values()].toSorted()
   const tables = files.filter(isTable)
-  const mapping = await readMappingFor(desk, tables, options)
-  const fromTables = mapping === null ? [] : await readTables(desk, tables, mapping, options, session)
+  const mapping = readMappingFor(desk, tables, options)
+  const fromTables = mapping === null ? [] : readTables(desk, tables, mapping, options, session)
   return [
     ...files.filter((path) => !isTable(path)).flatMap((path) => readAt(desk, path, readRecords) ?? []),
     ...fromTables,
@@ -33,14 +34,10 @@ function isTable(path: string): boolean {
   return extname(path).toLowerCase() === '.csv'
 }
 
-async function readMappingFor(
-  desk: Desk,
-  tables: readonly string[],
-  { mapping }: RecordOptions,
-): Promise<CatalogueMapping | null> {
+function readMappingFor(desk: Desk, tables: readonly string[], { mapping }: RecordOptions): CatalogueMapping | null {
   if (mapping !== undefined) {
     if (tables.length === 0) desk.warnings.push(unusedMapping(mapping))
-    return readAt(desk, mapping, (await import('../input/read-mapping.ts')).readMapping)
+    return readAt(desk, mapping, readMapping)
   }
   for (const found of tables) {
     const expected = '--mapping FILE, which says what its columns are'
@@ -64,14 +61,13 @@ function unusedMapping(found: string) {
 }
 
 /** Bad rows are left out and told cell by cell; with `--strict` they are problems. */
-async function readTables(
+function readTables(
   desk: Desk,
   tables: readonly string[],
   mapping: CatalogueMapping,
   { strict, quiet }: RecordOptions,
   session: Session,
-): Promise<readonly RectifierRecord[]> {
-  const { readCatalogue } = await import('../input/read-catalogue.ts')
+): readonly RectifierRecord[] {
   return tables.flatMap((path) => {
     session.progress(`reading ${path} ...`)
     const catalogue = readAt(desk, path, (text, file) => {

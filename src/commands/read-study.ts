@@ -3,6 +3,7 @@ import type { RectifierRecord } from '../domain/rectifier.ts'
 import type { Stage } from '../domain/stage.ts'
 import type { StudySettings } from '../domain/study.ts'
 import { checkReferences, listedIds } from '../input/check-references.ts'
+import { readProfile } from '../input/read-profile.ts'
 import { readStage, recordPaths, type StageDocument } from '../input/read-stage.ts'
 import { didYouMean } from '../problems/nearest.ts'
 import type { Problem } from '../problems/problem.ts'
@@ -32,9 +33,9 @@ export interface StudyMaterial {
 }
 
 /** Reads a stage and its records; every problem of every file is told at once. */
-export async function readStudy(stagePath: string, options: StudyOptions, session: Session): Promise<StudyMaterial> {
+export function readStudy(stagePath: string, options: StudyOptions, session: Session): StudyMaterial {
   const desk = openDesk()
-  const { stage, records } = await readStageAndRecords(desk, stagePath, options, session)
+  const { stage, records } = readStageAndRecords(desk, stagePath, options, session)
   settleDesk(desk, options.quiet === true, session)
   if (stage === null) throw new Error('a stage without a value and without a problem')
   const only = [...new Set(options.only ?? [])]
@@ -55,14 +56,14 @@ export async function readStudy(stagePath: string, options: StudyOptions, sessio
 }
 
 /** The stage and all records it names, with those of the command line; what they say of each other is checked. */
-export async function readStageAndRecords(
+export function readStageAndRecords(
   desk: Desk,
   stagePath: string,
   options: RecordOptions & Pick<StudyOptions, 'records' | 'only'>,
   session: Session,
-): Promise<{ readonly stage: Stage | null; readonly records: readonly RectifierRecord[] }> {
+): { readonly stage: Stage | null; readonly records: readonly RectifierRecord[] } {
   const { records: further = [], only = [] } = options
-  const document = await readStageFile(desk, stagePath)
+  const document = readStageFile(desk, stagePath)
   const text = desk.texts.get(stagePath)
   // A stage with problems still says where its records are: theirs belong into the same list.
   const paths = document?.records ?? (text === undefined ? [] : recordPaths(text, stagePath))
@@ -71,7 +72,7 @@ export async function readStageAndRecords(
     ...named.flatMap((path) => collecting(desk, () => recordFiles(path, `named by ${stagePath}`)) ?? []),
     ...further.flatMap((path) => collecting(desk, () => recordFiles(path)) ?? []),
   ]
-  const records = await readAllRecords(desk, files, options, session)
+  const records = readAllRecords(desk, files, options, session)
   // A file that could not be read hides its ids: calling them unknown would only add noise.
   const complete = desk.problems.length === 0
   desk.problems.push(...checkReferences(complete ? document : null, records))
@@ -80,10 +81,9 @@ export async function readStageAndRecords(
 }
 
 /** A stage with its duty profile, which may stand in a table of its own. */
-async function readStageFile(desk: Desk, stagePath: string): Promise<StageDocument | null> {
+function readStageFile(desk: Desk, stagePath: string): StageDocument | null {
   const document = readAt(desk, stagePath, readStage)
   if (document === null || document.dutyProfileFile === null) return document
-  const { readProfile } = await import('../input/read-profile.ts')
   const { stage } = document
   const read = (text: string, path: string) => readProfile(text, path, stage)
   const dutyProfile = readAt(desk, seenFrom(stagePath, document.dutyProfileFile), read)

@@ -2,6 +2,7 @@ import { basename, dirname, join, relative, sep } from 'node:path'
 import type { CaptureDocument, CaptureSettings } from '../domain/capture.ts'
 import { readCapture } from '../input/capture-settings.ts'
 import { captureText, understoodText } from '../report/capture-text.ts'
+import { captureChart } from '../report/charts/capture-chart.ts'
 import { renderJson } from '../report/render-json.ts'
 import { captureWords } from '../report/words/capture-words.ts'
 import { type ReduceResult, reduce, understoodOf } from '../study/reduce.ts'
@@ -54,7 +55,7 @@ export async function runReduce(path: string, options: ReduceOptions, session: S
     options.into === undefined
       ? null
       : appendRow(options.into, result.document, basename(settings.file), capture.sha256)
-  await deliver(result, delivery, files, session)
+  deliver(result, delivery, files, session)
   if (appended !== null && options.quiet !== true) session.tell(`appended to ${options.into}: ${appended}\n`)
   return options.strict === true && result.document.warnings.length > 0 ? 4 : 0
 }
@@ -90,23 +91,18 @@ function inputFor(
   }
 }
 
-async function deliver(
-  result: ReduceResult,
-  delivery: Delivery,
-  inputs: readonly string[],
-  session: Session,
-): Promise<void> {
+function deliver(result: ReduceResult, delivery: Delivery, inputs: readonly string[], session: Session): void {
   const { target, format, jsonOnStdout } = delivery
-  const text = await rendered(result, format, target === null ? session.width : 120)
+  const text = rendered(result, format, target === null ? session.width : 120)
   if (target !== null) replaceFile(target, text, inputs)
   if (target === null || jsonOnStdout) session.print(jsonOnStdout ? renderJson(result.document) : text)
   // a drawing has no room for sentences: figures and cautions are told beside it
   if (format === 'svg') tellCautions(result.document, session)
 }
 
-async function rendered({ document, trace }: ReduceResult, format: Delivery['format'], width: number): Promise<string> {
+function rendered({ document, trace }: ReduceResult, format: Delivery['format'], width: number): string {
   if (format === 'json') return renderJson(document)
-  if (format === 'svg') return (await import('../report/charts/capture-chart.ts')).captureChart(document, trace)
+  if (format === 'svg') return captureChart(document, trace)
   return captureText(document, trace, width)
 }
 

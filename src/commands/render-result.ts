@@ -1,25 +1,27 @@
 import type { AnyResult } from '../domain/study.ts'
+import { renderChart } from '../report/charts/render-chart.ts'
+import { renderCsv } from '../report/render-csv.ts'
+import { renderHtml } from '../report/render-html.ts'
+import { renderJson } from '../report/render-json.ts'
+import { renderMarkdown } from '../report/render-markdown.ts'
+import { renderTable } from '../report/render-table.ts'
 import type { OutputFormat } from './delivery.ts'
 import type { Session } from './session.ts'
 
-/** A result in one of the forms; only that form's packages are loaded. */
-export async function renderResult(
-  result: AnyResult,
-  format: OutputFormat,
-  look: Pick<Session, 'width' | 'colour'>,
-): Promise<string> {
+/** A result in one of the forms. */
+export function renderResult(result: AnyResult, format: OutputFormat, look: Pick<Session, 'width' | 'colour'>): string {
   switch (format) {
     case 'json':
-      return (await import('../report/render-json.ts')).renderJson(result)
+      return renderJson(result)
     case 'csv':
-      return (await import('../report/render-csv.ts')).renderCsv(result)
+      return renderCsv(result)
     case 'markdown':
-      return (await import('../report/render-markdown.ts')).renderMarkdown(result)
+      return renderMarkdown(result)
     case 'html':
-      return (await import('../report/render-html.ts')).renderHtml(result)
+      return renderHtml(result)
     case 'svg':
-      return (await import('../report/charts/render-chart.ts')).renderChart(result)
+      return renderChart(result)
     case 'table':
-      return (await import('../report/render-table.ts')).renderTable(result, look)
+      return renderTable(result, look)
   }
 }

@@ -26,7 +26,7 @@ export async function runReview(stagePath: string, options: StudyOptions, sessio
     })
   }
   const { format } = chooseDelivery(options, ['html', 'markdown'])
-  const { stage, records: read, settings, files } = await readStudy(stagePath, options, session)
+  const { stage, records: read, settings, files } = readStudy(stagePath, options, session)
   if (target !== undefined) checkTarget(target, files)
   const records = withPlaces(read, (place) => ({ ...place, file: seenFrom(stagePath, place.file) }))
   const result = await studyStage(stagePath, session, () => review(stage, records, settings))

@@ -6,7 +6,7 @@ import { writingFailure } from './replace-file.ts'
 import type { Session } from './session.ts'
 import { starterRecords, starterStage } from './starter-texts.ts'
 
-export interface StartOptions {
+interface StartOptions {
   readonly json?: boolean
   readonly quiet?: boolean
 }

@@ -17,7 +17,7 @@ export interface SwapOptions extends StudyOptions {
 /** `ebbwatt swap STAGE --from ID --to ID` */
 export async function runSwap(stagePath: string, options: SwapOptions, session: Session): Promise<number> {
   const delivery = chooseDelivery(options, resultForms)
-  const { stage, records, settings, files } = await readStudy(stagePath, options, session)
+  const { stage, records, settings, files } = readStudy(stagePath, options, session)
   if (delivery.target !== null) checkTarget(delivery.target, files)
   const from = options.from ?? stage.incumbent
   if (from === null) {

@@ -26,7 +26,7 @@ export interface TrendOptions extends StudyOptions {
 export async function runTrend(stagePath: string, options: TrendOptions, session: Session): Promise<number> {
   const delivery = chooseDelivery(options, resultForms)
   const request = readRequest(options)
-  const { stage, records, settings, files } = await readStudy(stagePath, options, session)
+  const { stage, records, settings, files } = readStudy(stagePath, options, session)
   if (delivery.target !== null) checkTarget(delivery.target, files)
   const study = () => trend(stage, records, request, settings)
   const result = words(await studyStage(stagePath, session, study, askedBy(options, stage.kind)))

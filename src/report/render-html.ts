@@ -60,7 +60,7 @@ function itemMarkup({ lead, text }: { readonly lead: string | null; readonly tex
 }
 
 /** A table, under its caption unless a heading says the same; it scrolls by itself where the page is narrow. */
-export function tableMarkup({ columns, rows }: Table, caption: string, captioned: boolean): string {
+function tableMarkup({ columns, rows }: Table, caption: string, captioned: boolean): string {
   const heads = columns
     .map((column) => `<th scope="col"${numeric(column)}>${escapeText(headerText(column))}</th>`)
     .join('')
