@@ -20,7 +20,9 @@ for (const stream of [process.stdout, process.stderr]) {
 }
 
 const argv = process.argv.slice(2)
-process.exitCode = await obey(argv)
+void obey(argv).then((outcome) => {
+  process.exitCode = outcome
+})
 
 async function obey(argv: readonly string[]): Promise<number> {
   const command = new Command('ebbwatt')

@@ -157,7 +157,7 @@ describe('README.md', () => {
 
   it('names every command and every option of the program', () => {
     const help = (...args: readonly string[]) =>
-      spawnSync('node', ['dist/cli.js', ...args, '--help'], { encoding: 'utf8' }).stdout
+      spawnSync('node', ['dist/cli.cjs', ...args, '--help'], { encoding: 'utf8' }).stdout
     const commands = [...help().matchAll(/^ {2}(\w+) (?:\[options\] )?[<[]/gm)].map(([, name]) => name!)
     const explained = [...readme.matchAll(/^\| `(\w+)(?: [^`]*)?` \|/gm)].map(([, name]) => name!)
     expect(commands.filter((name) => name !== 'help' && !explained.includes(name))).toEqual([])

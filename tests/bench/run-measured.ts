@@ -12,12 +12,12 @@ export interface MeasuredRun {
 
 const tell = "process.on('exit',()=>process.stderr.write('\\n'+JSON.stringify(process.resourceUsage())))"
 
-/** Runs `dist/cli.js`, which must end with 0, and asks its process for what it used. */
+/** Runs `dist/cli.cjs`, which must end with 0, and asks its process for what it used. */
 export function runMeasured(args: readonly string[]): MeasuredRun {
   const begun = performance.now()
   const { status, stdout, stderr } = spawnSync(
     process.execPath,
-    ['--import', `data:text/javascript,${encodeURIComponent(tell)}`, 'dist/cli.js', ...args],
+    ['--import', `data:text/javascript,${encodeURIComponent(tell)}`, 'dist/cli.cjs', ...args],
     { encoding: 'utf8', maxBuffer: 1 << 30 },
   )
   const seconds = (performance.now() - begun) / 1000

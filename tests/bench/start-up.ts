@@ -11,8 +11,8 @@ export interface StartUp {
 
 const bare = ['-e', '0']
 const commands: readonly (readonly [string, readonly string[]])[] = [
-  ['ebbwatt --help', ['dist/cli.js', '--help']],
-  ['ebbwatt rank pump-boost.yaml', ['dist/cli.js', 'rank', 'catalogs-demo/stages/pump-boost.yaml']],
+  ['ebbwatt --help', ['dist/cli.cjs', '--help']],
+  ['ebbwatt rank pump-boost.yaml', ['dist/cli.cjs', 'rank', 'catalogs-demo/stages/pump-boost.yaml']],
 ]
 
 /** Runs every command once per round, beside a bare node; the first round warms the disk's cache and does not count. */

@@ -70,7 +70,7 @@ it('Ctrl-C while threads work ends at once and leaves no half-written file', asy
   const results = mkdtempSync(join(folder, 'results-'))
   writeFileSync(parts, inventedCatalogue(400, 3))
   const more = ['--records', parts, '--mapping', mapping, '--draws', '1000000', '-o', join(results, 'out.json')]
-  const child = spawn(process.execPath, ['dist/cli.js', 'rank', stage, ...more], {
+  const child = spawn(process.execPath, ['dist/cli.cjs', 'rank', stage, ...more], {
     stdio: ['ignore', 'ignore', 'pipe'],
   })
   // The note about the table comes when all is read, right before the study; a moment later threads are at work.

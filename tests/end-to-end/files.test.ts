@@ -6,7 +6,7 @@ import { scratchFolder } from '../commands/scratch.ts'
 import { ebbwatt } from './run-command.ts'
 import { smallStage } from './small-stage.ts'
 
-const program = resolve('dist/cli.js')
+const program = resolve('dist/cli.cjs')
 
 describe('-o', () => {
   it('writes what stdout would have shown, and nothing to stdout', () => {

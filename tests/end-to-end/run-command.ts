@@ -7,7 +7,7 @@ export interface Outcome {
   readonly err: string
 }
 
-const program = resolve('dist/cli.js')
+const program = resolve('dist/cli.cjs')
 
 /** Runs the built command as a shell would, without a terminal. */
 export function ebbwatt(args: readonly string[], { cwd = '.', environment = {} }: RunPlace = {}): Outcome {

@@ -5,7 +5,7 @@ import { describe, expect, it } from 'vitest'
 import { ebbwatt } from './run-command.ts'
 import { smallStage } from './small-stage.ts'
 
-const program = resolve('dist/cli.js')
+const program = resolve('dist/cli.cjs')
 
 describe('exit codes', () => {
   const rank = (...options: readonly string[]) =>

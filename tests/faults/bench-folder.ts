@@ -21,7 +21,7 @@ export function readRecord(folder: string): string {
   return readFileSync(join(folder, 'records.yaml'), 'utf8')
 }
 
-const program = resolve('dist/cli.js')
+const program = resolve('dist/cli.cjs')
 
 /** Starts the built command without waiting for it. */
 export function start(args: readonly string[], cwd: string): ChildProcess {

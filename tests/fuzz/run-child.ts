@@ -4,7 +4,7 @@ import { join, resolve } from 'node:path'
 import { type FuzzCase, type FuzzOutcome, wordsOf } from './fuzz-case.ts'
 import { layOut, type RunPlace, writtenFiles } from './run-inside.ts'
 
-const program = resolve('dist/cli.js')
+const program = resolve('dist/cli.cjs')
 const peakFile = '.peak'
 
 /** Loaded before the program: leaves behind how much memory the process took at most. */
