@@ -21,7 +21,7 @@ export interface TailShareInput {
 export function tailShare(input: TailShareInput): number {
   if (!(input.voltageFall > 0)) return 1
   const x = input.voltageFall / input.tailTime
-  return x < Number.POSITIVE_INFINITY ? -Math.expm1(-x) / x : 0
+  return -Math.expm1(-x) / x
 }
 
 /** Inputs of {@link baseEnergy}. */

@@ -92,7 +92,7 @@ function peakFrom({ voltage, loopInductance }: RingingPeakInput, law: Capacitanc
   let high = 2 * voltage
   for (let n = 0; n < 60 && missing(high) < 0; n++) high *= 2
   const found = findRoot({ f: missing, low: voltage, high, tolerance: 1e-13 * voltage, maxIterations: 100 })
-  return found === null ? voltage : Math.max(voltage, found.root)
+  return found?.root ?? voltage
 }
 
 /** Ringing of both corners of a slow fall, in step: the first grows as its energy over its frequency stays. */

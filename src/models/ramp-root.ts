@@ -27,7 +27,7 @@ export function scaledTimeToPeak(crossing: number, charge: number, tail: number)
       z < 1
         ? share * (charge * decay + crossing * grown - excess) - tail * x
         : share * (grown - (crossing - charge) * decay) - x
-    if (!(missing > 0)) return x
+    if (!(missing > 0)) break
     const curvature = share * decay * weight
     // 1 − curvature, without losing the digits of a ramp far shorter than tau
     const rise = tail + share * (grown - decay * (crossing - charge))
@@ -35,11 +35,11 @@ export function scaledTimeToPeak(crossing: number, charge: number, tail: number)
       const step = (2 * missing) / (rise + Math.sqrt(rise * rise + 2 * curvature * missing))
       x += step
       // the parabola misses by curvature step³/(6 rise)
-      if (curvature * step * step * step <= 1e-16 * x * rise) return x
+      if (curvature * step * step * step <= 1e-16 * x * rise) break
     } else {
       const step = missing / rise
       x += step
-      if (-curvature * step * step <= 1e-16 * x * rise) return x
+      if (-curvature * step * step <= 1e-16 * x * rise) break
     }
   }
   return x

@@ -113,5 +113,7 @@ describe('published storage times', () => {
     }
     expect(diffusionStorageTime(input)).toBeLessThan(simplestStorageTime(input))
     expect(diffusionStorageTime({ ...input, forwardCurrent: 1e3, reverseCurrent: 1e-3 })).toBeGreaterThan(8e-6)
+    // a current that goes on forwards never empties the diode
+    expect(diffusionStorageTime({ ...input, reverseCurrent: -0.5 })).toBe(Number.POSITIVE_INFINITY)
   })
 })
