@@ -5,7 +5,7 @@
 export const campaigns: Readonly<Record<string, readonly string[]>> = {
   models: ['tests/models/*.test.ts', 'tests/published/published.test.ts', 'tests/properties/models-*.test.ts'],
   evidence: ['tests/evidence/!(coverage).test.ts', 'tests/properties/evidence.test.ts'],
-  stage: ['tests/stage/*.test.ts', 'tests/properties/{stage,settling}.test.ts'],
+  stage: ['tests/stage/!(*-integration|thermal).test.ts'],
   decision: ['tests/decision/*.test.ts'],
   capture: ['tests/capture/!(accuracy|append|command|defects|demo|reduce|robust|settings|table).test.ts'],
   units: ['tests/input/{parse-quantity,unit-class}.test.ts'],
