@@ -39,10 +39,8 @@ function contradictions(record: RectifierRecord, readings: readonly RowReading[]
   const recovery = readings.map(({ row, observation }) => ({ name: row.place.name, observation }))
   return [
     ...(prior.recovery ? findContradiction(record.id, prior.recovery, recovery) : []),
-    ...(record.forward.length > 1 ? findContradiction(record.id, prior.forward, forwardObservations(record)) : []),
-    ...(prior.leakage && record.leakage.length > 1
-      ? findContradiction(record.id, prior.leakage, leakageObservations(record))
-      : []),
+    ...findContradiction(record.id, prior.forward, forwardObservations(record)),
+    ...(prior.leakage ? findContradiction(record.id, prior.leakage, leakageObservations(record)) : []),
   ]
 }
 

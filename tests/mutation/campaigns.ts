@@ -4,7 +4,7 @@
  */
 export const campaigns: Readonly<Record<string, readonly string[]>> = {
   models: ['tests/models/*.test.ts'],
-  evidence: ['tests/evidence/!(coverage).test.ts', 'tests/properties/evidence.test.ts'],
+  evidence: ['tests/evidence/!(coverage).test.ts'],
   stage: ['tests/stage/!(*-integration|thermal).test.ts'],
   decision: ['tests/decision/*.test.ts'],
   capture: ['tests/capture/!(accuracy|append|command|defects|demo|reduce|robust|settings|table).test.ts'],
