@@ -19,11 +19,11 @@ export function voltageOnsetAfterPeak(
   const early = at(0.05)
   const late = at(0.25)
   const middle = at(0.5)
-  if (early === null || late === null || middle === null || !(late > early)) return null
   const ratio = (middle - late) / (late - early)
   const gentle = Math.min(1, Math.max(0, (spacing.straight - ratio) / (spacing.straight - spacing.gentle)))
   const back = backward.straight + gentle * (backward.gentle - backward.straight)
-  return early - back * (late - early) - (ramp.fitted.curve.corner + ramp.fitted.curve.rounding)
+  const skew = early - back * (late - early) - (ramp.fitted.curve.corner + ramp.fitted.curve.rounding)
+  return Number.isFinite(skew) ? skew : null
 }
 
 /** (t50 − t25)/(t25 − t5) of a line and of a parabola: 25/20 and (7.07 − 5)/(5 − 2.24). */
@@ -31,15 +31,11 @@ const spacing = { straight: 1.25, gentle: 0.75 }
 /** (t5 − t0)/(t25 − t5) of a line and of a parabola: 5/20 and 2.24/(5 − 2.24). */
 const backward = { straight: 0.25, gentle: 0.81 }
 
-/** Last crossing upwards before the voltage has reached half: noise on the flat part cannot fool it. */
-function reaches(window: EventWindow, volts: Float64Array, level: number): number | null {
-  let k = volts.length - 1
-  let top = 0
-  for (let j = 0; j < volts.length; j++) if (volts[j]! > volts[top]!) top = j
-  k = top
-  while (k > 0 && volts[k - 1]! > level) k -= 1
-  if (k === 0) return null
+/** Last crossing upwards before the highest reading: noise on the flat part cannot fool it. NaN where it is never below. */
+function reaches(window: EventWindow, volts: Float64Array, level: number): number {
+  let k = volts.indexOf(volts.reduce((top, value) => Math.max(top, value)))
+  while (volts[k - 1]! > level) k -= 1
   const below = volts[k - 1]!
   const above = volts[k]!
-  return window.time[k]! - (window.interval * (above - level)) / Math.max(above - below, 1e-300)
+  return window.time[k]! - (window.interval * (above - level)) / (above - below)
 }

@@ -23,31 +23,24 @@ export function reverseCurrentAt(curve: RecoveryCurve, time: number): number {
   const { slope, amplitude, tailTime, rounding } = curve
   const x = time - curve.corner
   if (x <= 0) return amplitude + slope * (x - rounding)
-  if (isSharp(curve)) return amplitude * Math.exp(-x / tailTime)
   const { w, settled } = parts(curve)
   return settled * Math.exp(-x / tailTime) + (amplitude - slope * w - settled) * Math.exp(-x / w)
 }
 
-/** A rounding that cannot be told from none. */
-function isSharp({ rounding, tailTime }: RecoveryCurve): boolean {
-  return rounding < 1e-6 * tailTime
-}
-
 /** Rounding w and the share I tau/(tau − w) of the current that falls with the tail. */
 function parts({ amplitude, tailTime, rounding }: RecoveryCurve): { readonly w: number; readonly settled: number } {
-  // equal time constants have a limit of their own; a hair beside it is as good
-  const w = Math.abs(rounding / tailTime - 1) < 1e-4 ? tailTime * 0.9999 : rounding
+  // no rounding and equal time constants have limits of their own; a hair beside them is as good
+  const w = Math.abs(rounding / tailTime - 1) < 1e-4 ? tailTime * 0.9999 : Math.max(rounding, 1e-12 * tailTime)
   return { w, settled: (amplitude * tailTime) / (tailTime - w) }
 }
 
-/** Time of the highest reverse current. [s] */
+/** Time of the highest reverse current: x = w tau/(tau − w) ln(1 + a (tau − w)/I) after the corner. [s] */
 export function peakTime(curve: RecoveryCurve): number {
   const { slope, amplitude, tailTime, corner } = curve
-  if (isSharp(curve) || slope <= 0) return corner
-  const { w, settled } = parts(curve)
-  const ratio = ((settled - amplitude + slope * w) * tailTime) / (settled * w)
-  const x = ratio > 0 ? Math.log(ratio) / (1 / w - 1 / tailTime) : 0
-  return corner + Math.max(0, x)
+  const { w } = parts(curve)
+  const bend = (slope * (tailTime - w)) / amplitude
+  // at −1 and below the current comes from below zero and never leaves it
+  return bend > -1 ? corner + Math.max(0, ((w * tailTime) / (tailTime - w)) * Math.log1p(bend)) : corner
 }
 
 /** Time after the peak at which the reverse current has fallen to a level. [s] */
@@ -73,7 +66,6 @@ export function chargeUnder(curve: RecoveryCurve, from: number, to: number): num
   const rise = corner - from
   const ramp = rise * (atCorner - 0.5 * slope * rise)
   const x = to - corner
-  if (isSharp(curve)) return ramp - amplitude * tailTime * Math.expm1(-x / tailTime)
   const { w, settled } = parts(curve)
   return (
     ramp - settled * tailTime * Math.expm1(-x / tailTime) - (amplitude - slope * w - settled) * w * Math.expm1(-x / w)

@@ -36,4 +36,10 @@ describe('the end of the recovery of an exponential tail', () => {
     expect(recoveryEnd(straight, { kind: 'line-90-25' })).toBeCloseTo(26, 9)
     expect(recoveryEnd(straight, { kind: 'line-75-50' })).toBeCloseTo(26, 9)
   })
+
+  it('of a level that is the peak or above is the peak, whatever the tail does after it', () => {
+    const hump = { ...tail, reverse: (time: number) => (time < 22 ? 8 : 0) }
+    expect(recoveryEnd(hump, { kind: 'level', until: 6 })).toBe(20)
+    expect(recoveryEnd(hump, { kind: 'level', until: 7 })).toBe(20)
+  })
 })
