@@ -26,8 +26,8 @@ describe('a ringing', () => {
     expect(findRinging(ring(200, 0.05), 1, 1.1)).toBeNull()
   })
 
-  it('of two cycles in the stretch belongs to the shape of the tail', () => {
-    expect(findRinging(ring(200, 2 / 200), 1, 0.1)).toBeNull()
+  it('of three cycles in the stretch belongs to the shape of the tail', () => {
+    expect(findRinging(ring(200, 3 / 200), 1, 0.1)).toBeNull()
     expect(findRinging(ring(200, 4 / 200), 1, 0.1)!.frequency).toBeCloseTo(0.02, 3)
   })
 
