@@ -1,6 +1,7 @@
 /** `npm run build`: everything under dist/ but dist/build, which holds this program itself. */
 import { readdirSync, rmSync, statSync } from 'node:fs'
 import { join } from 'node:path'
+import { compiledFile } from '../load-program.ts'
 import { buildBundles } from './bundles.ts'
 import { writeDeclarations } from './declarations.ts'
 import { writeLicences } from './licences.ts'
@@ -8,6 +9,8 @@ import { precompile } from './precompile.ts'
 import { buildValidators } from './validators.ts'
 
 const begun = Date.now()
+// V8 tells a text by its length alone: what it compiled of an older one must not outlive that.
+rmSync(compiledFile, { force: true })
 const validatorPackages = await buildValidators()
 const [bundledPackages] = await Promise.all([buildBundles(), writeDeclarations()])
 await precompile()
