@@ -1,6 +1,6 @@
 /**
  * What whole catalogues and whole years cost on this machine, from the built command and piece by piece.
- * npm run tools && node dist/build/run-tool.js tests/bench/catalogue.ts [--json]
+ * npm run bench:catalogue [-- --json]
  */
 import { mkdtempSync, readFileSync, rmSync, writeFileSync } from 'node:fs'
 import { tmpdir } from 'node:os'
