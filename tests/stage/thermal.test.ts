@@ -223,37 +223,4 @@ describe('the junction settles at the lowest root of the heat balance', () => {
     )
     expect(Math.min(seen.settled, seen.none), 'both outcomes met').toBeGreaterThan(5)
   })
-
-  it('a shared sink carries both: temperatures are where the network puts the heat', () => {
-    const kernel = kernelOf(stage(), silicon())
-    expect(settle(kernel)).toBe(true)
-    const { rows, temperatures } = kernel
-    const inSwitch =
-      rows[row.switchConduction]! +
-      rows[row.turnOnBase]! +
-      rows[row.turnOff]! +
-      rows[row.stored]! +
-      rows[row.recoverySwitch]! +
-      rows[row.capacitive]!
-    const inRectifier =
-      rows[row.conduction]! + rows[row.recoveryRectifier]! + rows[row.leakage]! + rows[row.forwardRecovery]!
-    const sink = kelvin(40) + 1 * (inSwitch + inRectifier)
-    expect(temperatures[0]).toBeCloseTo(sink + 2.3 * inRectifier, 5)
-    expect(temperatures[1]).toBeCloseTo(sink + 0.8 * inSwitch, 5)
-  })
-
-  it('a fixed case holds both mounting faces', () => {
-    const kernel = kernelOf(stage({ cooling: { kind: 'case', caseTemperature: kelvin(70) } }), silicon())
-    expect(settle(kernel)).toBe(true)
-    expect(kernel.temperatures[0]).toBeCloseTo(kelvin(70) + 1.8 * kernel.rows[row.hotPart]!, 5)
-    expect(kernel.temperatures[1]).toBeGreaterThan(kelvin(70))
-  })
-
-  it('junction to ambient needs nothing else', () => {
-    const part = silicon({ thermal: { kind: 'ambient', junctionToAmbient: 12, mounting: null } })
-    const cooling = { kind: 'ambient', ambientTemperature: kelvin(30) } as const
-    const kernel = kernelOf(stage({ cooling }), part)
-    expect(settle(kernel)).toBe(true)
-    expect(kernel.temperatures[0]).toBeCloseTo(kelvin(30) + 12 * kernel.rows[row.hotPart]!, 5)
-  })
 })
