@@ -41,14 +41,11 @@ export function parseQuantity(text: string, rule: QuantityRule): number | Quanti
 export const commaHint = 'write the decimals after a point and leave out thousands separators'
 
 function malformedRest(rest: string, kind: QuantityKindName): QuantityRefusal | null {
-  if (/^ ?[a-zA-Z%]/.test(rest)) return null
-  if (/^\s*$/.test(rest)) return refuse('unit-missing', kind, '')
-  if (/^\s*,\s*\d/.test(rest))
-    return { refused: true, code: 'number-decimal-comma', expected: wantedQuantity(kind), hint: commaHint }
-  if (/^\s+\d(?!\s*\/)/.test(rest) && !/^\s+1\s*\//.test(rest))
-    return refuse('number-malformed', kind, 'one number without spaces in it')
-  if (/^\s*[.,\d]/.test(rest) && !/^\s+1\s*\//.test(rest)) return refuse('number-malformed', kind, '')
-  return null
+  if (rest === '') return refuse('unit-missing', kind, '')
+  // a unit that begins with its denominator may be written "1/K"
+  if (!/^\s*[.,\d]/.test(rest) || /^\s+1\s*\//.test(rest)) return null
+  if (/^\s*,\s*\d/.test(rest)) return refuse('number-decimal-comma', kind, commaHint)
+  return refuse('number-malformed', kind, /^\s+\d(?!\s*\/)/.test(rest) ? 'one number without spaces in it' : '')
 }
 
 function refuse(code: ProblemCode, kind: QuantityKindName, hint: string): QuantityRefusal {
@@ -56,7 +53,7 @@ function refuse(code: ProblemCode, kind: QuantityKindName, hint: string): Quanti
 }
 
 interface Scale extends UnitConversion {
-  /** Set for units that are a whole power of ten smaller: dividing by it rounds once, so "90 nC" is 9e-8. */
+  /** How many make one, for units that are a whole fraction: dividing by it rounds once, so "90 nC" is 9e-8; else 1. */
   readonly divisor: number
 }
 
@@ -114,6 +111,8 @@ function findConversion(unitText: string, kind: QuantityKindName): Scale | Quant
   const { target } = quantityKinds[kind]
   const percent = unitText.startsWith('%')
   const rest = (percent ? unitText.slice(1) : unitText).trim().replace(/^1\s*\//, '/')
+  // "5 %V" is no voltage: a percentage stands alone or before its denominator
+  if (percent && rest !== '' && !rest.startsWith('/')) return unknownUnit(unitText, kind)
   if (rest === '') return target === '' ? asScale(0.01, 0) : otherDimension(unitText, 'a plain ratio', kind)
   if (target === '') {
     const conversion = convertUnit(rest, 'V')
@@ -129,9 +128,7 @@ function findConversion(unitText: string, kind: QuantityKindName): Scale | Quant
 
 function asScale(factor: number, offset: number): Scale {
   const inverse = Math.round(1 / factor)
-  const powerOfTen =
-    factor < 1 && 10 ** Math.round(Math.log10(inverse)) === inverse && Math.abs(inverse * factor - 1) < 1e-12
-  return { factor, offset, divisor: powerOfTen ? inverse : 1 }
+  return { factor, offset, divisor: Math.abs(inverse * factor - 1) < 1e-12 ? inverse : 1 }
 }
 
 function unknownUnit(unitText: string, kind: QuantityKindName): QuantityRefusal {
