@@ -58,7 +58,7 @@ export function regressGap(gap: Float64Array, inputs: readonly GapInput[]): GapR
   const draws = target.length
   const level = gap.reduce((most, value) => (Number.isFinite(value) ? Math.max(most, Math.abs(value)) : most), 0)
   const variance = meanSquare(target)
-  if (draws < drawsPerTerm || Math.sqrt(variance) <= constant * level) return null
+  if (Math.sqrt(variance) <= constant * level) return null
   const groups = inputs.map((input) => standardise(input, gap))
   const terms = chooseTerms(groups, draws)
   if (!terms) return null
@@ -103,7 +103,7 @@ function standardise(input: GapInput, gap: Float64Array): Standardised {
   return { name: input.name, columns, deviations }
 }
 
-/** Columns of the regression for each input; straight ones first. Null with too few draws or nothing to fit. */
+/** Columns of the regression for each input; straight ones first. Null with too few draws (or none), or nothing to fit. */
 function chooseTerms(groups: readonly Standardised[], draws: number): Float64Array[][] | null {
   const straight = groups.map((group) => group.columns.filter((column) => column !== null))
   const full = straight.map((columns) => [...columns, ...products(columns)])
@@ -149,5 +149,5 @@ function centre(values: Float64Array): Float64Array {
 function meanSquare(values: Float64Array): number {
   let sum = 0
   for (const value of values) sum += value * value
-  return values.length > 0 ? sum / values.length : 0
+  return sum / values.length
 }
