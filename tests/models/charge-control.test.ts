@@ -1,6 +1,7 @@
 import { describe, expect, it } from 'vitest'
 import { chargeAtTurnOff, rampRecovery, recoveryTimeFactor, timeToPeak } from '../../src/models/charge-control.ts'
 import { exponentialExcess, scaledTimeToPeak } from '../../src/models/ramp-root.ts'
+import { chargeByOde, rampByOde } from './recovery-ode.ts'
 
 const event = { current: 8, slope: 200e6, lifetime: 60e-9, tailTime: 20e-9, storedCharge: 480e-9 }
 
@@ -18,6 +19,21 @@ describe('time to the peak', () => {
         const input = { ...event, current, storedCharge: fill * current * event.lifetime + 1e-9 }
         expect(Math.abs(published(timeToPeak(input), input))).toBeLessThan(1e-14 * input.lifetime)
       }
+    }
+  })
+
+  it('is where an ODE solver finds the junction empty, with the charge that it finds', () => {
+    for (const scaled of [
+      { current: 0.5, charge: 0.4, tail: 0.3 },
+      { current: 3, charge: 3.3, tail: 0.1 },
+      { current: 0, charge: 0.2, tail: 0.6 },
+    ]) {
+      const solved = rampByOde(scaled)
+      const { current, charge: storedCharge, tail: tailTime } = scaled
+      const ours = rampRecovery({ current, storedCharge, tailTime, slope: 1, lifetime: 1 })
+      expect(ours.timeToPeak).toBeCloseTo(solved.timeToPeak, 9)
+      expect(ours.peakReverseCurrent).toBeCloseTo(solved.peak, 9)
+      expect(ours.charge).toBeCloseTo(solved.reverseCharge, 9)
     }
   })
 
@@ -90,6 +106,13 @@ describe('charge at turn-off', () => {
   it('is the same on both sides of the switch to the series at small times', () => {
     const at = (z: number) => chargeAtTurnOff({ ...interval, conductionTime: z * interval.lifetime }) / z
     expect(at(0.05 + 1e-12) / at(0.05 - 1e-12)).toBeCloseTo(1, 11)
+  })
+
+  it('is what an ODE solver fills in, over short and long intervals', () => {
+    for (const time of [0.04, 0.3, 2, 39, 45]) {
+      const charge = chargeAtTurnOff({ peakCurrent: 1, current: 0.4, conductionTime: time, lifetime: 1 })
+      expect(charge).toBeCloseTo(chargeByOde(1, 0.4, time), 9)
+    }
   })
 
   it('is 0 without an interval and names a lifetime without meaning', () => {

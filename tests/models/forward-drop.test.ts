@@ -58,7 +58,7 @@ describe('conduction over a falling current', () => {
         const expected = byQuadrature(input)
         expect(Math.abs(trapezoidConductionPower(input) - expected)).toBeLessThanOrEqual(1e-10 * expected)
       }),
-      { numRuns: 1000 },
+      { numRuns: 400 },
     )
   })
 

@@ -1,77 +1,14 @@
-import fc from 'fast-check'
 import { describe, expect, it } from 'vitest'
-import { capacitanceAt, capacitanceLaw } from '../../src/models/junction-capacitance.ts'
-import {
-  type RingingPeakInput,
-  ringingPeakVoltage,
-  storedChargePeakVoltage,
-} from '../../src/models/peak-reverse-voltage.ts'
-import { evenly, spread } from './random-inputs.ts'
-import { solveOde, solveToEvent } from './solve-ode.ts'
+import { ringingPeakVoltage, storedChargePeakVoltage } from '../../src/models/peak-reverse-voltage.ts'
+import { peakByOde } from './ringing-ode.ts'
 
-/**
- * Highest voltage from rest to t_fv + 4π sqrt(L C(0)), each peak located where the current turns; scaled to V and sqrt(L C0).
- * The steps are shorter than half a natural period, so that no turn is passed over.
- */
-function peakByOde({ voltage, voltageFall, loopInductance, capacitance, parts }: RingingPeakInput): number {
-  const law = capacitanceLaw(capacitance, parts)
-  const unit = Math.sqrt(loopInductance * law.zeroBias)
-  const fall = voltageFall / unit
-  const relative = (v: number) => capacitanceAt({ capacitance: law, voltage: v * voltage }) / law.zeroBias
-  const f = (t: number, [v, i]: number[]) => [i! / relative(v!), (fall > 0 ? Math.min(1, t / fall) : 1) - v!]
-  let highest = 0
-  let state = [0, 0]
-  // the drive has a corner at the end of the ramp: no step may straddle it
-  for (const [from, to] of [
-    [0, fall],
-    [fall, fall + 4 * Math.PI],
-  ] as const) {
-    const steps = Math.ceil((to - from) / 0.15)
-    for (let n = 0; n < steps; n++) {
-      const x = from + ((to - from) * n) / steps
-      const next = from + ((to - from) * (n + 1)) / steps
-      const after = solveOde(f, x, state, next)
-      highest = Math.max(highest, after[0]!)
-      if (state[1]! > 0 && after[1]! < 0) {
-        highest = Math.max(highest, solveToEvent(f, { x, y: state, xMost: next }, (_x, [, i]) => i!).y[0]!)
-      }
-      state = after
-    }
-  }
-  return highest * voltage
-}
 const law = (zeroBias: number, builtIn: number, grading: number) =>
   ({ kind: 'law', zeroBias, builtIn, grading }) as const
 
 describe('peak reverse voltage', () => {
-  it('agrees with an ODE solver on random loops', () => {
-    const loops = fc.sample(
-      fc.record({
-        voltage: spread(20, 800),
-        voltageFall: evenly(0, 30e-9),
-        loopInductance: evenly(5e-9, 60e-9),
-        capacitance: fc.record({
-          kind: fc.constant('law' as const),
-          zeroBias: evenly(1e-10, 2e-9),
-          builtIn: evenly(0.5, 1.5),
-          grading: evenly(0.3, 0.5),
-        }),
-        parts: fc.integer({ min: 1, max: 3 }),
-      }),
-      { numRuns: 25, seed: 20265 },
-    )
-    // 64 Runge-Kutta steps per shortest period: phase error below 3e-4 rad over the few periods of a usual fall
-    for (const loop of loops) expect(Math.abs(ringingPeakVoltage(loop) / peakByOde(loop) - 1)).toBeLessThan(2e-5)
-  })
-
-  it('covers a fall too slow to be followed by an envelope that the ringing stays under', () => {
-    for (const voltageFall of [60e-9, 100e-9]) {
-      const loop = { voltage: 400, voltageFall, loopInductance: 1e-9, capacitance: law(20e-12, 1, 0.46), parts: 1 }
-      const peak = ringingPeakVoltage(loop)
-      const solved = peakByOde(loop)
-      expect(peak).toBeGreaterThanOrEqual(solved)
-      expect(peak).toBeLessThan(1.02 * solved)
-    }
+  it('agrees with an ODE solver on a loop with two parts', () => {
+    const loop = { voltage: 60, voltageFall: 6e-9, loopInductance: 12e-9, capacitance: law(4e-10, 0.7, 0.5), parts: 2 }
+    expect(Math.abs(ringingPeakVoltage(loop) / peakByOde(loop) - 1)).toBeLessThan(1e-6)
   })
 
   it('is V (1 + |sin x|/x), x = ω t_fv/2, after a linear fall on a constant capacitance', () => {

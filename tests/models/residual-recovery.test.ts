@@ -1,6 +1,7 @@
 import { describe, expect, it } from 'vitest'
 import { rampRecovery } from '../../src/models/charge-control.ts'
 import { residualRecovery } from '../../src/models/residual-recovery.ts'
+import { rampByOde, softByOde } from './recovery-ode.ts'
 
 const input = {
   slopeOfDecay: 5 / 3e-6,
@@ -20,6 +21,25 @@ describe('residual recovery', () => {
     const out = fresh()
     expect(residualRecovery(input, out)).toBe(out)
     expect(out.charge).toBeGreaterThan(0)
+  })
+
+  it('takes what an ODE solver leaves in a junction that is still full or has emptied by itself', () => {
+    // tau = 1, a = 1, m = 1/8, q0 = 0.1: the junction empties by itself after 0.63
+    const [m, tail, charge] = [0.125, 0.3, 0.1]
+    const scaled = { slopeOfDecay: m, slope: 1, lifetime: 1, tailTime: tail, storedChargeAtZero: charge }
+    const met = new Set<boolean>()
+    for (const idleTime of [0.001, 0.05, 0.2, 0.4, 0.5, 0.8]) {
+      const soft = softByOde(m, tail, charge, idleTime)
+      met.add(soft.empty)
+      const left = soft.empty
+        ? { peak: -soft.current, reverseCharge: -soft.current * tail, timeToPeak: -soft.current }
+        : rampByOde({ ...soft, tail })
+      const ours = residualRecovery({ ...scaled, idleTime }, fresh())
+      expect(ours.peakReverseCurrent).toBeCloseTo(left.peak, 9)
+      expect(ours.charge).toBeCloseTo(left.reverseCharge, 9)
+      expect(ours.timeToPeak).toBeCloseTo(left.timeToPeak + soft.current, 9)
+    }
+    expect(met.size).toBe(2)
   })
 
   it('does not jump where the junction has just emptied by itself', () => {
@@ -45,6 +65,15 @@ describe('residual recovery', () => {
     const edge = soft.timeToPeak + input.tailTime * Math.log(left / (0.01 * whole))
     expect(at(edge * (1 - 1e-6)).charge).toBeGreaterThan(0.0099 * whole)
     expect(at(edge * (1 + 1e-6))).toEqual({ peakReverseCurrent: 0, charge: 0, timeToPeak: 0 })
+  })
+
+  it('at no idle time is the hard event without current', () => {
+    const hard = rampRecovery({ ...input, current: 0, storedCharge: input.storedChargeAtZero })
+    for (const idleTime of [0, -1e-9]) {
+      expect(at(idleTime).peakReverseCurrent).toBeCloseTo(hard.peakReverseCurrent, 12)
+      expect(at(idleTime).charge / hard.charge).toBeCloseTo(1, 12)
+      expect(at(idleTime).timeToPeak / hard.timeToPeak).toBeCloseTo(1, 12)
+    }
   })
 
   it('is zero for an empty junction, without a division of nothing by nothing', () => {
