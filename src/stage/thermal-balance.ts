@@ -100,7 +100,8 @@ function iterate(kernel: Kernel): boolean {
   placeResidual(kernel)
   placeHeatInverse(kernel, solver.inverse)
   for (let round = 0; round < maxRounds; round++) {
-    const moving = largest(residual) > tolerance
+    // Heat beyond all numbers is no rest either.
+    const moving = !(largest(residual) <= tolerance)
     if (!moving && Math.abs(line.correction) <= crestTolerance) return true
     if (moving && !stepForward(kernel)) return false
     const crestMoves = Math.abs(line.correction) * (temperatures[0]! - thermal.reference)

@@ -62,6 +62,7 @@ describe('the estimated sensitivities are the derivatives of the heat at held cu
     ['a slow fall of the switch', steady({ switch: { voltageFall: 90e-9 } }), silicon()],
     ['a slow turn-on', steady({ switch: { slope: { kind: 'given', slope: 20e6 } } }), silicon()],
     ['a given line without stored charge', steady(), leaky(carbide())],
+    ['stored charge without leakage', steady(), silicon({ class: 'body-diode' })],
     ['a small current', steady({ output: { current: 0.3 } }), silicon({ capacitance: null })],
   ] as const)('%s', (_, at, part) => {
     const kernel = ledgerAt(kernelOf(at, part), 385)!
