@@ -13,7 +13,7 @@ export default {
   coverageAnalysis: 'perTest',
   ignoreStatic: true,
   concurrency: Number(process.env.EBBWATT_MUTATION_PROCESSES ?? 2),
-  timeoutMS: 10_000,
+  timeoutMS: 4_000,
   incremental: true,
   incrementalFile: `coverage/mutation-${folder}-known.json`,
   reporters: ['clear-text', 'json'],
