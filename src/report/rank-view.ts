@@ -1,3 +1,4 @@
+import { storesCharge } from '../domain/rectifier.ts'
 import type { CandidateResult, RankResult } from '../domain/result.ts'
 import { closingBlocks, drawsFact, listBlock, rejectedBlock, stageFacts, titleOf, withCautions } from './common-view.ts'
 import { significant } from './format.ts'
@@ -31,13 +32,21 @@ function tableNote(ranked: readonly CandidateResult[]): string {
     level === undefined
       ? ''
       : ` Low and high hold ${significant(level * 100)} % of the draws; Tj high is the 95th percentile.`
-  return `Ranked by stage loss. Total is the sum of the six loss rows; with the rest it makes the stage loss.${interval}${containedNote(ranked)}${guessNote(ranked)}`
+  return `Ranked by stage loss. Total is the sum of the six loss rows; with the rest it makes the stage loss.${interval}${containedNote(ranked)}${noEventNote(ranked)}${guessNote(ranked)}`
 }
 
 /** A 0 that says where the loss stands, not that nobody gave it. */
 function containedNote(ranked: readonly CandidateResult[]): string {
   const contained = ranked.some(({ losses_w, event }) => losses_w.capacitive === 0 && (event?.stored_c ?? 0) > 0)
   return contained ? ' Capacitive is 0 where the recovery charge (Qrr) of a part already contains it.' : ''
+}
+
+/** Why a part that stores charge recovers nothing here; that a Schottky part does not is said by its class. */
+function noEventNote(ranked: readonly CandidateResult[]): string {
+  const none = ranked.flatMap(({ id, class: kind, event }) =>
+    storesCharge(kind) && event?.none != null ? [`${id} (${event.none})`] : [],
+  )
+  return none.length > 0 ? ` No hard recovery: ${none.join('; ')}.` : ''
 }
 
 /** What the evidence grade D is for. */
