@@ -61,9 +61,14 @@ function nothingMeasurable(context: CaptureContext, ramp: FittedRamp, figures: R
     fixture: 'ramp',
     current: figures.current,
     peakReverseCurrent: peak,
-    chargeUpperBound: Math.max(0.5 * peak * time, figures.chargeByEnd.at(-1)!.charge),
+    chargeUpperBound: Math.max(0.5 * peak * time, wholeCharge(figures)),
     timeUpperBound: time,
   }
+}
+
+/** Charge of the whole tail, which stands among the ends whatever the stated one is. [C] */
+function wholeCharge({ chargeByEnd }: RampFigures): number {
+  return chargeByEnd.find(({ end }) => end === 0)!.charge
 }
 
 /** Noise by resampling, then bandwidth and end rule, as independent parts. */
@@ -98,7 +103,6 @@ function rampSpread(
     settings.chargeUntil,
   )
   const share = settings.bandwidth === null ? 1 : 0.5
-  const ends = figures.chargeByEnd.map((row) => row.charge)
   // what one step of the converter leaves open: no averaging of noise takes its unevenness away
   const step = channelQuantum(context.waveform.current) / Math.sqrt(12)
   const converter: Readonly<Record<string, number>> = {
@@ -110,7 +114,8 @@ function rampSpread(
   for (const [name, value] of Object.entries(noise)) {
     const key = name as keyof typeof noise
     const bandwidth = share * (without[key] / figures[key] - 1)
-    const end = key === 'charge' ? 0.5 * (1 - figures.charge / ends.at(-1)!) : timesEnd[key] ? figures.endDoubt : 0
+    const end =
+      key === 'charge' ? 0.5 * (1 - figures.charge / wholeCharge(figures)) : timesEnd[key] ? figures.endDoubt : 0
     const settling = key === 'slope' ? unsettled(ramp) : 0
     spread[name] = Math.hypot(value, bandwidth, end, settling, converter[key] ?? 0)
   }

@@ -23,9 +23,10 @@ function expectTruth(ramp: FittedRamp, digits: number): void {
 }
 
 describe('the fit of a commutation', () => {
-  const ramp = fitRamp(lagged(0.6), marks, { instrument: 0.6 })
+  const fitted = () => fitRamp(lagged(0.6), marks, { instrument: 0.6 })
 
   it('gives back the truth behind a stated bandwidth', () => {
+    const ramp = fitted()
     expectTruth(ramp, 1)
     expect(ramp.curve.rounding).toBe(0)
     expect(ramp.fitted.curve.rounding).toBeCloseTo(0.6, 1)
@@ -68,6 +69,7 @@ describe('the fit of a commutation', () => {
   })
 
   it('starts from a fit nearby, in one round', () => {
+    const ramp = fitted()
     const again = fitRamp(lagged(0.6), marks, { instrument: 0.6 }, ramp)
     expectTruth(again, 1)
     expect(again.curve.tailTime).toBeCloseTo(ramp.curve.tailTime, 2)
