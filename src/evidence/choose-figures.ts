@@ -25,7 +25,6 @@ export function chooseFigures(
   given: readonly FigureName[],
   expected: ExpectedPoint,
 ): ChosenFigures {
-  if (given.length === 1) return { names: given, starts: [], impossible: null }
   const all = pairPoints(reading, figures, given)
   if (Array.isArray(all)) return { names: given, starts: all, impossible: null }
   const impossible = bounds(reading, figures, all.first, all.second)
@@ -84,18 +83,15 @@ function bounds(
 ): ChosenFigures['impossible'] {
   const { peakReverseCurrent: peak, recoveryTime: time, charge } = figures
   const has = (name: FigureName) => first === name || second === name
-  const level = reading.recoveryTimeBy
-  if (level.kind === 'level' && peak !== null && has('peakReverseCurrent') && level.until >= peak) {
-    return { found: figureText('I_RM', peak, 'A'), bound: figureText('the level', level.until, 'A') }
+  const until = reading.recoveryTimeBy.kind === 'level' ? reading.recoveryTimeBy.until : 0
+  if (has('peakReverseCurrent') && until >= peak!)
+    return { found: figureText('I_RM', peak!, 'A'), bound: figureText('the level', until, 'A') }
+  // the peak is no lower than the level at which trr ends, and comes no sooner
+  const lowest = has('peakReverseCurrent') ? peak! : until
+  const shortest = lowest / reading.slope
+  if (has('charge') && !(has('recoveryTime') && time! <= shortest)) {
+    const limit = has('recoveryTime') ? reading.slope * time! ** 2 : lowest * shortest
+    return { found: figureText('Qrr', charge!, 'C'), bound: figureText('Qrr', limit / 2, 'C') }
   }
-  if (charge !== null && has('charge')) {
-    const limit = has('peakReverseCurrent') ? peak! ** 2 / (2 * reading.slope) : (reading.slope * (time ?? 0) ** 2) / 2
-    return { found: figureText('Qrr', charge, 'C'), bound: figureText('Qrr', limit, 'C') }
-  }
-  const shortest = has('peakReverseCurrent')
-    ? peak! / reading.slope
-    : level.kind === 'level'
-      ? level.until / reading.slope
-      : 0
   return { found: figureText('trr', time ?? 0, 's'), bound: figureText('trr', shortest, 's') }
 }

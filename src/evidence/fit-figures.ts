@@ -92,7 +92,6 @@ function evaluate({ reading, figures, names, errors }: FitInput, point: Recovery
 function improved(input: FitInput, at: Evaluation): Evaluation | null {
   const [stepLifetime, stepRatio] = at.step
   const length = lengthOf(at)
-  if (!(length > 0)) return null
   for (let part = 1; part > 1e-3; part *= 0.5) {
     const tried = evaluate(input, {
       lifetime: at.point.lifetime + part * stepLifetime,
@@ -121,9 +120,8 @@ function covarianceAt(names: readonly FigureName[], at: Evaluation, errors: Figu
   const determinant = uu * yy - uy * uy
   const inverse = [yy / determinant, -uy / determinant, uu / determinant] as const
   const covariance: [number, number, number, number] = [inverse[0], inverse[1], inverse[1], inverse[2]]
-  if (errors.current > 0)
-    addCommon(covariance, inverse, names, at.logs, errors, (log) => log.byCurrent * errors.current)
-  if (errors.slope > 0) addCommon(covariance, inverse, names, at.logs, errors, (log) => log.bySlope * errors.slope)
+  addCommon(covariance, inverse, names, at.logs, errors, (log) => log.byCurrent * errors.current)
+  addCommon(covariance, inverse, names, at.logs, errors, (log) => log.bySlope * errors.slope)
   return covariance
 }
 

@@ -13,7 +13,7 @@ export interface RecoveryPoint {
  * Lifetime and tail time from two figures of one row.
  *
  * The pair gives ta and tau_rr in closed form (by search for an absolute level); tau is then the unique root of
- * ta = (tau − tau_rr)(1 − exp(−(I/a + ta)/tau)). Null for an impossible pair.
+ * ta = (tau − tau_rr)(1 − exp(−(I/a + ta)/tau)). Null for an impossible pair: its times have no logarithms.
  */
 export function invertPair(
   reading: RampReading,
@@ -22,23 +22,22 @@ export function invertPair(
   second: FigureName,
 ): RecoveryPoint | null {
   const time = peakTime(reading, figures, first, second)
-  if (time === null || !(time > 0)) return null
   const tail = tailOf(reading, figures, first, second, time)
-  if (!(tail > 0) || !Number.isFinite(tail)) return null
   const lifetime = lifetimeOf(reading.current / reading.slope, time, tail)
   const point = { lifetime: Math.log(lifetime), ratio: Math.log((lifetime - tail) / tail) }
   return Number.isFinite(point.lifetime) && Number.isFinite(point.ratio) ? point : null
 }
 
-/** ta from a pair; null where none exists. */
-function peakTime(reading: RampReading, figures: RampFigures, first: FigureName, second: FigureName): number | null {
+/** ta from a pair; not a number where none exists. */
+function peakTime(reading: RampReading, figures: RampFigures, first: FigureName, second: FigureName): number {
   const { peakReverseCurrent, recoveryTime, charge, softness } = figures
   const has = (name: FigureName) => first === name || second === name
   if (has('peakReverseCurrent')) return peakReverseCurrent! / reading.slope
-  if (has('recoveryTime') && has('softness') && reading.softnessBy === 'times') return recoveryTime! / (1 + softness!)
-  const area = charge === null ? 0 : charge / reading.slope
-  if (reading.recoveryTimeBy.kind === 'level')
-    return searchPeakTime(reading, figures, has('charge') ? 'charge' : 'recoveryTime', has('softness'))
+  if (reading.recoveryTimeBy.kind === 'level') {
+    const least = reading.recoveryTimeBy.until / reading.slope
+    return searchPeakTime(reading, figures, least, { charge: has('charge'), softness: has('softness') })
+  }
+  const area = (charge ?? 0) / reading.slope
   const factor = factorOf(reading, 1)
   if (has('softness')) {
     const tailShare = softness! / (reading.softnessBy === 'slopes' ? 1 : factor)
@@ -47,8 +46,7 @@ function peakTime(reading: RampReading, figures: RampFigures, first: FigureName,
   // ta (ta/2 + (trr − ta)/k) = Qrr/a: the root that stays finite where the square term vanishes (k = 2)
   const square = 0.5 - 1 / factor
   const straight = recoveryTime! / factor
-  const discriminant = straight * straight + 4 * square * area
-  return discriminant < 0 ? null : (2 * area) / (straight + Math.sqrt(discriminant))
+  return (2 * area) / (straight + Math.sqrt(straight * straight + 4 * square * area))
 }
 
 /** tau_rr that goes with ta. */
@@ -70,26 +68,27 @@ function tailBy(reading: RampReading, figures: RampFigures, name: FigureName, ti
   return (figures.softness! * time) / (reading.softnessBy === 'slopes' ? 1 : factorOf(reading, time))
 }
 
-/** ta where trr ends at an absolute level: the factor depends on the peak, so the longest fitting ta is searched for. */
+/**
+ * ta where trr ends at an absolute level, which the current reaches at `least`: the factor depends on the peak, so the
+ * longest fitting ta is searched for.
+ */
 function searchPeakTime(
   reading: RampReading,
   figures: RampFigures,
-  target: 'charge' | 'recoveryTime',
-  soft: boolean,
-): number | null {
-  const least = reading.recoveryTimeBy.kind === 'level' ? reading.recoveryTimeBy.until / reading.slope : 0
+  least: number,
+  has: { readonly charge: boolean; readonly softness: boolean },
+): number {
   const longest = figures.recoveryTime ?? Math.sqrt((2 * figures.charge!) / reading.slope)
   const surplus = (time: number) => {
-    const tail = tailBy(reading, figures, soft ? 'softness' : 'recoveryTime', time)
-    if (target === 'charge') return reading.slope * time * (0.5 * time + tail) - figures.charge!
+    const tail = tailBy(reading, figures, has.softness ? 'softness' : 'recoveryTime', time)
+    if (has.charge) return reading.slope * time * (0.5 * time + tail) - figures.charge!
     return time + factorOf(reading, time) * tail - figures.recoveryTime!
   }
-  if (!(least < longest)) return null
-  return lastCrossing(surplus, least, longest)
+  return least < longest ? lastCrossing(surplus, least, longest) : Number.NaN
 }
 
-/** The highest zero at which a function rises through 0, on a logarithmic grid refined by halving. */
-function lastCrossing(surplus: (time: number) => number, least: number, longest: number): number | null {
+/** The highest zero at which a function rises through 0, if any, on a logarithmic grid refined by halving. */
+function lastCrossing(surplus: (time: number) => number, least: number, longest: number): number {
   const steps = 96
   const at = (index: number) => longest * ((Math.max(least, longest * 1e-9) * (1 + 1e-9)) / longest) ** (index / steps)
   for (let index = 0; index < steps; index++) {
@@ -103,7 +102,7 @@ function lastCrossing(surplus: (time: number) => number, least: number, longest:
     }
     return 0.5 * (low + high)
   }
-  return null
+  return Number.NaN
 }
 
 /**

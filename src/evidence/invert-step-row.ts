@@ -64,13 +64,7 @@ export function invertStepRow(row: StepRow, context: RowContext): RowReading | U
 /** u and y from storage and recovery time together; null where one is missing or they do not fit each other. */
 function pointFromBoth(row: StepRow): RecoveryPoint | null {
   const { storageTime, recoveryTime, until } = row
-  if (
-    storageTime === null ||
-    recoveryTime === null ||
-    until === null ||
-    !(until > 0 && storageTime > 0 && row.reverse > 0)
-  )
-    return null
+  if (storageTime === null || recoveryTime === null || until === null) return null
   const found = lifetimeFromStep({
     storageTime,
     recoveryTime,

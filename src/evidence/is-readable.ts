@@ -22,7 +22,7 @@ export function isReadable(row: RecoveryRow, ratedCurrent: number): boolean {
     inside(level, currents) &&
     inside(row.charge, charges) &&
     inside(row.peakReverseCurrent, currents) &&
-    (row.softness === null || row.softness <= largestSoftness)
+    (row.softness ?? 0) <= largestSoftness
   )
 }
 

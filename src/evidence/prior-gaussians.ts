@@ -92,7 +92,7 @@ function independent(coefficients: readonly Spread[]): Gaussian {
 
 /** Sum of d d' over independent directions of one standard deviation each. */
 export function fromDirections(directions: readonly (readonly number[])[]): Float64Array {
-  const n = directions[0]?.length ?? 0
+  const n = directions[0]!.length
   const covariance = new Float64Array(n * n)
   for (const d of directions) {
     for (let i = 0; i < n; i++)

@@ -102,9 +102,12 @@ function forwardOrigin({ record, rectifier, condition, forwardCurrent }: Provena
   }
   if (rectifier.forward.origin === 'class-guess') return plain([guess(figure)])
   const at = { current: forwardCurrent, slope: 1, junction: condition.junction }
-  const places = record.forward
-    .filter((row) => row.drop > 0)
-    .map((row) => ({ row, current: row.current, slope: 1, junction: row.junction ?? referenceTemperature }))
+  const places = record.forward.map((row) => ({
+    row,
+    current: row.current,
+    slope: 1,
+    junction: row.junction ?? referenceTemperature,
+  }))
   const { drop } = forwardDropAt({ rectifier, current: forwardCurrent, junction: condition.junction })
   return fromRows(record, figure, 'Forward voltage', at, places, (row) => ratio(drop, row.drop))
 }
@@ -113,18 +116,21 @@ function leakageOrigin({ record, rectifier, condition, blockingVoltage }: Proven
   const figure = 'losses_w.leakage'
   const leakage = leakageCurrentAt({ rectifier, voltage: blockingVoltage, junction: condition.junction })
   if (leakage === null) return nothing
-  if (rectifier.leakage?.origin === 'class-guess') return plain([guess(figure)])
+  if (rectifier.leakage!.origin === 'class-guess') return plain([guess(figure)])
   const at = { current: blockingVoltage, slope: 1, junction: condition.junction }
-  const places = record.leakage
-    .filter((row) => row.current > 0 && row.voltage > 0)
-    .map((row) => ({ row, current: row.voltage, slope: 1, junction: row.junction ?? referenceTemperature }))
+  const places = record.leakage.map((row) => ({
+    row,
+    current: row.voltage,
+    slope: 1,
+    junction: row.junction ?? referenceTemperature,
+  }))
   return fromRows(record, figure, 'Leakage', at, places, (row) => ratio(leakage.current, row.current))
 }
 
 function capacitiveOrigin({ record, rectifier }: ProvenanceInput): Origins {
   const figure = 'losses_w.capacitive'
   if (rectifier.capacitance === null) return rectifier.storesCharge ? nothing : plain([guess(figure)])
-  const how = record.capacitance?.kind === 'law' ? 'given' : 'converted'
+  const how = record.capacitance!.kind === 'law' ? 'given' : 'converted'
   return plain([{ figure, how, from: 'capacitance', factor: null }])
 }
 

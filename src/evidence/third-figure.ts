@@ -29,7 +29,6 @@ const chargeFrom: readonly (readonly [FigureName, FigureName])[] = [
 
 /** Largest relative difference between a third figure and what two others give; 0 where there is no third. */
 export function disagreement(reading: RampReading, figures: RampFigures, names: readonly FigureName[]): number {
-  if (names.length < 3) return 0
   const pair =
     names.includes('charge') && chargeFrom.find(([first, second]) => names.includes(first) && names.includes(second))
   const charge = pair ? missBy(reading, figures, pair, 'charge') : 0

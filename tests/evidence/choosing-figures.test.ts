@@ -1,7 +1,7 @@
 import { describe, expect, it } from 'vitest'
 import type { RecoveryTimeDefinition } from '../../src/domain/rectifier.ts'
 import { chooseFigures } from '../../src/evidence/choose-figures.ts'
-import type { RampFigures } from '../../src/evidence/invert-pair.ts'
+import { invertPair, type RampFigures, type RecoveryPoint } from '../../src/evidence/invert-pair.ts'
 import type { FigureName, RampReading } from '../../src/evidence/recovery-figures.ts'
 import { chargeIsComputed, disagreement } from '../../src/evidence/third-figure.ts'
 import { lumpedFigures } from './lumped.ts'
@@ -76,8 +76,35 @@ describe('the figures of a row that are used', () => {
     expect(chooseFigures(at, pulled, statedIn(pulled), other).names).toEqual(['charge', 'peakReverseCurrent'])
   })
 
+  it('are the largest possible set with a pair nearest to the class, whatever is misread', () => {
+    const possible = (figures: RampFigures, names: readonly FigureName[]) => {
+      const pairs = names.flatMap((first, index) => names.slice(index + 1).map((second) => [first, second] as const))
+      const points = pairs.map(([first, second]) => invertPair(at, figures, first, second))
+      return points.every((point) => point !== null) ? points : []
+    }
+    const away = (point: RecoveryPoint) =>
+      Math.hypot((point.lifetime - expected.lifetime) / 0.45, (point.ratio - expected.ratio) / 0.5)
+    const sets = Array.from({ length: 16 }, (_, mask) => order.filter((__, bit) => (mask >> bit) & 1))
+    let chosenFew = 0
+    for (let trial = 0; trial < 400; trial++) {
+      const factors = order.map((_, bit) => Math.exp(1.2 * Math.sin(1 + trial * (bit + 1) * Math.SQRT2)))
+      const figures = Object.fromEntries(order.map((name, bit) => [name, whole[name]! * factors[bit]!])) as RampFigures
+      const candidates = sets
+        .map((names) => ({ names, points: possible(figures, names) }))
+        .filter(({ points }) => points.length > 0)
+      const most = Math.max(...candidates.map(({ names }) => names.length))
+      const nearest = candidates
+        .filter(({ names }) => names.length === most)
+        .map(({ names, points }) => ({ names, away: Math.min(...points.map((point) => away(point!))) }))
+        .toSorted((one, other) => one.away - other.away)[0]!
+      expect(chooseFigures(at, figures, order, expected).names).toEqual(nearest.names)
+      if (most < 4) chosenFew += 1
+    }
+    expect(chosenFew).toBeGreaterThan(50)
+  })
+
   it('are charge, else peak, else trr where no pair is possible', () => {
-    expect(choose({ ...none, recoveryTime: 20e-9, charge: 50e-9 }).names).toEqual(['charge'])
+    expect(choose({ ...none, recoveryTime: 20e-9, charge: 50e-9 })).toMatchObject({ names: ['charge'], starts: [] })
     expect(choose({ ...none, recoveryTime: 20e-9, peakReverseCurrent: 5 }).names).toEqual(['peakReverseCurrent'])
     const short = ending({ kind: 'level', until: 5 })
     expect(choose({ ...none, recoveryTime: 40e-9, softness: 1 }, short).names).toEqual(['recoveryTime'])
@@ -115,6 +142,27 @@ describe('an impossible pair', () => {
     })
   })
 
+  it('has Qrr against the least charge of a peak at that level where trr is not stated', () => {
+    const high = ending({ kind: 'level', until: 3 })
+    expect(why({ charge: 20e-9, softness: 1 }, high)).toEqual({ found: 'Qrr 20 nC', bound: 'Qrr 45 nC' })
+  })
+
+  it('has trr against the time to that level before Qrr against trr', () => {
+    const high = ending({ kind: 'level', until: 3 })
+    const told = { found: 'trr 20 ns', bound: 'trr 30 ns' }
+    expect(why({ recoveryTime: 20e-9, charge: 50e-9 }, high)).toEqual(told)
+    expect(why({ recoveryTime: 20e-9, charge: 50e-9, peakReverseCurrent: 2 }, high)).toEqual(told)
+    expect(why({ recoveryTime: 31e-9, charge: 20e-9 }, high)!.found).toBe('Qrr 20 nC')
+  })
+
+  it('does not concern a figure beside it', () => {
+    // trr and Qrr suit each other, trr and I_RM do not
+    expect(why({ recoveryTime: 40e-9, charge: 50e-9, peakReverseCurrent: 10 })).toEqual({
+      found: 'trr 40 ns',
+      bound: 'trr 100 ns',
+    })
+  })
+
   it('is the first of the row, in the order trr, Qrr, I_RM, softness', () => {
     expect(why({ recoveryTime: 20e-9, charge: 50e-9, peakReverseCurrent: 5 })!.bound).toBe('Qrr 20 nC')
   })
@@ -148,8 +196,13 @@ describe('a charge', () => {
 })
 
 describe('a third figure', () => {
+  /** Of a row that states these figures and no other. */
   const off = (names: readonly FigureName[], figures: Partial<RampFigures>) =>
-    disagreement(at, { ...whole, ...figures }, names)
+    disagreement(
+      at,
+      { ...none, ...Object.fromEntries(names.map((name) => [name, figures[name] ?? whole[name]])) },
+      names,
+    )
 
   it('misses by its share of what two others give', () => {
     expect(off(['recoveryTime', 'charge', 'peakReverseCurrent'], { charge: made.charge * 1.2 })).toBeCloseTo(0.2, 7)

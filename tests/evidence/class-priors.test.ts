@@ -5,7 +5,7 @@ import { calibrate } from '../../src/evidence/calibrate.ts'
 import { classPriors } from '../../src/evidence/class-priors.ts'
 import { forwardDesign } from '../../src/evidence/design-rows.ts'
 import { priorGaussians } from '../../src/evidence/prior-gaussians.ts'
-import { forwardDropAt, leakageCurrentAt } from '../../src/evidence/recovery-at.ts'
+import { forwardDropAt, leakageCurrentAt, recoveryAt } from '../../src/evidence/recovery-at.ts'
 import { steadyFiguresAt } from '../../src/evidence/steady-figures.ts'
 import { kelvin, record } from './records.ts'
 
@@ -88,6 +88,9 @@ describe('a class without any row', () => {
     for (const name of ['schottky', 'sic-schottky'] as const) {
       expect(ofClass(name).recovery).toBeNull()
       expect(ofClass(name).maximumRecoveryShift).toBeNull()
+      const condition = { current: 8, slope: 100e6, junction: kelvin(25) }
+      expect(recoveryAt({ rectifier: ofClass(name), ...condition })).toBeNull()
+      expect(steadyFiguresAt(ofClass(name), condition)).toBeNull()
     }
     expect(ofClass('body-diode').leakage).toBeNull()
   })

@@ -53,6 +53,7 @@ describe('a hot recovery row held against a cold one', () => {
   it('is not told where either does not state its temperature', () => {
     expect(recovery({ ...cold, junction: null }, hot)).toEqual([])
     expect(recovery(cold, { ...hot, junction: null })).toEqual([])
+    expect(recovery(hot, { ...cold, junction: null })).toEqual([])
   })
 
   it('goes by trr, then I_RM, where one of them has no charge', () => {
@@ -69,6 +70,7 @@ describe('a hot recovery row held against a cold one', () => {
     expect(recovery(time, { ...bare, recoveryTime: 61e-9, peakReverseCurrent: 1.9 })).toEqual(heat)
     expect(recovery({ ...time, charge: null }, { ...hot, recoveryTime: 59e-9 })).toEqual(heat)
     expect(recovery(time, { ...bare, recoveryTime: 60e-9, peakReverseCurrent: 2 })).toEqual([])
+    expect(recovery(time, { ...bare, softness: 1 })).toEqual([])
     expect(recovery({ ...cold, softness: 1 }, { ...bare, recoveryTime: 10e-9, softness: 1 })).toEqual([])
   })
 
@@ -131,6 +133,11 @@ describe('a maximum held against a typical row', () => {
     expect(recovery({ ...typical, grade: 'measured' }, { charge: 80e-9 })).toEqual([])
     expect(recovery({ ...maximum, ...typical }, low)).toEqual([])
     expect(recovery(typical, { ...low, slope: 200e6 })).toEqual([])
+  })
+
+  it('is not held against a figure that it does not state', () => {
+    expect(recovery({ ...maximum, recoveryTime: 50e-9 }, { charge: 90e-9, recoveryTime: 40e-9 })).toEqual([])
+    expect(recovery({ charge: 90e-9, recoveryTime: 40e-9 }, { ...maximum, recoveryTime: 50e-9 })).toEqual([])
   })
 
   it('has trr compared only where it ends the same way', () => {

@@ -62,6 +62,15 @@ describe('the evidence grade of a part with stored charge', () => {
       expect(among(at)).toBe('C')
   })
 
+  it('is not B by rows that do not state where they stand, nor lost by them', () => {
+    const rows = [rampRow({ charge: 50e-9 }), rampRow({ charge: 50e-9 })] as const
+    expect(grade({ recovery: rows })).toBe('B')
+    expect(grade({ recovery: [rows[0], { ...rows[1], slope: null }] }, { slope: 50e6 })).toBe('C')
+    expect(grade({ recovery: [rows[0], { ...rows[1], current: null }] }, { current: 4 })).toBe('C')
+    const unplaced = [stepRow({ recoveryTime: 30e-9 }), rampRow({ charge: 50e-9, slope: null })]
+    expect(grade({ recovery: [...rows, ...unplaced] })).toBe('B')
+  })
+
   it('is C with one row at the point itself that is not measured', () => {
     expect(grade({ recovery: [rampRow({ charge: 50e-9 })] })).toBe('C')
   })
@@ -97,6 +106,8 @@ describe('the evidence grade of a Schottky part', () => {
       grade({ ...whole, forward: [forwardRow({ grade: 'measured' })] }, { current: 100, junction: kelvin(celsius) })
     expect([50, 0, 50 + 5e-10, 50.1, -0.1].map(at)).toEqual(['A', 'A', 'A', 'C', 'C'])
     expect(grade({ ...whole, forward: [forwardRow({ grade: 'measured', junction: null })] })).toBe('A')
+    const hot = forwardRow({ junction: kelvin(125) })
+    expect(grade({ ...whole, forward: [hot, forwardRow({ grade: 'measured' })] })).toBe('A')
   })
 
   it('is B between two forward rows in temperature, ends included', () => {

@@ -35,9 +35,15 @@ describe('a fit through three or four figures', () => {
 
   it.each(cases)('with %s lies where the misfit is flat, from any start', (_, factors, used) => {
     const figures = misread(factors)
-    const found = [made, { lifetime: made.lifetime + 1, ratio: 0 }, { lifetime: made.lifetime - 1, ratio: 2 }].map(
-      (start) => fitted(figures, used, start),
-    )
+    const found = [
+      [0, 0],
+      [1, -0.7],
+      [-1, 1.3],
+      [4, -3],
+      [-4, 3],
+      [3, 3],
+      [-3, -4],
+    ].map(([u, y]) => fitted(figures, used, { lifetime: made.lifetime + u!, ratio: made.ratio + y! }))
     const { point, misfit } = found[0]!
     for (const other of found) {
       expect(other.point.lifetime).toBeCloseTo(point.lifetime, 9)

@@ -131,4 +131,17 @@ describe('forward rows', () => {
       expect(drop(fields).deviation).toBeCloseTo(1 / Math.sqrt(precision), 12)
     }
   })
+
+  it('at another current pull what the class says there: less by 0.045 V per e-fold, and its resistive share', () => {
+    const row = forwardRow({ current: 0.8, drop: 1.1 })
+    const { rectifier } = calibrate({ record: record({ forward: [row] }), blockingVoltage: 400 })
+    const mean = 0.7 * 1.35 - 0.045 * Math.LN10 + 0.03 * 1.35
+    // level, ln term and share: what one deviation of each does at a tenth of I0
+    const deviation = Math.hypot(0.73 * 0.3, 0.02 * Math.LN10, 0.9 * 1.35 * 0.15)
+    const precision = deviation ** -2 + 0.022 ** -2
+    const found = forwardDropAt({ rectifier, current: 0.8, junction: kelvin(25) })
+    expect(found.drop).toBeCloseTo((mean * deviation ** -2 + 1.1 * 0.022 ** -2) / precision, 12)
+    expect(found.deviation).toBeCloseTo(precision ** -0.5, 12)
+    expect(rectifier.forward).toMatchObject({ line: false, origin: 'given', unitSpread: 0.03 })
+  })
 })

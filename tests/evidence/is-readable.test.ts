@@ -58,6 +58,11 @@ describe('the reading of a recovery row', () => {
     const part = calibrated(rampRow({ charge: 1e4 }))
     expect(part.dataOf('row-impossible')).toEqual({ row: 'recovery row 1' })
     expect(part.codes).not.toContain('row-junction-assumed')
+    for (const fields of [{ current: 1e-10 }, { slope: 1e19 }, { peakReverseCurrent: 1e8 }]) {
+      const { rectifier, dataOf } = calibrated(rampRow({ charge: 50e-9, ...fields }))
+      expect(dataOf('row-impossible')).toEqual({ row: 'recovery row 1' })
+      expect(rectifier.recovery!.origin).toBe('class-guess')
+    }
   })
 
   it('without temperature tells so, unless nothing could be read', () => {
@@ -72,6 +77,7 @@ describe('the reading of a recovery row', () => {
     const part = calibrated(rampRow({ junction: null, current: null }))
     expect(part.codes).toEqual(['recovery-guess', 'forward-guess', 'leakage-assumed'])
     const beside = calibrated(rampRow(), rampRow({ charge: 50e-9 }))
+    expect(beside.rectifier.recovery!.origin).toBe('given')
     expect(beside.rectifier).toEqual(calibrated(rampRow({ charge: 50e-9 })).rectifier)
   })
 })

@@ -63,6 +63,17 @@ describe('the shift to a guaranteed maximum', () => {
     }
   })
 
+  it('is that of the higher peak where lifetimes are about the same', () => {
+    const rowOf = (u: number, y: number) => {
+      const { charge, peakReverseCurrent } = lumpedFigures({ current: 8, slope: 100e6, junction: 298 }, u, y)
+      return { charge, peakReverseCurrent }
+    }
+    const [abrupt, soft] = [rowOf(Math.log(60e-9), 1.6), rowOf(Math.log(60e-9) + 0.02, 0.4)]
+    expect(abrupt.charge).toBeGreaterThan(1.02 * soft.charge)
+    const part = calibrated(typical, maximum(abrupt), maximum(soft))
+    expect(guaranteed(part, 8, 100e6).charge).toBeCloseTo(abrupt.charge, 15)
+  })
+
   it('is not asked for by a row of another grade, however large', () => {
     const part = calibrated(
       rampRow({ recoveryTime: 300e-9, charge: 2e-6 }),

@@ -189,6 +189,7 @@ describe('one more measured row', () => {
     }
     expect(after.unitSpread).toBe(0.1)
     expect(after.posterior.mean).toEqual(rectifier.recovery!.posterior.mean)
+    expect(after.posterior.mean).not.toBe(rectifier.recovery!.posterior.mean)
   })
 
   it('of forward voltage and leakage too', () => {

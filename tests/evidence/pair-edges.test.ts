@@ -42,14 +42,23 @@ describe('a pair of figures', () => {
   })
 
   it('is read by itself, whatever else the row states', () => {
-    const reading = at({ kind: 'line-90-25' })
-    const figures = figuresOf(reading, u, y)
-    for (const [first, second] of pairs) {
-      const alone = { ...none, [first]: figures[first], [second]: figures[second] }
-      const beside = Object.fromEntries(names.map((name) => [name, alone[name] ?? figures[name]! * 3])) as RampFigures
-      const point = invertPair(reading, alone, first, second)
-      expect(point!.lifetime).toBeCloseTo(u, 7)
-      expect(invertPair(reading, beside, first, second)).toEqual(point)
+    const level = { kind: 'level', until: 0.5 } as const
+    for (const reading of [
+      at({ kind: 'line-90-25' }),
+      at(level),
+      at(level, 'slopes'),
+      at({ kind: 'level-10' }, 'slopes'),
+    ]) {
+      const figures = figuresOf(reading, u, y)
+      for (const [first, second] of pairs) {
+        const alone = { ...none, [first]: figures[first], [second]: figures[second] }
+        const beside = Object.fromEntries(names.map((name) => [name, alone[name] ?? figures[name]! * 3])) as RampFigures
+        const point = invertPair(reading, alone, first, second)
+        expect(point!.lifetime).toBeCloseTo(u, 7)
+        expect(point!.ratio).toBeCloseTo(y, 7)
+        expect(invertPair(reading, alone, second, first)).toEqual(point)
+        expect(invertPair(reading, beside, first, second)).toEqual(point)
+      }
     }
   })
 
@@ -116,6 +125,8 @@ describe('an impossible pair', () => {
     const level = at({ kind: 'level', until: 3 })
     const charge = (value: number) =>
       invertPair(level, { ...none, charge: value, recoveryTime: 20e-9 }, 'recoveryTime', 'charge')
+    // below a tr²/2 = 40 nC no earlier peak would do, and above it only one hardly over the level, which no sheet means
+    expect(charge(60e-9)).toBeNull()
     // the peak cannot come before 15 ns: at 20 ns it leaves no tail and 40 nC, and any earlier one more
     expect([10e-9, 22.4e-9, 39.9e-9].map(charge)).toEqual([null, null, null])
     expect(invertPair(level, { ...none, recoveryTime: 15e-9, softness: 1 }, 'recoveryTime', 'softness')).toBeNull()

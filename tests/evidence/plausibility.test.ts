@@ -1,12 +1,11 @@
 import { describe, expect, it } from 'vitest'
 import type { RampRow, RectifierClass, RectifierRecord } from '../../src/domain/rectifier.ts'
-import { calibrate } from '../../src/evidence/calibrate.ts'
+import { caveatsOf } from './caveats.ts'
 import { lumpedFigures } from './lumped.ts'
-import { forwardRow, kelvin, leakageRow, place, rampRow, record, stepRow } from './records.ts'
+import { forwardRow, kelvin, leakageRow, place, rampRow, stepRow } from './records.ts'
 
 function caveats(code: string, fields: Partial<RectifierRecord>) {
-  const found = calibrate({ record: record(fields), blockingVoltage: 400 }).caveats
-  return found
+  return caveatsOf(fields)
     .filter((caveat) => caveat.code === code)
     .map(({ candidate, data }): Record<string, unknown> => ({ candidate, ...data }))
 }
@@ -90,6 +89,10 @@ describe('a rated reverse voltage', () => {
     expect(told('schottky', 251)).toEqual(['251 V, 10 to 250 V'])
     expect(told('sic-schottky', 250)).toEqual(['250 V, 300 to 3500 V'])
     expect(told('ultrafast', 5000)).toEqual([])
+    expect(implausible({ class: 'schottky', ratings: rated(9) })[0]).toMatchObject({
+      property: 'The rated reverse voltage',
+      row: '',
+    })
   })
 })
 
@@ -114,6 +117,13 @@ describe('a forward voltage', () => {
       { ...forward, value: '2.44 V', expected: '0.81 to 2.11 V', condition: '8 A, 25 °C' },
     ])
     expect(implausible({ forward: row(0.48) })).toHaveLength(1)
+  })
+
+  it('below the rated current is expected to fall with its logarithm', () => {
+    // at a tenth of 8 A: 0.945 − 0.045 ln 10 + 0.0405 V; level, ln term and share give ± 0.2886 V
+    const row = (drop: number) => implausible({ forward: [forwardRow({ current: 0.8, drop })] })
+    expect(row(1.74)).toEqual([])
+    expect(row(1.76)).toEqual([{ ...forward, value: '1.76 V', expected: '0.305 to 1.46 V', condition: '0.8 A, 25 °C' }])
   })
 
   it('is expected to be no less than 0 V', () => {

@@ -73,6 +73,7 @@ describe('the origin of recovery', () => {
     expect(from({}, { current: 10.4, slope: 130e6 }, { junction: kelvin(58) })).toBe('row 1')
     expect(from({}, { current: 8 }, { slope: 100e6 })).toBe('row 1')
     expect(from({ current: 16 }, { current: 8 }, { current: 30 })).toBe('row 2')
+    expect(from({}, { slope: 60e6 }, { slope: 125e6 })).toBe('row 2')
   })
 
   it('has the factor to what the row states, else to what the fit gives at the row', () => {
@@ -141,6 +142,9 @@ describe('the origin of forward voltage', () => {
       from: 'forward row 1',
       factor: expect.closeTo(drop / 1.4, 12),
     })
+    expect(part.caveats).toEqual([])
+    const twice = [forwardRow(), forwardRow({ place: place('again') })]
+    expect(v({ forward: twice }).from).toBe('forward row 1')
     expect(v({ forward }, { forwardCurrent: 15 })).toMatchObject({ how: 'converted', from: 'at 16 A' })
     expect(v({ forward }, { forwardCurrent: 25 }).how).toBe('extrapolated')
     expect(v({ forward }, at({ junction: kelvin(28) })).how).toBe('converted')

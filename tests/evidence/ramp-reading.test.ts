@@ -1,5 +1,6 @@
 import { describe, expect, it } from 'vitest'
 import type { RampRow } from '../../src/domain/rectifier.ts'
+import { fitFigures } from '../../src/evidence/fit-figures.ts'
 import { invertRampRow } from '../../src/evidence/invert-ramp-row.ts'
 import { priorGaussians } from '../../src/evidence/prior-gaussians.ts'
 import type { RowReading } from '../../src/evidence/row-reading.ts'
@@ -84,10 +85,28 @@ describe('figures that contradict each other', () => {
     const [doubted, agreed] = [threeOff(1.3), threeOff(1)]
     const factor = doubted[0]! / agreed[0]!
     expect(factor).toBeGreaterThan(3)
-    expect(doubted[1]! / agreed[1]!).toBeCloseTo(factor, 0)
+    for (const index of [1, 3]) expect(Math.abs(doubted[index]! / agreed[index]! / factor - 1)).toBeLessThan(0.1)
+    expect(doubted[2]).toBe(doubted[1])
     const small = { spread: 0.5 }
     // with an error of half a figure 30 % is no misfit at all: the doubt is that of the reading alone
     expect(threeOff(1.3, small)[0]! / threeOff(1, small)[0]!).toBeLessThan(1.3)
+  })
+
+  it('count their misfit by the figures that are more than two', () => {
+    const softness = (2 * made.recoveryTime * 100e6) / made.peakReverseCurrent - 2
+    const figures = { ...made, softness }
+    const row = read(figures)
+    const names = ['recoveryTime', 'charge', 'peakReverseCurrent', 'softness'] as const
+    const errors = { recoveryTime: 0.05, charge: 0.05, peakReverseCurrent: 0.05, softness: 0.05 }
+    const fitted = fitFigures({
+      reading: { current: 8, slope: 100e6, recoveryTimeBy: { kind: 'line-90-25' }, softnessBy: 'times' },
+      figures,
+      names,
+      errors: { figures: errors, current: 0, slope: 0 },
+      start: point,
+    })
+    for (const [index, value] of fitted.covariance.entries())
+      expect(row.observation.noise[index]! / ((value * fitted.misfit) / 2)).toBeCloseTo(1, 8)
   })
 
   it('do not multiply the doubt that the voltage puts on y', () => {

@@ -1,12 +1,14 @@
 import { describe, expect, it } from 'vitest'
 import type { RectifierRecord } from '../../src/domain/rectifier.ts'
 import { calibrate } from '../../src/evidence/calibrate.ts'
+import { caveatsOf } from './caveats.ts'
 import { lumpedFigures } from './lumped.ts'
 import { forwardRow, kelvin, leakageRow, place, rampRow, record, stepRow } from './records.ts'
 
 function dataOf(code: string, fields: Partial<RectifierRecord>) {
-  const found = calibrate({ record: record(fields), blockingVoltage: 400 }).caveats
-  return found.filter((caveat) => caveat.code === code).map(({ data }) => data)
+  return caveatsOf(fields)
+    .filter((caveat) => caveat.code === code)
+    .map(({ data }) => data)
 }
 
 const line = {
@@ -118,8 +120,7 @@ describe('the grades of what a record states', () => {
 })
 
 describe('what a record does not say', () => {
-  const codes = (fields: Partial<RectifierRecord>) =>
-    calibrate({ record: record(fields), blockingVoltage: 400 }).caveats.map(({ code }) => code)
+  const codes = (fields: Partial<RectifierRecord>) => caveatsOf(fields).map(({ code }) => code)
 
   it('is told property by property', () => {
     expect(codes({})).toEqual(['recovery-guess', 'forward-guess', 'leakage-assumed'])
@@ -130,6 +131,17 @@ describe('what a record does not say', () => {
       'leakage-assumed',
       'capacitance-missing',
     ])
+    const capacitance = { kind: 'charge', charge: 1e-9, voltage: 50 } as const
+    expect(codes({ class: 'sic-schottky', ratings, capacitance })).toEqual(['forward-guess', 'leakage-assumed'])
+  })
+
+  it('is everything of a record without rows, and leakage rows of a body diode are not read', () => {
+    const { read, rectifier } = calibrate({
+      record: record({ class: 'body-diode', leakage: [leakageRow()] }),
+      blockingVoltage: 400,
+    })
+    expect(read.leakage).toEqual([])
+    expect([rectifier.recovery!.origin, rectifier.forward.origin]).toEqual(['class-guess', 'class-guess'])
   })
 
   it('is softness where no recovery row tells it', () => {
@@ -138,5 +150,7 @@ describe('what a record does not say', () => {
     expect(codes({ ...rest, recovery: [rampRow({ charge: 50e-9, grade })] })).toEqual(['softness-unknown'])
     const both = lumpedFigures({ current: 8, slope: 100e6, junction: kelvin(25) }, Math.log(35e-9), 1)
     expect(codes({ ...rest, recovery: [rampRow({ ...both, charge: null, grade })] })).toEqual([])
+    const alone = rampRow({ charge: both.charge, grade })
+    expect(codes({ ...rest, recovery: [alone, rampRow({ ...both, charge: null, grade })] })).toEqual([])
   })
 })

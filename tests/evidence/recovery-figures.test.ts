@@ -38,6 +38,8 @@ describe('recovery figures of the charge model', () => {
   it.each([
     ['line-90-25', reading()],
     ['an absolute level', reading({ recoveryTimeBy: { kind: 'level', until: 0.3 } })],
+    ['a level hardly below the peak', reading({ recoveryTimeBy: { kind: 'level', until: 4.568 } })],
+    ['a level above the peak', reading({ recoveryTimeBy: { kind: 'level', until: 9 } })],
     ['slopes', reading({ softnessBy: 'slopes', recoveryTimeBy: { kind: 'level-10' } })],
   ] as const)('have derivatives that agree with differences (%s)', (_, at) => {
     const u = Math.log(45e-9)

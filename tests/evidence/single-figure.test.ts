@@ -32,6 +32,16 @@ describe('a lifetime that gives one figure', () => {
     expect(lifetimeGiving(at, 'peakReverseCurrent', ceiling + 0.01, expected)).toBeNull()
   })
 
+  it('is found however close below that ceiling, where rounding hides the last digits of the lifetime', () => {
+    for (const below of [1e-5, 1e-6, 1e-7, 2e-8]) {
+      const target = Math.log(8 * Math.E) - below
+      const { figure, point } = lifetimeGiving(at, 'peakReverseCurrent', target, expected)!
+      expect(figure.value).toBeCloseTo(target, 13)
+      // for tau far above I/a the peak misses I e^y by its share (I/a) (1 + e^y)²/(2 tau)
+      expect((Math.exp(point.lifetime) * below) / (4e-8 * (1 + Math.E) ** 2)).toBeCloseTo(1, 4)
+    }
+  })
+
   it('does not exist beyond 0.1 fs and 50 s', () => {
     for (const [lifetime, target] of [
       [Math.log(1e-16), -1],

@@ -4,6 +4,7 @@ import type { StepRow } from '../../src/domain/rectifier.ts'
 import { invertStepRow } from '../../src/evidence/invert-step-row.ts'
 import { priorGaussians } from '../../src/evidence/prior-gaussians.ts'
 import type { RowReading } from '../../src/evidence/row-reading.ts'
+import { lifetimeFromStep } from '../../src/models/step-fixture.ts'
 import { kelvin, stepRow } from './records.ts'
 
 const context = { id: 'part', ratedCurrent: 8, blockingVoltage: 400, prior: priorGaussians('ultrafast').recovery! }
@@ -41,6 +42,36 @@ describe('storage and recovery time of a step fixture', () => {
     // y of the class at 100 °C is 1 + 0.2 ln(T/T0)
     const { point } = read({ recoveryTime: 28e-9, junction: kelvin(100) })
     expect(point.ratio).toBeCloseTo(1 + 0.2 * Math.log(373.15 / 298.15), 12)
+  })
+})
+
+describe('the doubt of both times of a step fixture', () => {
+  it('is what independent errors of the two make of u and y, whatever the reverse current', () => {
+    // ts 8 ns and trr 40 ns, 0.5 A to 2 A: the differences of the inversion in place of its derivatives
+    const fields = { current: 0.5, reverse: 2, until: 0.4, storageTime: 8e-9, recoveryTime: 40e-9 } as const
+    const solved = (storage: number, recovery: number) => {
+      const { lifetime, tailTime } = lifetimeFromStep({
+        forwardCurrent: 0.5,
+        reverseCurrent: 2,
+        until: 0.4,
+        storageTime: 8e-9 * Math.exp(storage),
+        recoveryTime: 40e-9 * Math.exp(recovery),
+      })!
+      return [Math.log(lifetime), Math.log(lifetime / tailTime - 1)] as const
+    }
+    const step = 1e-5
+    const slopes = ([storage, recovery]: readonly [number, number]) => {
+      const [up, down] = [solved(storage, recovery), solved(-storage, -recovery)]
+      return [(up[0] - down[0]) / (2 * step), (up[1] - down[1]) / (2 * step)] as const
+    }
+    const [byStorage, byRecovery] = [slopes([step, 0]), slopes([0, step])]
+    const cross = 0.05 ** 2 * (byStorage[0] * byStorage[1] + byRecovery[0] * byRecovery[1])
+    expect(read(fields).observation.noise).toEqual([
+      expect.closeTo(0.05 ** 2 * (byStorage[0] ** 2 + byRecovery[0] ** 2) + 0.6 ** 2, 6),
+      expect.closeTo(cross, 6),
+      expect.closeTo(cross, 6),
+      expect.closeTo(0.05 ** 2 * (byStorage[1] ** 2 + byRecovery[1] ** 2) + 0.4 ** 2 + 0.2 ** 2, 6),
+    ])
   })
 })
 
