@@ -67,7 +67,7 @@ export function clippedPlateau(values: Float64Array, side: 1 | -1, noise: number
 /** Step of the converter: the smallest difference between neighbouring samples that are not equal. */
 function quantum(values: Float64Array, from: number, to: number): number {
   let smallest = Number.POSITIVE_INFINITY
-  for (let k = Math.max(1, from); k < to; k++) {
+  for (let k = from; k < to; k++) {
     const difference = Math.abs(values[k]! - values[k - 1]!)
     if (difference > 0 && difference < smallest) smallest = difference
   }

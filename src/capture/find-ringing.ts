@@ -21,7 +21,7 @@ export function findRinging(residuals: Float64Array, interval: number, least: nu
   const step = interval * stride
   const lowest = 3 / (values.length * step)
   const highest = 0.2 / step
-  if (!(highest > 1.5 * lowest) || values.length < 30) return null
+  if (values.length < 30) return null
   const amplitudes = new Float64Array(tries)
   let best = 0
   for (let j = 0; j < tries; j++) {
@@ -40,7 +40,6 @@ function frequencyOf(j: number, lowest: number, highest: number): number {
 }
 
 function everyMean(values: Float64Array, stride: number): Float64Array {
-  if (stride === 1) return values
   return Float64Array.from({ length: Math.floor(values.length / stride) }, (_, k) => {
     let sum = 0
     for (let j = 0; j < stride; j++) sum += values[k * stride + j]!

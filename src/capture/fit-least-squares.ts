@@ -27,10 +27,10 @@ export function fitLeastSquares(problem: LeastSquaresProblem): Float64Array {
     const before = cost
     for (let trial = 0; trial < 8; trial++) {
       const step = solveNormal(columns, residual, damping)
-      const candidate = step === null ? null : parameters.map((value, j) => value - step[j]!)
-      if (candidate !== null) problem.residuals(candidate, shifted)
-      const reached = candidate === null ? Number.POSITIVE_INFINITY : sumOfSquares(shifted)
-      if (candidate !== null && reached < cost) {
+      const candidate = parameters.map((value, j) => value - step[j]!)
+      problem.residuals(candidate, shifted)
+      const reached = sumOfSquares(shifted)
+      if (reached < cost) {
         parameters = candidate
         cost = reached
         residual.set(shifted)
@@ -64,8 +64,8 @@ function sumOfSquares(values: Float64Array): number {
   return Number.isFinite(sum) ? sum : Number.POSITIVE_INFINITY
 }
 
-/** Solves (JᵀJ + damping diag(JᵀJ)) step = Jᵀr by Gauss elimination; null where the matrix is singular. */
-function solveNormal(columns: readonly Float64Array[], residual: Float64Array, damping: number): Float64Array | null {
+/** Solves (JᵀJ + damping diag(JᵀJ)) step = Jᵀr by Gauss elimination; no numbers where the matrix is singular. */
+function solveNormal(columns: readonly Float64Array[], residual: Float64Array, damping: number): Float64Array {
   const size = columns.length
   const rows = columns.map((left, i) => {
     const row = new Float64Array(size + 1)
@@ -76,7 +76,6 @@ function solveNormal(columns: readonly Float64Array[], residual: Float64Array, d
   for (let i = 0; i < size; i++) {
     const pivotRow = rows[i]!
     const pivot = pivotRow[i]!
-    if (!(Math.abs(pivot) > 1e-300)) return null
     for (let k = i + 1; k < size; k++) {
       const row = rows[k]!
       const factor = row[i]! / pivot

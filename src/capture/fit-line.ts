@@ -48,7 +48,6 @@ export function lineReaches(line: FittedLine, value: number): number {
 /** A level line: the mean of the samples. */
 export function fitLevel(time: Float64Array, current: Float64Array, from: number, to: number): FittedLine {
   const line = fitLine(time, current, from, to)
-  const count = line.count
-  const spread = Math.sqrt(line.residual ** 2 + (count > 1 ? (line.rise * (time[to - 1]! - time[from]!)) ** 2 / 12 : 0))
+  const spread = Math.sqrt(line.residual ** 2 + (line.rise * (time[to - 1]! - time[from]!)) ** 2 / 12)
   return { ...line, rise: 0, residual: spread }
 }

@@ -49,9 +49,9 @@ export function readAt(
 function edgeTime(reference: Waveform): number {
   const { current } = reference
   let high = 0
-  let low = 0
   for (let k = 0; k < current.length; k++) if (current[k]! > current[high]!) high = k
-  for (let k = high; k < current.length; k++) if (low <= high || current[k]! < current[low]!) low = k
+  let low = high
+  for (let k = high; k < current.length; k++) if (current[k]! < current[low]!) low = k
   const size = current[high]! - current[low]!
   let early = high
   for (let k = high; k < low; k++) if (current[k]! >= current[high]! - 0.1 * size) early = k

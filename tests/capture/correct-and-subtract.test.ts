@@ -22,13 +22,13 @@ describe('a reading between samples', () => {
 })
 
 describe('a known skew', () => {
-  const given = { ...wave(5, 1, [1, 2, 3, 4]), voltage: Float64Array.of(0, 10, 30, 30) }
+  const given = { ...wave(5, 2, [1, 2, 3, 4]), voltage: Float64Array.of(0, 10, 30, 30) }
 
   it('moves the voltage by the delay of the current, and nothing else', () => {
-    const { voltage, ...rest } = correctSkew(given, 0.5)
+    const { voltage, ...rest } = correctSkew(given, 1)
     expect(voltage).toEqual(Float64Array.of(0, 5, 20, 30))
     expect({ ...rest, voltage: null }).toEqual({ ...given, voltage: null })
-    expect(correctSkew(given, -1).voltage).toEqual(Float64Array.of(10, 30, 30, 30))
+    expect(correctSkew(given, -2).voltage).toEqual(Float64Array.of(10, 30, 30, 30))
   })
 
   it('leaves a capture alone that has none of it, or no voltage', () => {
@@ -45,9 +45,9 @@ describe('a reference', () => {
   })
 
   it('is taken away at equal times, on whatever grid it stands', () => {
-    const waveform = { ...wave(0, 1, [8, 8, 4, 0]), voltage: Float64Array.of(0, 0, 1, 1) }
-    const { waveform: left, fixture } = subtractReference(waveform, wave(-1, 2, [0, 2, -2]))
-    // at 0, 1, 2, 3 the reference reads 1, 2, 0, -2
+    const waveform = { ...wave(0, 2, [8, 8, 4, 0]), voltage: Float64Array.of(0, 0, 1, 1) }
+    const { waveform: left, fixture } = subtractReference(waveform, wave(-2, 4, [0, 2, -2]))
+    // at 0, 2, 4, 6 the reference reads 1, 2, 0, -2
     expect(left).toEqual({ ...waveform, current: Float64Array.of(7, 6, 4, 2) })
     expect(fixture!.subtracted).toBe(true)
   })
@@ -56,7 +56,7 @@ describe('a reference', () => {
     [4, true],
     [4.1, false],
   ])('that swings by %d of 8 A is a disturbance: %s', (swing, subtracted) => {
-    const waveform = wave(0, 1, [8, 8, 0, 0])
+    const waveform = wave(0, 1, [0, 8, 0, 4])
     const found = subtractReference(waveform, wave(0, 1, [1, 1 + swing, 1, 1]))
     expect(found.fixture!.subtracted).toBe(subtracted)
     if (!subtracted) expect(found.waveform).toBe(waveform)

@@ -49,6 +49,9 @@ describe('the window of an event', () => {
     expect(window.current.slice(0, 3)).toEqual(Float64Array.of(1680.5, 1682.5, 1684.5))
     expect(window.time.slice(0, 2)).toEqual(Float64Array.of(100 + 840.25, 100 + 841.25))
     expect(window.voltage!.slice(0, 2)).toEqual(Float64Array.of(16805, 16825))
+    // three samples in one: the middle one's time
+    const three = eventWindow(waveform, { ...someEvent, ...change, peak: 3600, half: 3460 }, 'ramp', 1)
+    expect(three.time[0]).toBe(100 + 0.5 * three.current[0]!)
   })
 
   it('turns the channels that are upside down, and has no voltage where there is none', () => {

@@ -12,7 +12,9 @@ describe('a clipped peak', () => {
   it('is a run of lowest readings in which the current would have moved by more than six steps', () => {
     // four samples in a row are three intervals: 3 x 1.01 A against 6 x 0.5 A
     expect(find(cut)).toEqual({ at: -5, samples: 4 })
-    expect(find(cut, 0.99)).toBeNull()
+    expect(find(cut, 1)).toBeNull()
+    // smaller steps before the event do not count
+    expect(find([9, 8.9, ...cut.slice(2)], 1, 0, { edge: 2 })).toBeNull()
   })
 
   it('is none where noise would explain it', () => {
@@ -28,6 +30,7 @@ describe('a clipped peak', () => {
 
   it('is looked for between crossing and quarter only', () => {
     expect(find(cut.with(0, -7).with(1, -7).with(13, -9))).toEqual({ at: -5, samples: 4 })
+    expect(find(cut.with(12, -9))).toEqual({ at: -5, samples: 4 })
     const late = [9, 4, -1, -2, -4, -4.5, -4, -4, -3, -5, -5, -5, -5, -5]
     expect(find(late, 100)).toEqual({ at: -5, samples: 4 })
     expect(find(late, 100, 0, { last: 12 })).toBeNull()
@@ -40,7 +43,7 @@ describe('a clipped peak', () => {
 })
 
 describe('a clipped plateau', () => {
-  const flat = (count: number) => [0, 0.1, 0.3, ...Array.from({ length: count }, () => 5), 1, 0.2, 0]
+  const flat = (count: number) => [0.5, 0.2, 0, ...Array.from({ length: count }, () => 5), 0, 1, 0.5]
   const find = (readings: readonly number[], side: 1 | -1 = 1, noise = 0.01, step = 0.01) =>
     clippedPlateau(Float64Array.from(readings), side, noise, step)
 
@@ -64,8 +67,13 @@ describe('a clipped plateau', () => {
   it('needs a channel that is noisy elsewhere: 0.6 steps of the converter and 1e-4 of the swing', () => {
     expect(find(flat(12), 1, 0.01, 0.0168)).toBeNull()
     expect(find(flat(12), 1, 0.01, 0.0165)).not.toBeNull()
+    expect(find(flat(12), 1, 0.6 * 0.01, 0.01)).toBeNull()
     expect(find(flat(12), 1, 0.00049, 0)).toBeNull()
+    expect(find(flat(12), 1, 1e-4 * 5, 0)).toBeNull()
     expect(find(flat(12), 1, 0.00051, 0)).not.toBeNull()
+    // a channel that swings from -5 to 5
+    expect(find([-5, ...flat(12)], 1, 0.00099, 0)).toBeNull()
+    expect(find([-5, ...flat(12)], 1, 0.00101, 0)).not.toBeNull()
     expect(find(flat(12), 1, Number.NaN, 0)).toBeNull()
   })
 })

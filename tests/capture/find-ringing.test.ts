@@ -6,13 +6,13 @@ const ring = (count: number, frequency: number, added: (k: number) => number = (
   Float64Array.from({ length: count }, (_, k) => Math.sin(2 * Math.PI * frequency * k) + added(k))
 
 describe('a ringing', () => {
-  it.each([0.03, 0.05, 0.11, 0.19])(
+  it.each([0.03, 0.05, 0.0552, 0.11, 0.199])(
     'of %d cycles in a sample is found with its frequency and amplitude',
     (frequency) => {
       const found = findRinging(ring(200, frequency), 1e-9, 0.1)!
       // the grid steps by (0.2/0.015)^(1/159), 1.6 %
       expect(found.frequency / (frequency * 1e9)).toBeCloseTo(1, 1.6)
-      expect(found.amplitude).toBeCloseTo(1, 1)
+      expect(Math.abs(found.amplitude - 1)).toBeLessThan(0.1)
     },
   )
 

@@ -37,13 +37,13 @@ describe('the jump of an inductive shunt', () => {
     const window = lifted({ 10: 3, 11: 3, 12: 3 })
     const noisy = (residual: number) => handRamp({ plateau: { ...handRamp().plateau, residual } })
     expect(inductiveJump(window, noisy(1.19))).toBe(3)
-    expect(inductiveJump(window, noisy(1.21))).toBeNull()
+    expect(inductiveJump(window, noisy(1.2))).toBeNull()
     // 10 A and a reverse amplitude of 289 A: a swing of 299
     const swing = (amplitude: number) => handRamp({ curve: { ...handCurve, amplitude } })
     expect(inductiveJump(window, swing(289))).toBe(3)
-    expect(inductiveJump(window, swing(291))).toBeNull()
+    expect(inductiveJump(window, swing(290))).toBeNull()
     expect(inductiveJump({ ...window, interval: 2.4 }, handRamp())).toBe(3)
-    expect(inductiveJump({ ...window, interval: 2.6 }, handRamp())).toBeNull()
+    expect(inductiveJump({ ...window, interval: 2.5 }, handRamp())).toBeNull()
   })
 
   it('is looked for up to the end of a short window', () => {
@@ -108,6 +108,9 @@ describe('the onset of the voltage after the peak', () => {
   it('starts from the reading while it conducts', () => {
     const window = rising((x) => x, 30, -2, 98)
     expect(onset(window, -2, 98)!).toBeCloseTo(4, 9)
+    // slow up to 5 %, then straight at 1.9 of the rest: 25 % a fifth of 20/1.9 after that, the onset a quarter of it before
+    const bent = rising((x) => (x < 0.5 ? 0.1 * x : 0.05 + 1.9 * (x - 0.5)), 30, -2, 98)
+    expect(onset(bent, -2, 98)!).toBeCloseTo(4 + 10 - (0.25 * 0.2 * 20) / 1.9, 9)
   })
 
   it('is the last rise before the highest reading', () => {
@@ -127,9 +130,9 @@ describe('the onset of the voltage after the peak', () => {
     ).toBeCloseTo(4, 9)
     expect(
       onset(
-        rising((x) => x, 30, 0, 4.9),
+        rising((x) => x, 30, 0, 5),
         0,
-        4.9,
+        5,
       ),
     ).toBeNull()
     expect(

@@ -68,6 +68,12 @@ describe('least squares', () => {
     expect(solve(line, [1, 3, 5, 7], [1, 2], 1000).calls).toBeLessThanOrEqual(1 + 2 + 8)
   })
 
+  it('of a line is all but there after one step', () => {
+    const { found } = solve(line, [1, 3, 4, 8], [50, -20], 1)
+    expect(Math.abs(found[0]! - 0.7)).toBeLessThan(0.5)
+    expect(Math.abs(found[1]! - 2.2)).toBeLessThan(0.3)
+  })
+
   it('makes no more steps than it may', () => {
     expect(solve(decay, [5, 2, 1, 0.5], [1, 0.1, 0], 0)).toEqual({ found: [1, 0.1, 0], calls: 1 })
     const once = solve(decay, [5, 2, 1, 0.5], [1, 0.1, 0], 1)

@@ -38,6 +38,8 @@ describe('a level through samples', () => {
   it('adds noise and tilt as independent parts', () => {
     const level = fitLevel(time, current, 1, 5)
     expect(level.residual).toBeCloseTo(Math.sqrt(0.9 + (2.2 * 3) ** 2 / 12), 12)
+    const late = time.map((t) => t + 50)
+    expect(fitLevel(late, current, 1, 5).residual).toBeCloseTo(level.residual, 12)
   })
 
   it('of one sample has no spread', () => {

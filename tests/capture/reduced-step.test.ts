@@ -62,6 +62,25 @@ describe('a small reversal', () => {
     expect(Object.keys(figures)).not.toContain('endDoubt')
   })
 
+  it('has its voltage in the trace where there is one', () => {
+    const waveform = capture()
+    const voltage = waveform.current.map((value) => 7 - value)
+    const { trace } = reduce({ ...waveform, voltage })!
+    for (const [k, value] of trace.voltage!.entries()) expect(value).toBeCloseTo(7 - trace.current[k]!, 1)
+  })
+
+  it('that turns back at once has no storage time and no doubt of one', () => {
+    const back = (t: number) => (t < 0 ? 0.5 : -1 * Math.exp(-t / 40))
+    const reduced = reduce(capture({ noise: 0.002, bits: 0 }, back), { refits: 3 })!
+    expect(stepOf(reduced).storageTime).toBeNull()
+    expect(Object.keys(reduced.spread)).not.toContain('storageTime')
+    expect(reduced.spread.recoveryTime!).toBeLessThan(0.1)
+    // from tau I_F/TM: tau_rr (1 + I/I_F)
+    expect(stepOf(reduced).lifetime / (40e-9 * 3)).toBeCloseTo(1, 1)
+    expect(reduced.spread.lifetime!).toBeLessThan(0.1)
+    expect(reduced.rowSpread).toBeLessThan(Math.hypot(0.03, reduced.spread.recoveryTime!) + 0.001)
+  })
+
   it('says what is wrong with it', () => {
     const codes = (reduced: ReducedCapture | null) => reduced!.caveats.map(({ code }) => code)
     expect(codes(reduce(capture(), { settings: { device: { id: null, junction: null } } }))).toEqual([

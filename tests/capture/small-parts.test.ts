@@ -82,7 +82,7 @@ describe('the marks in an averaged window', () => {
   it('stay in the window, with the peak after the crossing and the quarter after the half', () => {
     const waveform = { ...waveformOf([]), start: 0, interval: 1 }
     const window = windowOf({ start: 10, interval: 4, count: 6 }, () => 0)
-    const event = { ...someEvent, edge: 0, crossing: 18, peak: 19, half: 23, quarter: 24 }
+    const event = { ...someEvent, edge: 0, crossing: 18, peak: 19, half: 22, quarter: 23 }
     const { edge, crossing, peak, half, quarter } = marksIn(window, contextOf({ waveform, event }))
     expect([edge, crossing, peak, half, quarter]).toEqual([0, 2, 3, 3, 4])
     const late = marksIn(window, contextOf({ waveform, event: { ...event, edge: 99 } }))
