@@ -7,7 +7,20 @@ import { readStage } from '../../src/input/read-stage.ts'
 import type { Reading } from '../../src/problems/problem.ts'
 import { rank } from '../../src/study/rank.ts'
 import { records as shelf } from '../demo/orchard.ts'
+import { kelvin, stage } from '../stage/samples.ts'
 import { settings } from '../study/settings.ts'
+
+/** No resistance to a case: the junction stands at its temperature. */
+export const idealCooling = { kind: 'case', junctionToCase: 1e-9, caseToSink: 0 } as const
+
+/** 400 V, 200 A/us, 100 kHz, 8 A without ripple, and a case of 125 °C: where a sheet's hot rows are read. */
+export const hotStage = stage({
+  input: { voltage: 200 },
+  output: { current: 4 },
+  inductor: { inductance: 1, resistance: 0 },
+  switch: { onResistance: 0 },
+  cooling: { kind: 'case', caseTemperature: kelvin(125) },
+})
 
 /** A stage as an engineer has typed it. */
 export function typedStage(text: string): Stage {
@@ -47,4 +60,9 @@ export function sixRows({ losses_w: { total: _, ...rows } }: CandidateResult): r
 /** Accepted parts in the order of their ranks. */
 export function placed({ candidates }: RankResult): readonly CandidateResult[] {
   return candidates.filter(({ accepted }) => accepted)
+}
+
+/** Which of the wordings a long text lacks: a failure then shows these and not the text. */
+export function missing(text: string, ...wanted: readonly RegExp[]): readonly string[] {
+  return wanted.filter((each) => !each.test(text)).map(String)
 }

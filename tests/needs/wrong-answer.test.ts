@@ -7,26 +7,16 @@ import { words } from '../../src/report/words/words.ts'
 import { candidateOf, reasonsOf, recordOf, warnedAbout } from '../demo/orchard.ts'
 import { carbide, kelvin, silicon, stage } from '../stage/samples.ts'
 import { alone } from '../study/settings.ts'
-import { demoStage, placed, rankShelf, sixRows, sum } from './workbench.ts'
+import { demoStage, hotStage, idealCooling, placed, rankShelf, sixRows, sum } from './workbench.ts'
 
 const table = (result: RankResult): string => renderTable(words(result), { width: 160, colour: false })
 const spoken = (text: string): string => text.replace(/\s+/g, ' ')
 
-/** Ideal cooling at 125 °C: the junction stands where the sheet's hot rows were read. */
-const hot = { kind: 'case', junctionToCase: 1e-9, caseToSink: 0 } as const
-const hotStage = stage({
-  input: { voltage: 200 },
-  output: { current: 4 },
-  inductor: { inductance: 1, resistance: 0 },
-  switch: { onResistance: 0 },
-  cooling: { kind: 'case', caseTemperature: kelvin(125) },
-})
-
 describe('wrong answer or unsafe advice without it', () => {
   it('1: trr, Qrr and I_RM are moved from the test condition to the operating point, and the factor is shown', () => {
     const watts = (charge: number): number => 400 * charge * 100e3
-    const known = alone(hotStage, { ...recordOf('rowan-600v-8a'), thermal: hot })
-    const headline = alone(hotStage, { ...recordOf('rowan-600v-8a-headline'), thermal: hot })
+    const known = alone(hotStage, { ...recordOf('rowan-600v-8a'), thermal: idealCooling })
+    const headline = alone(hotStage, { ...recordOf('rowan-600v-8a-headline'), thermal: idealCooling })
     // The first page: 18 ns from 1 A at 100 A/us; its triangle holds a trr²/2.
     expect(watts((100e6 * 18e-9 ** 2) / 2), 'the headline, taken as it stands').toBeCloseTo(0.65, 2)
     expect(known.event!.current_a, 'the current of the hot rows').toBeCloseTo(8, 0)
@@ -110,7 +100,7 @@ describe('wrong answer or unsafe advice without it', () => {
     const { conduction, recovery_rectifier, leakage, forward_recovery } = found.losses_w
     const heat = sum([conduction, recovery_rectifier, leakage, forward_recovery])
     expect(found.junction_c).toBeCloseTo(70 + 1.8 * heat, 4)
-    const unheated = alone(cooled, silicon({ thermal: hot }))
+    const unheated = alone(cooled, silicon({ thermal: idealCooling }))
     expect(found.event!.qrr_c, 'the charge is that of the heated junction').toBeGreaterThan(
       1.05 * unheated.event!.qrr_c,
     )
@@ -170,15 +160,15 @@ describe('wrong answer or unsafe advice without it', () => {
   })
 
   it('9: typical and high stand side by side, and a record with typical data only is warned about', () => {
-    const store = rankShelf(demoStage('cold-store-mains'), 200)
-    for (const { id, interval_w, losses_w, junction_c, junction_high_c } of placed(store)) {
+    const dryer = rankShelf(demoStage('kiln-boost'), 200)
+    for (const { id, interval_w, losses_w, junction_c, junction_high_c } of placed(dryer)) {
       expect(interval_w!.level, 'from the 5th to the 95th percentile').toBeCloseTo(0.95 - 0.05, 12)
       expect(interval_w!.high, id).toBeGreaterThan(1.01 * losses_w.total!)
       expect(junction_high_c!, id).toBeGreaterThan(junction_c!)
     }
-    expect(renderCsv(store)).toContain(',total (W),total low (W),total high (W),Tj (°C),Tj high (°C),')
-    expect(warnedAbout(store, 'garnet-650v-10a-sic')).toContain('typical-only')
-    expect(warnedAbout(store, 'larch-600v-8a-soft'), 'it holds guaranteed figures').not.toContain('typical-only')
+    expect(renderCsv(dryer)).toContain(',total (W),total low (W),total high (W),Tj (°C),Tj high (°C),')
+    expect(warnedAbout(dryer, 'garnet-650v-10a-sic')).toContain('typical-only')
+    expect(warnedAbout(dryer, 'larch-600v-8a-soft'), 'it holds guaranteed figures').not.toContain('typical-only')
   })
 
   it('10: every figure is tagged given, converted, extrapolated with how far, or class guess, and --strict refuses guesses', () => {
