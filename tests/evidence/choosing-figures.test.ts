@@ -152,6 +152,7 @@ describe('an impossible pair', () => {
     const told = { found: 'trr 20 ns', bound: 'trr 30 ns' }
     expect(why({ recoveryTime: 20e-9, charge: 50e-9 }, high)).toEqual(told)
     expect(why({ recoveryTime: 20e-9, charge: 50e-9, peakReverseCurrent: 2 }, high)).toEqual(told)
+    expect(why({ recoveryTime: 30e-9, charge: 50e-9 }, high)).toEqual({ ...told, found: 'trr 30 ns' })
     expect(why({ recoveryTime: 31e-9, charge: 20e-9 }, high)!.found).toBe('Qrr 20 nC')
   })
 

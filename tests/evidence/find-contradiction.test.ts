@@ -53,6 +53,11 @@ describe('rows that contradict each other', () => {
     expect(found(8, 1, -1)).toEqual(told('row 1', 'row 3', distance(8, 1, -1)))
   })
 
+  it('are told by the first of two that are equally far, and of two equal others by the first', () => {
+    expect(found(-10, 10)).toEqual(told('row 1', 'row 2', distance(-10, 10)))
+    expect(found(0, 0, 10)).toEqual(told('row 3', 'row 1', distance(10, 0, 0)))
+  })
+
   it('need two of them', () => {
     expect(found()).toEqual([])
     expect(found(100)).toEqual([])

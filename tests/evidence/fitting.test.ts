@@ -21,8 +21,8 @@ function misread(factors: Partial<Record<FigureName, number>>): RampFigures {
 const fitted = (figures: RampFigures, used: readonly FigureName[], start: Point, common = { current: 0, slope: 0 }) =>
   fitFigures({ reading, figures, names: used, errors: { figures: errors, ...common }, start })
 
-const misfitAt = (figures: RampFigures, used: readonly FigureName[], point: Point) =>
-  used.reduce((sum, name) => sum + ((Math.log(figures[name]!) - ln(name, point)) / errors[name]) ** 2, 0)
+const misfitAt = (figures: RampFigures, used: readonly FigureName[], point: Point, at = reading) =>
+  used.reduce((sum, name) => sum + ((Math.log(figures[name]!) - ln(name, point, at)) / errors[name]) ** 2, 0)
 
 describe('a fit through three or four figures', () => {
   const cases = [
@@ -70,6 +70,42 @@ describe('a fit through three or four figures', () => {
     expect(point.ratio).toBeCloseTo(made.ratio, 11)
     expect(misfit).toBeLessThan(1e-20)
   })
+
+  it.each([
+    ['2.65 A, hardly below the peak', 2.65, 64e6, { recoveryTime: 65e-9, peakReverseCurrent: 2.775, softness: 0.318 }],
+    ['2.18 A', 2.18, 168e6, { recoveryTime: 48e-9, peakReverseCurrent: 3.4, softness: 0.034 }],
+    ['4.2 A', 4.2, 65e6, { recoveryTime: 226e-9, peakReverseCurrent: 5.82, softness: 0.276 }],
+  ])(
+    'goes down to the least misfit where trr ends at %s, and whole steps would go astray',
+    (_, until, slope, stated) => {
+      const at: RampReading = { ...reading, slope, recoveryTimeBy: { kind: 'level', until } }
+      const used = ['recoveryTime', 'peakReverseCurrent', 'softness'] as const
+      const figures = { ...stated, charge: null }
+      const found = used.map((_, index) => {
+        const [first, second] = used.filter((__, position) => position !== index)
+        const start = invertPair(at, figures, first!, second!)!
+        return fitFigures({
+          reading: at,
+          figures,
+          names: used,
+          errors: { figures: errors, current: 0, slope: 0 },
+          start,
+        })
+      })
+      const { point, misfit } = found[0]!
+      for (const other of found) expect(other.misfit / misfit).toBeCloseTo(1, 9)
+      for (let direction = 0; direction < 12; direction++) {
+        const angle = (direction * Math.PI) / 6
+        for (const reach of [1e-3, 0.1, 1]) {
+          const near = {
+            lifetime: point.lifetime + reach * Math.cos(angle),
+            ratio: point.ratio + reach * Math.sin(angle),
+          }
+          expect(misfitAt(figures, used, near, at)).toBeGreaterThan(misfit)
+        }
+      }
+    },
+  )
 
   it('has (J’ W J)⁻¹ as its covariance, J by differences', () => {
     const { covariance } = fitted(misread({}), names, made)

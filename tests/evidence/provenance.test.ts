@@ -28,7 +28,13 @@ describe('the origin of recovery', () => {
     origins({ recovery: rows.length > 0 ? rows : [row] }, at(fields)).of('event.qrr_c')!
 
   it('is the row within 2 % of its current and slope and 2 K of its temperature, one or the other way', () => {
-    for (const near of [{ current: 8.16 }, { slope: 98.1e6 }, { junction: kelvin(27) }, { junction: kelvin(23) }])
+    for (const near of [
+      { current: 8.16 },
+      { slope: 102e6 },
+      { slope: 98.1e6 },
+      { junction: kelvin(27) },
+      { junction: kelvin(23) },
+    ])
       expect(qrr(near).how).toBe('given')
     for (const off of [{ current: 8.17 }, { slope: 97.9e6 }, { junction: kelvin(27.1) }, { junction: kelvin(22.9) }])
       expect(qrr(off).how).toBe('converted')
@@ -47,6 +53,11 @@ describe('the origin of recovery', () => {
     expect(far({ current: 4, slope: 25e6 })).toEqual([
       { figure: 'Recovery', row: 'recovery row 1', factor: expect.closeTo(4) },
     ])
+    const at300 = { ...row, junction: 300 }
+    const farthest = (fields: Partial<typeof here>) =>
+      origins({ recovery: [at300] }, at(fields)).caveats.map((c) => c.data)
+    expect(farthest({ junction: 375 })).toEqual([])
+    expect(farthest({ junction: 375.1, current: 24 })).toEqual([{ figure: 'Recovery', row: 'recovery row 1' }])
     expect(far({ junction: kelvin(99.9), current: 16 })).toEqual([])
     expect(far({ junction: kelvin(100.1), current: 16 })).toEqual([{ figure: 'Recovery', row: 'recovery row 1' }])
   })

@@ -57,6 +57,11 @@ describe('a capacitance beside recovery rows', () => {
     ])
   })
 
+  it('of exactly 30 % is not told', () => {
+    const capacitance = { kind: 'charge', charge: 3e-9, voltage: 400 } as const
+    expect(dataOf('capacitance-share', { recovery: [rampRow({ charge: 10e-9 })], capacitance })).toEqual([])
+  })
+
   it('has no share of a row without charge, without voltage or of a step fixture', () => {
     expect(shares(rampRow({ recoveryTime: 30e-9 }))).toEqual([])
     expect(shares(rampRow({ charge: 20e-9, voltage: null }))).toEqual([])
