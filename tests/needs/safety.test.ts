@@ -7,6 +7,7 @@ import { runReview } from '../../src/commands/review.ts'
 import { runSwap } from '../../src/commands/swap.ts'
 import { runTrend } from '../../src/commands/trend.ts'
 import type { Stage } from '../../src/domain/stage.ts'
+import { renderMarkdown } from '../../src/report/render-markdown.ts'
 import { words } from '../../src/report/words/words.ts'
 import { stageCautions } from '../../src/study/cautions.ts'
 import { scratchFolder } from '../commands/scratch.ts'
@@ -125,9 +126,10 @@ describe('above 60 V dc, above 42.4 V peak or fed from the mains', () => {
       output: { voltage: 5, current: 5, capacitance: null, bleeder: null },
       candidates: ['sedge-60v-15a'],
     } as const
-    const result = rankShelf(low)
+    const result = words(rankShelf(low))
     expect(result.candidates[0]!.event!.peak_reverse_v).toBeLessThan(42.4)
     expect(result.cautions).toEqual([])
+    expect(missing(renderMarkdown(result), /caution/i, /lethal/i).length, 'nor a word of one in its text').toBe(2)
   })
 
   it('safety: anything fed from the mains gets them and is called live, whatever its output', () => {
