@@ -6,6 +6,7 @@ import { type Kernel, row } from '../../src/stage/kernel.ts'
 import { holdStart, refine, settle, settleFromHeld } from '../../src/stage/thermal-balance.ts'
 import { leakageRow } from '../evidence/records.ts'
 import { carbide, kelvin, kernelOf, mainsStage, silicon, stage } from './samples.ts'
+import { stabilityEdge } from './stability-edge.ts'
 
 const sink = (shared: boolean, resistance = 1): Cooling => ({
   kind: 'sink',
@@ -104,9 +105,7 @@ describe('settling', () => {
   it('finds a root so near the edge that the fast route does not reach it, and none beyond', () => {
     const found = [1e-3, 0.05].map((short) => {
       const kernel = kernelOf(stage({ cooling: sink(false, 3) }), leaky(12))
-      let peak = Number.NEGATIVE_INFINITY
-      for (let junction = kernel.thermal.reference; junction < kernel.thermal.ceiling; junction += 0.1)
-        peak = Math.max(peak, ambientForJunction(kernel, junction))
+      const { surroundings: peak } = stabilityEdge(kernel)
       kernel.thermal.reference = peak - short
       expect(settle(kernel)).toBe(true)
       expect(unrest(kernel)).toBeLessThan(1e-5)

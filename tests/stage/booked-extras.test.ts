@@ -123,6 +123,7 @@ describe('the rest of the ledger', () => {
     const body = silicon({ class: 'body-diode', capacitance: null })
     const { rows } = at({}, body)
     expect([rows[row.leakage], rows[row.capacitive]]).toEqual([0, 0])
+    expect(at({}, carbide({ capacitance: null })).rows[row.capacitive]).toBe(0)
   })
 
   it('the heat of the switch is its own rows and what the rectifier adds to it', () => {
@@ -188,6 +189,17 @@ describe('a synchronous part', () => {
     expect(kernel.hotEvent).toMatchObject({ outcome: 'negative-valley', charge: 0, rectifierEnergy: 0, current: 0 })
     expect(kernel.hotEvent.lifetime).toBeGreaterThan(1e-9)
     expect(kernel.rows[row.turnOnBase]).toBe(0)
+  })
+
+  it('with a given line loses nothing in its diode where the current has turned round', () => {
+    const part = carbide({ channel: { onResistance: 0.06, perKelvin: 0 }, deadTime: { before: 150e-9, after: 250e-9 } })
+    const kernel = at({ inductor: { inductance: 105e-6 } }, part)
+    const { valley, peak, conductionShare } = kernel.instant
+    expect(valley).toBeLessThan(-0.05)
+    const square = (valley * valley + valley * peak + peak * peak) / 3
+    const after = drop(partOf(kernel), peak, junction) * peak * 250e-9 * f
+    expect(kernel.rows[row.conduction]).toBeCloseTo(after + square * 0.06 * (conductionShare - 400e-9 * f), 10)
+    expect(kernel.hot.chord).toBe(false)
   })
 
   it('whose dead times fill the whole period has no time left for its channel', () => {

@@ -102,6 +102,15 @@ describe('a continuous period balances volt-seconds and charge to rounding', () 
     }
   })
 
+  it('is found though the tangent at the start has no root: the drop is held from there on', () => {
+    const at = stage({ ...low.boost, input: { voltage: 3 }, switch: { onResistance: 0.03 } })
+    for (const start of [0.05, 0.1, 0.2, 0.3, 0.5]) {
+      const kernel = kernelOf(at, silicon())
+      kernel.startCurrent = start
+      checkContinuous(ledgerAt(kernel, junction)!)
+    }
+  })
+
   it.each(['boost', 'inverting'] as const)(
     '%s: the lower of the two currents that balance, near the loss-free one',
     (kind) => {
@@ -158,6 +167,8 @@ describe('a stage that cannot deliver', () => {
 
   it('has a resistance that no current overcomes', () => {
     never({ ...low.boost, switch: { onResistance: 2 } })
+    // At its loss-free current this one would still have 2.6 V to raise the current with.
+    never({ ...low.boost, switch: { onResistance: 0.6, onResistancePerKelvin: 0 } })
     never({ ...low.inverting, inductor: { ...low.inverting.inductor, resistance: 4 } })
   })
 

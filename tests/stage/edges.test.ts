@@ -7,6 +7,7 @@ import { type Kernel, row } from '../../src/stage/kernel.ts'
 import { settle } from '../../src/stage/thermal-balance.ts'
 import { leakageRow } from '../evidence/records.ts'
 import { carbide, kelvin, kernelOf, silicon, stage } from './samples.ts'
+import { stabilityEdge } from './stability-edge.ts'
 
 const own = (resistance: number): Cooling => ({
   kind: 'sink',
@@ -42,10 +43,43 @@ describe('a switch near running away by itself', () => {
     expect(kernel.temperatures[1]).toBeCloseTo(reference + switchSelf * power(), 5)
   })
 
+  it.each([0.5, 0.75])('takes a handful of rounds at a gain of %d, where plain iteration takes dozens', (gain) => {
+    const { kernel } = conducting(gain)
+    // Two digits a round by the secant; 27 and 80 rounds to 1e-9 K without.
+    expect(rounds(kernel, () => ambientForJunction(kernel, 380))).toBeLessThanOrEqual(8)
+  })
+
+  it('counts as without temperature above 1500 K, though its heat would balance there', () => {
+    for (const [energy, there] of [
+      [10.5e-3, true],
+      [13.5e-3, false],
+    ] as const) {
+      const at = stage({ cooling: onCase, switch: { turnOff: { kind: 'energy', energy }, onResistancePerKelvin: 0 } })
+      const kernel = kernelOf(at, silicon())
+      kernel.thermal.switchSelf = 1
+      expect(Number.isNaN(ambientForJunction(kernel, 380))).toBe(!there)
+      if (there) expect(kernel.temperatures[1]).toBeGreaterThan(1300)
+      kernel.thermal.reference = 300
+      expect(settle(kernel)).toBe(there)
+    }
+  })
+
   it('has no temperature beyond a gain of 1', () => {
     expect(ambientForJunction(conducting(1.05).kernel, 380)).toBeNaN()
   })
 })
+
+/** Evaluations of the ledger that a call takes: the core loss is read once in each. */
+function rounds(kernel: Kernel, call: () => void): number {
+  let count = 0
+  const counted = (): number => {
+    count++
+    return 2
+  }
+  Object.defineProperty(kernel, 'coreLoss', { configurable: true, get: counted })
+  call()
+  return count
+}
 
 describe('heat without a number', () => {
   const record = silicon({ forwardRecovery: { peak: 1e308, time: 100e-9, slope: 1e-9 } })
@@ -105,6 +139,18 @@ describe('a stage that stops delivering as its switch warms up', () => {
   })
 })
 
+describe('a root a tenth of a millikelvin from the edge of stability', () => {
+  it('is left to the bracketed search, for the fast route does not come to rest', () => {
+    const at = stage({ cooling: own(0.5), parallel: { parts: 2, imbalance: 0.3 } })
+    const kernel = kernelOf(at, leaky(10))
+    const { surroundings } = stabilityEdge(kernel)
+    kernel.thermal.reference = surroundings - 1e-4
+    const taken = rounds(kernel, () => expect(settle(kernel)).toBe(true))
+    expect(taken).toBeGreaterThan(100)
+    expect(ambientForJunction(kernel, kernel.temperatures[0]!)).toBeCloseTo(surroundings - 1e-4, 6)
+  })
+})
+
 describe('a root just below the end of the search', () => {
   it.each([
     [1, 30],
@@ -114,16 +160,12 @@ describe('a root just below the end of the search', () => {
   ])('is found where the fast route would overshoot that end: %d parts, %d mA', (parts, milliamps) => {
     const at = stage({ cooling: own(3), parallel: { parts, imbalance: 0.2 } })
     const kernel = kernelOf(at, leaky(milliamps))
-    let peak = [0, Number.NEGATIVE_INFINITY] as [number, number]
-    for (let junction = kernel.thermal.reference; junction < kernel.thermal.ceiling; junction += 0.25) {
-      const reference = ambientForJunction(kernel, junction)
-      if (reference > peak[1]) peak = [junction, reference]
-    }
+    const { junction, surroundings } = stabilityEdge(kernel)
     for (const below of [0.01, 0.5]) {
-      kernel.thermal.reference = peak[1] - below
-      kernel.thermal.ceiling = peak[0] + 0.3
+      kernel.thermal.reference = surroundings - below
+      kernel.thermal.ceiling = junction + 0.3
       expect(settle(kernel)).toBe(true)
-      expect(ambientForJunction(kernel, kernel.temperatures[0]!)).toBeCloseTo(peak[1] - below, 5)
+      expect(ambientForJunction(kernel, kernel.temperatures[0]!)).toBeCloseTo(surroundings - below, 5)
     }
   })
 })

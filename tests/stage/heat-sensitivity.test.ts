@@ -6,7 +6,7 @@ import { placeTemperatures } from '../../src/stage/evaluate.ts'
 import { placeHeatInverse } from '../../src/stage/heat-inverse.ts'
 import { placeSensitivity, sensitivity } from '../../src/stage/heat-sensitivity.ts'
 import { type Kernel, row, switchPower } from '../../src/stage/kernel.ts'
-import { leakageRow } from '../evidence/records.ts'
+import { leakageRow, rampRow } from '../evidence/records.ts'
 import { carbide, kelvin, kernelOf, ledgerAt, silicon, stage } from './samples.ts'
 
 /** Without ripple one current stands for the interval, and the charge of the recovery is built up. */
@@ -100,6 +100,16 @@ describe('the estimated sensitivities are the derivatives of the heat at held cu
     const slope = c[11]! + c[12]! * Math.log(half) + c[13]! * half
     expect(sensitivity.rectifier).toBeCloseTo(current * slope + leakage(idle), 12)
     expect(sensitivity.switchByRectifier).toBe(0)
+  })
+
+  it('of a residue that the idle time has left to its tail is not estimated', () => {
+    const slow = silicon({ recovery: [rampRow({ charge: 900e-9, peakReverseCurrent: 9, junction: kelvin(125) })] })
+    const kernel = ledgerAt(kernelOf(stage({ inductor: { inductance: 112e-6 } }), slow), 392)!
+    expect(kernel.hotEvent.outcome).toBe('residual')
+    expect(kernel.hotEvent.timeToPeak).toBe(0)
+    placeSensitivity(kernel)
+    expect(sensitivity.switchByRectifier).toBe(0)
+    expect(Number.isFinite(sensitivity.rectifier)).toBe(true)
   })
 
   it('of a switch at the floor of its resistance is nothing', () => {

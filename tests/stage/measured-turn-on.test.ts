@@ -16,8 +16,13 @@ function given(includesRectifier: MeasuredTurnOn['includesRectifier'], energy = 
   return { energy, current, voltage, includesRectifier, rectifier: null }
 }
 
-const calibrated = (record: RectifierRecord): CalibratedRectifier =>
-  calibrate({ record, blockingVoltage: voltage }).rectifier
+/** The part; where it recovers, with lifetimes that depend on the current too. */
+function calibrated(record: RectifierRecord): CalibratedRectifier {
+  const { rectifier } = calibrate({ record, blockingVoltage: voltage })
+  rectifier.recovery?.posterior.mean.set([0.12], 1)
+  rectifier.recovery?.posterior.mean.set([-0.2], 5)
+  return rectifier
+}
 
 /** What the part adds to the switch from a steady current at 25 °C: its recovery, and the charging it leaves over. */
 function containedBy(rectifier: CalibratedRectifier, current: number): number {

@@ -34,7 +34,9 @@ describe('the event that stands for a point', () => {
     expect(point.instant).not.toBe(kernel.instant)
     expect(point.hot).not.toBe(kernel.hotEvent)
     expect(point.other).not.toBe(kernel.otherEvent)
+    const period = { ...kernel.instant }
     expect(crestInstant(kernel)).not.toBe(kernel.instant)
+    expect(crestInstant(kernel)).toEqual(period)
   })
 
   it('takes the slope at the valley, at no current where there is none', () => {
@@ -67,6 +69,14 @@ describe('the event that stands for a point', () => {
     expect(hot.current).toBe(instant.valley)
     solveLineInstant(kernel, 0.3)
     expect(crestInstant(kernel).inputVoltage).toBeCloseTo(230 * Math.SQRT2, 10)
+  })
+
+  it('of a mains stage with several parts holds the crest of the others too', () => {
+    const kernel = at(mainsStage({ parallel: { parts: 2, imbalance: 0.1 } }))
+    const { other, instant, slope } = pointEvent(kernel)
+    solveLineInstant(kernel, 1)
+    expect(other.current).toBeCloseTo(0.45 * instant.valley, 12)
+    expect(other.peakReverseCurrent / eventOf(kernel, 0.45, junction, slope).peak).toBeCloseTo(1, 9)
   })
 
   it('of a mains stage without a valley anywhere is that of the crest too', () => {
