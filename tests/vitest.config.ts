@@ -1,14 +1,10 @@
 import { defineConfig } from 'vitest/config'
-import { campaigns } from './mutation/campaigns.ts'
-
-/** Trying deliberate faults in one folder of the core takes the tests beside it alone. */
-const mutated = process.env.EBBWATT_MUTATED
 
 /** Threads without isolation: the core is pure, so files cannot disturb one another and share their imports. */
 export default defineConfig({
   root: new URL('..', import.meta.url).pathname,
   test: {
-    include: mutated === undefined ? ['tests/**/*.test.ts'] : [...campaigns[mutated]!],
+    include: ['tests/**/*.test.ts'],
     pool: 'threads',
     isolate: false,
     maxWorkers: 2,
