@@ -106,6 +106,8 @@ describe('a normal distribution of coefficients', () => {
     // 3 expected with variance 1, error variance 1: half the way to 5
     expect([...after.mean]).toEqual([expect.closeTo(2, 12), 2])
     expect([...after.covariance]).toEqual([expect.closeTo(0.5, 12), 0, 0, 0])
+    const known = conditioned(flat, [{ designs: [Float64Array.of(0, 1)], values: [5], noise: [1] }])
+    expect([...known.mean, ...known.covariance]).toEqual([1, 2, 1, 0, 0, 0])
   })
 })
 

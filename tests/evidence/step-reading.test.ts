@@ -29,6 +29,19 @@ describe('storage and recovery time of a step fixture', () => {
     expect(condition).toEqual({ ratedCurrent: 8, current: 0.5, slope: 1e8, junction: kelvin(25) })
   })
 
+  it('tell no y where the currents lie so far apart that tau and tau_rr are one number', () => {
+    // (1 + IF/IR)(1 − tau_rr/tau) is hardly above 1: the two differ by 1e-10
+    const { tellsRatio, caveats } = read({
+      current: 1e6,
+      reverse: 1e-4,
+      until: 5e-5,
+      storageTime: 1e-9,
+      recoveryTime: 1e-7,
+    })
+    expect(tellsRatio).toBe(false)
+    expect(caveats.map(({ code }) => code)).toEqual(['row-impossible'])
+  })
+
   it('of a maximum are lowered to the centre of the population: u by 0.5, y not', () => {
     const { point, observation } = read({ ...both, grade: 'maximum' })
     expect(observation.values).toEqual([point.lifetime - 0.5, point.ratio])
