@@ -17,7 +17,7 @@ export interface ParallelSharingInput {
  * @example hottestShare({ parts: 2, imbalance: 0.1 }) // 0.550000
  */
 export function hottestShare(input: ParallelSharingInput): number {
-  return input.parts > 1 ? Math.min(1, (1 + input.imbalance) / input.parts) : 1
+  return Math.min(1, (1 + input.imbalance) / input.parts)
 }
 
 /**

@@ -72,10 +72,10 @@ const mostSteps = 20_000
  */
 export function ringingPeakVoltage(input: RingingPeakInput): number {
   const { voltage, voltageFall, loopInductance } = input
-  if (!(voltage > 0 && loopInductance > 0)) return voltage
+  if (!(voltage > 0)) return voltage
   const law = capacitanceLaw(input.capacitance, input.parts)
   const fastest = Math.sqrt(loopInductance * capacitanceAt({ capacitance: law, voltage: 2 * voltage }))
-  // a junction without capacitance follows the switch and stores nothing to ring with
+  // without inductance nothing rings; a junction without capacitance follows the switch and stores nothing to ring with
   if (!(fastest > 0)) return voltage
   // a fall this short moves nothing before it is over
   if (voltageFall < 1e-5 * fastest) return peakFrom(input, law, 0, 0)

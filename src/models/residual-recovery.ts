@@ -69,7 +69,7 @@ export function residualRecovery(input: ResidualRecoveryInput, out: ResidualReco
     peak = slopeOfDecay * softTime * Math.exp((softTime - idleTime) / tailTime)
     charge = peak * tailTime
   }
-  return charge > 0 && charge >= negligibleResidue * chargeAtOnce ? write(out, peak, charge, time) : write(out, 0, 0, 0)
+  return charge >= negligibleResidue * chargeAtOnce ? write(out, peak, charge, time) : write(out, 0, 0, 0)
 }
 
 /** q_s: charge after the idle time; a rounding below zero is cut off. */

@@ -93,6 +93,8 @@ describe('a quantity as engineers type it', () => {
     ['5e V', 'voltage', 'unit-unknown', ''],
     ['5e2.5 V', 'voltage', 'number-malformed', ''],
     ['1.2.3 V', 'voltage', 'number-malformed', ''],
+    ['1.2.3,4 V', 'voltage', 'number-malformed', ''],
+    ['1.2.3 4 V', 'voltage', 'number-malformed', ''],
     ['about 5 V', 'voltage', 'number-malformed', ''],
     ['', 'voltage', 'number-malformed', ''],
     ['- 5 V', 'voltage', 'number-malformed', ''],
@@ -154,6 +156,7 @@ describe('a quantity as engineers type it', () => {
   it('looks at a hundred signs and no more', () => {
     const padded = (length: number) => `${'0'.repeat(length - 3)}5 V`
     expect(read(padded(100), 'voltage')).toBe(5)
+    expect(read(` ${padded(99)}`, 'voltage')).toBe(5)
     expect(read(padded(101), 'voltage')).toMatchObject({ code: 'number-malformed', hint: '' })
     expect(read(`${' '.repeat(98)}5 V`, 'voltage')).toMatchObject({ code: 'number-malformed' })
     // written out, the degree sign is longer

@@ -45,5 +45,25 @@ describe('the unit table with plain arithmetic', () => {
     expect(convertUnit('ns', 'V')).toMatchObject({ refused: 'dimension' })
     expect(convertUnit('nsx', 'V')).toEqual({ refused: 'unknown' })
     expect(convertUnit('V'.repeat(40), 'V')).toEqual({ refused: 'unknown' })
+    expect(convertUnit('', 'V')).toEqual({ refused: 'unknown' })
+  })
+
+  it('reads 32 signs of a unit and no more', () => {
+    const rest = `ohm${'/V'.repeat(7)}${'*V'.repeat(7)}`
+    expect(rest).toHaveLength(31)
+    expect(convertUnit(`k${rest}`, 'ohm')).toEqual({ factor: 1000, offset: 0 })
+    expect(convertUnit('daohm', 'ohm')).toEqual({ factor: 10, offset: 0 })
+    expect(convertUnit(`da${rest}`, 'ohm')).toEqual({ refused: 'unknown' })
+  })
+
+  it('does not take a unit whose size is no number', () => {
+    expect(convertUnit('kV^2/V', 'V')).toEqual({ factor: 1e6, offset: 0 })
+    expect(convertUnit('kV^200/V^199', 'V')).toEqual({ refused: 'unknown' })
+    expect(convertUnit('mV^200/V^199', 'V')).toEqual({ refused: 'unknown' })
+  })
+
+  it('turns kelvin into degrees Celsius as well as back', () => {
+    expect(convertUnit('degC', 'K')).toEqual({ factor: 1, offset: 273.15 })
+    expect(convertUnit('K', 'degC')).toMatchObject({ factor: 1, offset: -273.15 })
   })
 })

@@ -53,6 +53,7 @@ describe('time to the peak', () => {
   it('is exactly zero without charge and current, and with a tail as long as the lifetime', () => {
     expect(timeToPeak({ ...event, current: 0, storedCharge: 0 })).toBe(0)
     expect(timeToPeak({ ...event, tailTime: event.lifetime })).toBe(0)
+    expect(timeToPeak({ ...event, current: 0, storedCharge: 0, tailTime: 0 })).toBe(0)
   })
 
   it('reaches tau − tau_rr, the quasi-static limit, for a long ramp', () => {
@@ -75,6 +76,7 @@ describe('time to the peak', () => {
   it('names the input that has no meaning', () => {
     const refused = (change: Partial<typeof event>) => () => timeToPeak({ ...event, ...change })
     expect(refused({ slope: 0 })).toThrow('timeToPeak: slope = 0 has no meaning')
+    expect(refused({ lifetime: 0 })).toThrow('timeToPeak: lifetime = 0 has no meaning')
     expect(refused({ lifetime: -1 })).toThrow('timeToPeak: lifetime = -1 has no meaning')
     expect(refused({ tailTime: 61e-9 })).toThrow('timeToPeak: tailTime = 6.1e-8 has no meaning')
     expect(refused({ tailTime: -1e-9 })).toThrow('timeToPeak: tailTime = -1e-9 has no meaning')
@@ -101,6 +103,13 @@ describe('charge at turn-off', () => {
     expect(chargeAtTurnOff({ ...interval, peakCurrent: 8, conductionTime: 1 })).toBeCloseTo(480e-9, 18)
     const short = chargeAtTurnOff({ ...interval, conductionTime: 1e-15 })
     expect(Math.abs(short / (12 * 1e-15) - 1)).toBeLessThan(1e-7)
+  })
+
+  it('stays at lifetime times current over any number of lifetimes, one beside which 1 is lost included', () => {
+    for (const lifetimes of [1e3, 1e9, 2 ** 53 + 2, 1e20]) {
+      const charge = chargeAtTurnOff({ ...interval, conductionTime: lifetimes, lifetime: 1 })
+      expect(Math.abs(charge / (8 + 8 / lifetimes) - 1)).toBeLessThan(1e-15)
+    }
   })
 
   it('is the same on both sides of the switch to the series at small times', () => {
@@ -151,8 +160,29 @@ describe('the root without dimension', () => {
         term *= -z / n
         sum += term
       }
-      expect(Math.abs(exponentialExcess(z) - sum)).toBeLessThanOrEqual(1e-14 * sum)
+      expect(Math.abs(exponentialExcess(z) - sum)).toBeLessThanOrEqual(5e-15 * sum)
     }
+  })
+
+  it('balances the charges to 1e-13 of itself, however short the ramp and the tail', () => {
+    // from no current: (1 − ρ)(κ exp(−x) − (x − 1 + exp(−x))) = ρ x, by bisection
+    for (const charge of [1e-10, 1e-8, 1e-6, 1e-4, 1e-2]) {
+      for (const tail of [0.3, 1e-3, 1e-4]) {
+        const balance = (x: number) => (1 - tail) * (charge * Math.exp(-x) - exponentialExcess(x)) - tail * x
+        let [low, high] = [0, 1]
+        for (let n = 0; n < 100; n++) {
+          const middle = (low + high) / 2
+          if (balance(middle) > 0) low = middle
+          else high = middle
+        }
+        expect(Math.abs(scaledTimeToPeak(0, charge, tail) / low - 1)).toBeLessThan(1e-13)
+      }
+    }
+  })
+
+  it('is 1 − ρ after a ramp of a million lifetimes', () => {
+    expect(scaledTimeToPeak(1e6, 1e6, 0.3)).toBeCloseTo(0.7, 14)
+    expect(scaledTimeToPeak(1e12, 1e12, 0.2)).toBeCloseTo(0.8, 14)
   })
 
   it('rises with the stored charge', () => {

@@ -95,12 +95,35 @@ describe('a curve that cannot be used', () => {
     expect(forwardDropUsable({ ...curve, valley: 0, peak: 0.02 })).toBe(true)
   })
 
+  it('is judged over the range alone, from the small-current line or the end of a given line on', () => {
+    const low = { ...curve, constant: 0.1 }
+    // 0.1 + 0.045 ln 0.5 + 0.15 is positive, 0.1 + 0.045 ln 0.01 is not
+    expect(forwardDropUsable({ ...low, valley: 4, peak: 8 })).toBe(true)
+    // a given line is not cut off at a hundredth of the rated current: −2 mV at no current
+    expect(forwardDropUsable({ ...curve, line: true, constant: -0.002, valley: 0, peak: 8 })).toBe(false)
+    // 0.1 − 0.2 × 0.4 still rises at 3.2 A, 0.1 − 0.2 × 0.6 no more at 4.8 A
+    const bent = { ...curve, logarithmic: 0.1, linear: -0.2, valley: 0.8 }
+    expect(forwardDropUsable({ ...bent, peak: 3.2 })).toBe(true)
+    expect(forwardDropUsable({ ...bent, peak: 4.8 })).toBe(false)
+    // −0.1 − ln e + 0.37 e is −0.094
+    const sunk = { ...curve, constant: -0.1, logarithmic: -1, linear: 0.37 }
+    expect(forwardDropUsable({ ...sunk, valley: 8 * Math.E, peak: 40 })).toBe(false)
+  })
+
+  it('needs only a positive drop where the current does not move', () => {
+    const falling = { ...curve, line: true, constant: 1, linear: -0.1, valley: 4, peak: 4 }
+    expect(forwardDropUsable(falling)).toBe(true)
+    expect(forwardDropUsable({ ...falling, constant: 0, linear: 0 })).toBe(false)
+  })
+
   it('is replaced by the chord between its ends, which never books a negative loss', () => {
     const straight = { ...curve, line: true, constant: 0.9, linear: 0.4 }
     expect(chordConductionPower({ ...straight, ...range })).toBeCloseTo(
       trapezoidConductionPower({ ...straight, ...range }),
       12,
     )
+    // 1 V at 2 A and 1.3 V at 8 A: (1 × (4 + 8) + 1.3 × (2 + 16))/6
+    expect(chordConductionPower({ ...straight, valley: 2, peak: 8 })).toBeCloseTo(35.4 / 6, 12)
     expect(chordConductionPower({ ...straight, ...range, constant: -5 })).toBe(0)
     // a falling curve is held at its higher, earlier value
     expect(chordConductionPower({ ...straight, ...range, linear: -0.4 })).toBeCloseTo(4.5 * (0.9 - 0.05), 12)

@@ -58,6 +58,10 @@ describe('junction capacitance', () => {
     const above = capacitiveEnergy({ capacitance, voltage: 1.00001e-4 })
     expect(above / below).toBeCloseTo((1.00001 / 0.99999) ** 2, 6)
     expect(capacitiveEnergy({ capacitance, voltage: 0 })).toBe(0)
+    // half of C0 V² is all there is far below Vj
+    for (const voltage of [1e-9, 3e-11, 7e-13]) {
+      expect(Math.abs(capacitiveEnergy({ capacitance, voltage }) / (0.5e-9 * voltage * voltage) - 1)).toBeLessThan(1e-9)
+    }
   })
 
   it('scales one charge by the square root of the voltage, its energy being a third of V Qc', () => {

@@ -9,6 +9,7 @@ import {
   leakageSlopeTemperature,
 } from '../../src/models/leakage-current.ts'
 import { mainsBoostRectifierMean, mainsBoostRectifierRms } from '../../src/models/line-cycle.ts'
+import { meaningless } from '../../src/models/meaningless.ts'
 import { trapezoidMean, trapezoidRms } from '../../src/models/trapezoid.ts'
 import { triangleFromCharge, triangleFromTime } from '../../src/models/triangle.ts'
 import { triangularTailEnergies } from '../../src/models/triangular-tail.ts'
@@ -32,7 +33,10 @@ describe('leakage', () => {
     const reference = { ...leakage, voltage: 100, temperature: 298.15 }
     expect(leakageCurrent(reference)).toBeCloseTo(50e-6, 18)
     expect(leakageCurrent({ ...reference, voltage: 25 })).toBeCloseTo(50e-6 / 8, 18)
-    expect(leakageCurrent({ ...reference, voltage: 0 })).toBe(0)
+    for (const exponent of [1.5, 0]) {
+      expect(leakageCurrent({ ...reference, exponent, voltage: 0 })).toBe(0)
+      expect(leakageCurrent({ ...reference, exponent, voltage: -5 })).toBe(0)
+    }
   })
 
   it('has the stated slope in temperature', () => {
@@ -73,6 +77,7 @@ describe('triangles', () => {
   })
 
   it('name the input that has no meaning', () => {
+    expect(meaningless('model', 'input', -2)).toEqual(new RangeError('model: input = -2 has no meaning'))
     expect(() => triangleFromTime({ recoveryTime: 1, slope: 0, softness: 1 })).toThrow(
       'triangleFromTime: slope = 0 has no meaning',
     )

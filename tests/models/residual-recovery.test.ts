@@ -24,9 +24,9 @@ describe('residual recovery', () => {
   })
 
   it('takes what an ODE solver leaves in a junction that is still full or has emptied by itself', () => {
-    // tau = 1, a = 1, m = 1/8, q0 = 0.1: the junction empties by itself after 0.63
+    // in units of tau = 0.5 and a = 4: m = 1/8, q0 = 0.1
     const [m, tail, charge] = [0.125, 0.3, 0.1]
-    const scaled = { slopeOfDecay: m, slope: 1, lifetime: 1, tailTime: tail, storedChargeAtZero: charge }
+    const scaled = { slopeOfDecay: 4 * m, slope: 4, lifetime: 0.5, tailTime: 0.5 * tail, storedChargeAtZero: charge }
     const met = new Set<boolean>()
     for (const idleTime of [0.001, 0.05, 0.2, 0.4, 0.5, 0.8]) {
       const soft = softByOde(m, tail, charge, idleTime)
@@ -34,10 +34,10 @@ describe('residual recovery', () => {
       const left = soft.empty
         ? { peak: -soft.current, reverseCharge: -soft.current * tail, timeToPeak: -soft.current }
         : rampByOde({ ...soft, tail })
-      const ours = residualRecovery({ ...scaled, idleTime }, fresh())
-      expect(ours.peakReverseCurrent).toBeCloseTo(left.peak, 9)
+      const ours = residualRecovery({ ...scaled, idleTime: 0.5 * idleTime }, fresh())
+      expect(ours.peakReverseCurrent / 2).toBeCloseTo(left.peak, 9)
       expect(ours.charge).toBeCloseTo(left.reverseCharge, 9)
-      expect(ours.timeToPeak).toBeCloseTo(left.timeToPeak + soft.current, 9)
+      expect(ours.timeToPeak / 0.5).toBeCloseTo(left.timeToPeak + soft.current, 9)
     }
     expect(met.size).toBe(2)
   })
@@ -86,9 +86,17 @@ describe('residual recovery', () => {
     })
   })
 
+  it('has nothing to recover where the tail lasts as long as the lifetime', () => {
+    for (const idleTime of [0, 1e-7]) {
+      const out = residualRecovery({ ...input, tailTime: input.lifetime, idleTime }, fresh())
+      expect(out).toEqual({ peakReverseCurrent: 0, charge: 0, timeToPeak: 0 })
+    }
+  })
+
   it('names the input that has no meaning', () => {
     const refused = (change: Partial<typeof input>) => () => residualRecovery({ ...input, ...change }, fresh())
     expect(refused({ slope: 0 })).toThrow('residualRecovery: slope = 0 has no meaning')
+    expect(refused({ slopeOfDecay: 0 })).toThrow('residualRecovery: slopeOfDecay = 0 has no meaning')
     expect(refused({ slopeOfDecay: -1 })).toThrow('residualRecovery: slopeOfDecay = -1 has no meaning')
     expect(refused({ lifetime: 0 })).toThrow('residualRecovery: lifetime = 0 has no meaning')
     expect(refused({ tailTime: 0 })).toThrow('residualRecovery: tailTime = 0 has no meaning')

@@ -73,10 +73,20 @@ describe('step fixture', () => {
     )
   })
 
+  it('is turned round where the plateau is short and the currents are small', () => {
+    // (1 + 1/5)(1 − 0.15) is 1.02: the plateau lasts a fiftieth of the lifetime
+    const input = { lifetime: 1e-6, tailTime: 0.15e-6, forwardCurrent: 1e-3, reverseCurrent: 5e-3, until: 1e-3 }
+    const storageTime = 1e-6 * Math.log(1.02)
+    expect(stepStorageTime(input)).toBeCloseTo(storageTime, 18)
+    const found = lifetimeFromStep({ ...input, storageTime, recoveryTime: storageTime + 0.15e-6 * Math.log(5) })
+    expect(found!.lifetime / 1e-6).toBeCloseTo(1, 9)
+  })
+
   it('finds no pair without a plateau, before it or at a level it never falls to', () => {
     const row = { storageTime: 40e-9, recoveryTime: 70e-9, forwardCurrent: 0.5, reverseCurrent: 1, until: 0.25 }
     expect(lifetimeFromStep(row)).not.toBeNull()
     expect(lifetimeFromStep({ ...row, storageTime: 0 })).toBeNull()
+    expect(lifetimeFromStep({ ...row, forwardCurrent: 0 })).toBeNull()
     expect(lifetimeFromStep({ ...row, recoveryTime: 40e-9 })).toBeNull()
     expect(lifetimeFromStep({ ...row, until: 1.5 })).toBeNull()
     expect(lifetimeFromStep({ ...row, until: 1.5, recoveryTime: 30e-9 })).toBeNull()

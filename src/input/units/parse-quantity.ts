@@ -57,6 +57,7 @@ interface Scale extends UnitConversion {
   readonly divisor: number
 }
 
+/** A zero typed with a minus becomes plain by the addition. */
 function scaled(value: number, { factor, offset, divisor }: Scale): number {
   return (divisor === 1 ? value * factor : value / divisor) + offset
 }
@@ -87,7 +88,7 @@ function checked(
   }
   if (value < 0 && sign !== 'any') return refuse('number-negative', kind, '')
   if (value === 0 && sign === 'positive') return refuse('number-zero', kind, '')
-  return value === 0 ? 0 : value
+  return value
 }
 
 /** mathjs is asked once for each distinct text of a unit; the bound keeps hostile files from filling the memory. */

@@ -87,7 +87,7 @@ function parseOne(unitText: string): ParsedUnit | null {
   }
 }
 
-/** "1 V"; "1/K" for a unit that begins with its denominator. */
+/** "1 V"; "1 /K" for a unit that begins with its denominator. */
 function counted(count: number, unitText: string): string {
-  return unitText.startsWith('/') ? `${count}${unitText}` : `${count} ${unitText}`
+  return `${count} ${unitText}`
 }
