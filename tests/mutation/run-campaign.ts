@@ -9,7 +9,7 @@ export interface Tried extends Fault {
 }
 
 /** Longer than any test of a campaign takes, on a busy machine as well. [ms] */
-const patience = 20_000
+const patience = 10_000
 const processes = 2
 const program = resolve('dist/build/tools/try-faults.js')
 

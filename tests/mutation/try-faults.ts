@@ -44,6 +44,9 @@ interface Reach {
   hits: number
 }
 
+/** A fault that is passed so many times as often as its place is without it counts as one that never ends. */
+const endlessAfter = 20
+
 const seconds: number[] = []
 await load()
 const reaches = await reachOfTests()
@@ -91,7 +94,7 @@ async function endOf(id: string, { passing, hits }: Reach): Promise<End> {
   for (const index of passing.toSorted((one, other) => seconds[one]! - seconds[other]!)) {
     board.activeMutant = id
     board.hitCount = 0
-    board.hitLimit = 100 * hits
+    board.hitLimit = endlessAfter * hits
     const failure = await failureOf(index)
     delete board.activeMutant
     if (failure === null) continue
