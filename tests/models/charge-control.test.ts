@@ -180,7 +180,8 @@ describe('the root without dimension', () => {
     }
   })
 
-  it('is 1 − ρ after a ramp of a million lifetimes', () => {
+  it('is 1 − ρ after a ramp of a million lifetimes, and of so many that 1 is lost beside them', () => {
+    expect(scaledTimeToPeak(2 ** 53 + 2, 2 ** 53 + 2, 0.3)).toBeCloseTo(0.7, 14)
     expect(scaledTimeToPeak(1e6, 1e6, 0.3)).toBeCloseTo(0.7, 14)
     expect(scaledTimeToPeak(1e12, 1e12, 0.2)).toBeCloseTo(0.8, 14)
   })

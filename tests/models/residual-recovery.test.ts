@@ -24,9 +24,15 @@ describe('residual recovery', () => {
   })
 
   it('takes what an ODE solver leaves in a junction that is still full or has emptied by itself', () => {
-    // in units of tau = 0.5 and a = 4: m = 1/8, q0 = 0.1
+    // in units of tau = 0.5 and a = 8, hence 4 A and 2 C: m = 1/8, q0 = 0.1
     const [m, tail, charge] = [0.125, 0.3, 0.1]
-    const scaled = { slopeOfDecay: 4 * m, slope: 4, lifetime: 0.5, tailTime: 0.5 * tail, storedChargeAtZero: charge }
+    const scaled = {
+      slopeOfDecay: 8 * m,
+      slope: 8,
+      lifetime: 0.5,
+      tailTime: 0.5 * tail,
+      storedChargeAtZero: 2 * charge,
+    }
     const met = new Set<boolean>()
     for (const idleTime of [0.001, 0.05, 0.2, 0.4, 0.5, 0.8]) {
       const soft = softByOde(m, tail, charge, idleTime)
@@ -35,8 +41,8 @@ describe('residual recovery', () => {
         ? { peak: -soft.current, reverseCharge: -soft.current * tail, timeToPeak: -soft.current }
         : rampByOde({ ...soft, tail })
       const ours = residualRecovery({ ...scaled, idleTime: 0.5 * idleTime }, fresh())
-      expect(ours.peakReverseCurrent / 2).toBeCloseTo(left.peak, 9)
-      expect(ours.charge).toBeCloseTo(left.reverseCharge, 9)
+      expect(ours.peakReverseCurrent / 4).toBeCloseTo(left.peak, 9)
+      expect(ours.charge / 2).toBeCloseTo(left.reverseCharge, 9)
       expect(ours.timeToPeak / 0.5).toBeCloseTo(left.timeToPeak + soft.current, 9)
     }
     expect(met.size).toBe(2)

@@ -61,7 +61,7 @@ const longestUnitText = 32
 /** Asks mathjs what `unitText` is, measured in `target`, both as plain text such as "A/us" and "A/s". */
 export function convertUnit(unitText: string, target: string): UnitConversion | UnitRefusal {
   const unit = unitText.length > longestUnitText ? null : parseOne(unitText)
-  if (unit === null || unit.units.length === 0 || unit.units.some(({ unit }) => notTaken.has(unit.name))) {
+  if (unit === null || unit.units.some(({ unit }) => notTaken.has(unit.name))) {
     return { refused: 'unknown' }
   }
   const dimension = String(unit.dimensions)
