@@ -19,9 +19,9 @@ describe('peak reverse voltage', () => {
 
   it('is V (1 + |sin x|/x), x = ω t_fv/2, after a linear fall on a constant capacitance', () => {
     const period = 2 * Math.PI * Math.sqrt(20e-9 * 1e-10)
-    const peak = (periods: number) =>
+    const peak = (periods: number, voltage = 100) =>
       ringingPeakVoltage({
-        voltage: 100,
+        voltage,
         voltageFall: periods * period,
         loopInductance: 20e-9,
         capacitance: law(1e-10, 1, 0),
@@ -31,6 +31,8 @@ describe('peak reverse voltage', () => {
       const x = Math.PI * periods
       expect(Math.abs(peak(periods) / (100 * (1 + Math.abs(Math.sin(x)) / x)) - 1)).toBeLessThan(1e-7 * (1 + periods))
     }
+    // at a microvolt as well
+    expect(peak(0.25, 1e-6) / 1e-8).toBeCloseTo(peak(0.25), 9)
     // both corners cancel over whole periods, however many are followed step by step
     expect(peak(1)).toBeCloseTo(100, 4)
     // sin(0.01 π)/(312 π) of ringing is left
