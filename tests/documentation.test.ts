@@ -135,7 +135,7 @@ describe('README.md', () => {
   const runnable = blocks.filter(({ command }) => withoutInstallation(command) !== 'npm test')
 
   it('begins with set-up and main job, then the tests', () => {
-    expect(blocks[0]?.command).toMatch(/^npm ci && node dist\/cli\.js rank /)
+    expect(blocks[0]?.command).toMatch(/^npm ci && node dist\/cli\.cjs rank /)
     expect(blocks[1]?.command).toBe('npm ci && npm test')
     expect(readme.split('\n').findIndex((line) => line.startsWith('```sh'))).toBeLessThan(40)
   })

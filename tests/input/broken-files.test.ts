@@ -447,6 +447,13 @@ describe('a broken record file is told in full', () => {
     `)
   })
 
+  it('when a definition has neither a time nor a softness that it defines', () => {
+    const row = (rest: string) => record(`recovery: [{fixture: ramp, qrr: 90 nC, ${rest}trr_by: line-90-25}]`)
+    expect(told(readRecords, row('softness: 0.6, ')).trim()).toBe('')
+    expect(told(readRecords, row('trr: 30 ns, ')).trim()).toBe('')
+    expect(told(readRecords, row(''))).toContain('recovery[1].trr: is missing; wanted is one of trr, softness')
+  })
+
   it('when a level has no current', () => {
     expect(told(readRecords, record('recovery: [{fixture: ramp, trr: 30 ns, trr_by: level}]'))).toMatchInlineSnapshot(`
       "

@@ -94,7 +94,7 @@ function recovery(row: RecoveryRow): Written {
     slope: of(row.slope, 'A/s'),
     voltage: of(row.voltage, 'V'),
     trr: of(row.recoveryTime, 's'),
-    trr_by: row.recoveryTime === null ? undefined : by.kind,
+    trr_by: row.recoveryTime === null && row.softness === null ? undefined : by.kind,
     until: by.kind === 'level' ? of(by.until, 'A') : undefined,
     qrr: of(row.charge, 'C'),
     irrm: of(row.peakReverseCurrent, 'A'),
