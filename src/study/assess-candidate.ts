@@ -10,7 +10,7 @@ import { settle } from '../stage/thermal-balance.ts'
 import { junctionLimitOf } from '../stage/thermal-network.ts'
 import type { Candidate } from './candidate.ts'
 import { eventResult, maximumEvent } from './event-result.ts'
-import { type Judgement, judge } from './judge-candidate.ts'
+import { type Judgement, judge, runawayReason } from './judge-candidate.ts'
 import { lossesResult } from './losses-result.ts'
 import { highestSurroundings, type NominalPoint, snubberLoss, stageLossOf } from './nominal-point.ts'
 import { coldCondition, conditionOf, originsAt } from './point-condition.ts'
@@ -40,7 +40,10 @@ function settledResult(
   point: NominalPoint,
   judgement: Judgement,
 ): Omit<CandidateResult, 'provenance'> {
-  const { reasons, mains } = judgement
+  const { mains } = judgement
+  const reasons = judgement.reasons.map((reason) =>
+    reason.code === 'runaway-at-maximum-leakage' ? runawayReason(candidate) : reason,
+  )
   const peak = judgement.peakReverseVoltage!
   const { stage, record, kernel } = candidate
   const { rows } = point

@@ -51,9 +51,7 @@ export function judge(candidate: Candidate): Judgement {
     settledAtMaximumLeakage: lost === undefined ? settlesAtMaximumLeakage(candidate) : null,
     recovery: tightestRecovery(kernel, settled),
   })
-  const reasons = rejections.map((rejection) =>
-    rejection.code === 'runaway-at-maximum-leakage' ? runawayReason(candidate) : reasonOf(rejection),
-  )
+  const reasons = rejections.map(reasonOf)
   if (lost !== undefined) {
     reasons.push({ code: atInput(candidate, lost.voltage, causeOfLoss), text: '', value: lost.voltage, limit: null })
   }
@@ -78,8 +76,11 @@ function reasonOf({ code, value, limit }: Rejection): Reason {
   return { code, text: '', value: edge(value), limit: edge(limit) }
 }
 
-/** How warm the surroundings are, and how warm they may be at maximum leakage. */
-function runawayReason(candidate: Candidate): Reason {
+/**
+ * The reason with how warm the surroundings are, and how warm they may be at maximum leakage. Finding that costs many
+ * times what judging does, so it is left to whoever shows it.
+ */
+export function runawayReason(candidate: Candidate): Reason {
   const edge = runawaySurroundings(candidate)
   return {
     code: 'runaway-at-maximum-leakage',
