@@ -1,4 +1,5 @@
 import { describe, expect, it } from 'vitest'
+import type { Stage } from '../../src/domain/stage.ts'
 import { calibrate } from '../../src/evidence/calibrate.ts'
 import { readRecords } from '../../src/input/read-records.ts'
 import { readStage } from '../../src/input/read-stage.ts'
@@ -9,7 +10,10 @@ import { choleskyFactor } from '../../src/numerics/cholesky.ts'
 import { formatProblem } from '../../src/problems/format-problem.ts'
 import { didYouMean } from '../../src/problems/nearest.ts'
 import { turnOnMeaning } from '../../src/stage/measured-turn-on.ts'
+import { prepareCandidate } from '../../src/study/candidate.ts'
+import { judge } from '../../src/study/judge-candidate.ts'
 import { rank } from '../../src/study/rank.ts'
+import { loadDemo } from '../bench/demo.ts'
 
 /** The ranks-and-ratings part of a record; rows follow. */
 const part = 'id: a\nclass: standard\nratings: {reverse_voltage: 200 V, average_current: 2 A, junction: 100 degC}\n'
@@ -134,4 +138,24 @@ cooling: {case: ${cold}}
       expect(candidates).toHaveLength(1)
     },
   )
+
+  it('a part that runs away is judged without the search for its edge, which a trend would pay at every point', () => {
+    const { stage, records } = loadDemo('hot-schottky')
+    const code = 'runaway-at-maximum-leakage'
+    const record = records.find(({ id }) => id === 'acacia-100v-20a')!
+    const at = (ambient: number): Stage => ({
+      ...stage,
+      cooling: { ...stage.cooling, ambientTemperature: ambient } as Stage['cooling'],
+    })
+    const isLost = (ambient: number): boolean =>
+      judge(prepareCandidate(at(ambient), record, [])).reasons.some((reason) => reason.code === code)
+    const ambient = Array.from({ length: 60 }, (_, step) => 293 + step).find(isLost)!
+    const [judged] = judge(prepareCandidate(at(ambient), record, [])).reasons
+    expect(judged).toMatchObject({ code, limit: null })
+    const { candidates } = rank(at(ambient), [record], { seed: 0, draws: 1, version: '', inputs: [] })
+    const [told] = candidates[0]!.reasons
+    // One step of the search cooler it still settled.
+    expect(told!.limit).toBeLessThan(told!.value!)
+    expect(told!.limit).toBeGreaterThan(told!.value! - 1)
+  })
 })
