@@ -83,6 +83,14 @@ describe('defects that random inputs found', () => {
     expect(readRecords(title, 'part.yaml').problems).toEqual([])
   })
 
+  it('a slip that breaks every line after it is told in a moment', () => {
+    const rows = '  - {current: 8 A, drop: 1.55 V, junction: 25 degC, grade: typical}\n'.repeat(3000)
+    const begin = process.cpuUsage().user
+    const { problems } = readRecords(`  - 1\n${part}forward:\n${rows}`, 'part.yaml')
+    expect(problems.map(({ code }) => code)).toContain('yaml-syntax')
+    expect((process.cpuUsage().user - begin) / 1e6).toBeLessThan(4)
+  })
+
   it('a line separator of another alphabet stays on its line in a message', () => {
     const problem = {
       code: 'word-unknown',

@@ -110,7 +110,7 @@ function syntaxFaults(documents: readonly Document.Parsed<ParsedNode>[]): readon
   const [first, second] = documents
   const errors = first === undefined ? [] : [...first.errors, ...first.warnings]
   const runOn = new Set(errors.filter(({ code }) => code === 'MULTILINE_IMPLICIT_KEY').map(({ pos }) => pos[0]))
-  const faults = errors.filter(isFirstAtItsPlace).map((error): YamlFault => {
+  const faults = firstAtEachPlace(errors).map((error): YamlFault => {
     const indented = error.code === 'BLOCK_AS_IMPLICIT_KEY' && runOn.has(error.pos[0])
     const [expected, hint] = indented ? indentedWords : (syntaxWords[error.code] ?? [lowerFirst(error.message), ''])
     if (error.code === 'TAG_RESOLVE_FAILED')
@@ -126,12 +126,11 @@ function syntaxFaults(documents: readonly Document.Parsed<ParsedNode>[]): readon
 }
 
 /** The package tells one slip under several codes. */
-function isFirstAtItsPlace(
-  { pos }: { readonly pos: readonly number[] },
-  index: number,
-  errors: readonly { readonly pos: readonly number[] }[],
-): boolean {
-  return errors.findIndex((other) => other.pos[0] === pos[0]) === index
+function firstAtEachPlace<Fault extends { readonly pos: readonly number[] }>(
+  faults: readonly Fault[],
+): readonly Fault[] {
+  const told = new Set<number | undefined>()
+  return faults.filter(({ pos: [at] }) => !told.has(at) && told.add(at))
 }
 
 /** A value that runs on into the next line and finds a key there. */
