@@ -28,6 +28,8 @@ export function reduceRamp(given: CaptureContext): ReducedCapture | null {
   const ramp = fitRamp(window, marks, conditions)
   const { fitted, curve, crossing } = ramp
   if (!allPositive([ramp.current, curve.slope, curve.tailTime, fitted.noise]) || !Number.isFinite(crossing)) return null
+  // A peak that lies behind the record was never seen, whatever the fit says of it.
+  if (curve.corner > window.time[window.time.length - 1]!) return null
   const figures = rampFigures(window, ramp, settings.recoveryTimeBy, settings.chargeUntil)
   const energy = recoveryEnergy(window, ramp)
   const shared = { offset: ramp.fitted.base, noise: ramp.fitted.noise, trace: traceOf(window, ramp) }
