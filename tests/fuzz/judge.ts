@@ -35,13 +35,13 @@ export function complaintsOf(fuzzCase: FuzzCase, outcome: FuzzOutcome): readonly
   return [...complaints, ...complaintsOfDocument(fuzzCase, outcome)]
 }
 
-/** What a file brings is quoted back, split from what stands before it: "1NaN" is told as the unit "NaN". */
 /** The review document carries its own engine, whose text says NaN. */
 const engine = /<script[^>]*>[\s\S]*?<\/script>/g
 const wordOfNoNumber = /\bNaN\b|\bInfinity\b/
 // biome-ignore lint/suspicious/noControlCharactersInRegex: these are what is looked for
 const steering = /[\u0000-\u0008\u000B-\u001F\u007F-\u009F\u061C\u200E\u200F\u2028-\u202E\u2066-\u2069]/
 
+/** What a file brings is quoted back, split from what stands before it: "1NaN" is told as the unit "NaN". */
 function brings({ files }: FuzzCase, pattern: RegExp): boolean {
   return Object.values(files).some((content) =>
     pattern.test(typeof content === 'string' ? content : Buffer.from(content).toString()),

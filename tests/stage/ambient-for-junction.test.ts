@@ -1,21 +1,9 @@
 import { describe, expect, it } from 'vitest'
 import type { RectifierRecord } from '../../src/domain/rectifier.ts'
-import type { Cooling } from '../../src/domain/stage.ts'
 import { ambientForJunction, highestBetween, lowestSettledJunction } from '../../src/stage/ambient-for-junction.ts'
 import { type Kernel, row } from '../../src/stage/kernel.ts'
-import { leakageRow } from '../evidence/records.ts'
-import { carbide, kelvin, kernelOf, mainsStage, silicon, stage } from './samples.ts'
+import { kelvin, kernelOf, leaky, mainsStage, onAir, silicon, sink, stage } from './samples.ts'
 import { stabilityEdge } from './stability-edge.ts'
-
-const sink = (shared: boolean, resistance = 1): Cooling => ({
-  kind: 'sink',
-  ambientTemperature: kelvin(40),
-  sinkToAmbient: resistance,
-  shared,
-})
-const onAir = silicon({ thermal: { kind: 'ambient', junctionToAmbient: 9, mounting: null } })
-const leaky = (milliamps: number): RectifierRecord =>
-  carbide({ leakage: [leakageRow({ voltage: 600, current: milliamps * 1e-3, junction: kelvin(125) })] })
 
 function switchHeat({ rows }: Kernel): number {
   const keys = ['switchConduction', 'turnOnBase', 'turnOff', 'stored', 'recoverySwitch', 'capacitive'] as const

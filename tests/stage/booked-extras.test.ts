@@ -6,7 +6,7 @@ import { evaluate } from '../../src/stage/evaluate.ts'
 import { type Kernel, row, switchPower } from '../../src/stage/kernel.ts'
 import { drop, leakage, partOf } from './by-hand.ts'
 import { partRows } from './rows-by-hand.ts'
-import { carbide, kernelOf, ledgerAt, silicon, stage } from './samples.ts'
+import { carbide, gateDrive, kernelOf, ledgerAt, silicon, stage } from './samples.ts'
 
 const junction = 380
 const f = 100e3
@@ -14,37 +14,26 @@ const at = (fields: Parameters<typeof stage>[0] = {}, part: RectifierRecord = si
   ledgerAt(kernelOf(stage(fields), part), junction)!
 
 describe('the turn-on slope', () => {
-  const gate = {
-    kind: 'gate',
-    drive: 12,
-    resistance: 20,
-    inputCapacitance: 2e-9,
-    transconductance: 15,
-    threshold: 3.5,
-    plateau: null,
-    sourceInductance: 1e-9,
-  } as const
-
   it('of a gate drive is gm (V - V_th - I/2gm) over its delay, at the current taken over', () => {
-    const kernel = at({ switch: { slope: gate } })
+    const kernel = at({ switch: { slope: gateDrive } })
     const { valley } = kernel.instant
     expect(valley).toBeGreaterThan(1)
     const byHand = (15 * (12 - 3.5 - valley / 30)) / (20 * 2e-9 + 15e-9)
     expect(kernel.turnOnSlope / byHand).toBeCloseTo(1, 12)
     expect(kernel.hotEvent.slope).toBe(kernel.turnOnSlope)
-    const plateau = at({ switch: { slope: { ...gate, plateau: 6 } } }).turnOnSlope
+    const plateau = at({ switch: { slope: { ...gateDrive, plateau: 6 } } }).turnOnSlope
     expect(plateau / ((15 * (12 - 4.75)) / 55e-9)).toBeCloseTo(1, 12)
   })
 
   it('takes no negative current: without a valley it is that of an unloaded switch', () => {
-    const kernel = at({ switch: { slope: gate }, inductor: { inductance: 20e-6 } })
+    const kernel = at({ switch: { slope: gateDrive }, inductor: { inductance: 20e-6 } })
     expect(kernel.turnOnSlope / ((15 * 8.5) / 55e-9)).toBeCloseTo(1, 12)
   })
 
   it('is nothing that a drive below its threshold can deliver', () => {
-    expect(ledgerAt(kernelOf(stage({ switch: { slope: { ...gate, drive: 3 } } }), silicon()), junction)).toBeNull()
+    expect(ledgerAt(kernelOf(stage({ switch: { slope: { ...gateDrive, drive: 3 } } }), silicon()), junction)).toBeNull()
     // Exactly at the threshold of an unloaded switch nothing moves either.
-    const idle = { switch: { slope: { ...gate, drive: 3.5 } }, inductor: { inductance: 20e-6 } }
+    const idle = { switch: { slope: { ...gateDrive, drive: 3.5 } }, inductor: { inductance: 20e-6 } }
     expect(ledgerAt(kernelOf(stage(idle), silicon()), junction)).toBeNull()
   })
 

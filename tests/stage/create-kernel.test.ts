@@ -2,7 +2,7 @@ import { describe, expect, it } from 'vitest'
 import { calibrate } from '../../src/evidence/calibrate.ts'
 import { blockingVoltageOf, nominalCoefficients } from '../../src/stage/create-kernel.ts'
 import { capacitive } from './by-hand.ts'
-import { carbide, kelvin, kernelOf, mainsStage, silicon, stage } from './samples.ts'
+import { carbide, gateDrive, kelvin, kernelOf, mainsStage, silicon, stage } from './samples.ts'
 
 describe('a new kernel holds what stage and record say', () => {
   it('the conditions of the stage', () => {
@@ -38,16 +38,7 @@ describe('a new kernel holds what stage and record say', () => {
   })
 
   it('a gate drive in place of a slope', () => {
-    const gate = {
-      kind: 'gate',
-      drive: 12,
-      resistance: 10,
-      inputCapacitance: 2e-9,
-      transconductance: 15,
-      threshold: 3.5,
-      plateau: null,
-      sourceInductance: 1e-9,
-    } as const
+    const gate = { ...gateDrive, resistance: 10 }
     const kernel = kernelOf(stage({ switch: { slope: gate } }), silicon())
     expect(kernel.slope).toBe(0)
     expect(kernel.gate).toEqual(gate)

@@ -1,23 +1,13 @@
 import { describe, expect, it } from 'vitest'
-import type { RectifierRecord } from '../../src/domain/rectifier.ts'
 import type { Cooling } from '../../src/domain/stage.ts'
 import { ambientForJunction, lowestSettledJunction } from '../../src/stage/ambient-for-junction.ts'
 import { evaluate } from '../../src/stage/evaluate.ts'
 import { type Kernel, row } from '../../src/stage/kernel.ts'
 import { settle } from '../../src/stage/thermal-balance.ts'
-import { leakageRow } from '../evidence/records.ts'
-import { carbide, kelvin, kernelOf, silicon, stage } from './samples.ts'
+import { carbide, kelvin, kernelOf, leaky, silicon, sink, stage } from './samples.ts'
 import { stabilityEdge } from './stability-edge.ts'
 
-const own = (resistance: number): Cooling => ({
-  kind: 'sink',
-  ambientTemperature: kelvin(40),
-  sinkToAmbient: resistance,
-  shared: false,
-})
 const onCase: Cooling = { kind: 'case', caseTemperature: kelvin(70) }
-const leaky = (milliamps: number): RectifierRecord =>
-  carbide({ leakage: [leakageRow({ voltage: 600, current: milliamps * 1e-3, junction: kelvin(125) })] })
 
 describe('a switch near running away by itself', () => {
   /** A case at 70 °C and a switch that only conducts: its heat grows by 0.6 % of its 25 °C value a kelvin. */
@@ -85,7 +75,7 @@ describe('heat without a number', () => {
   const record = silicon({ forwardRecovery: { peak: 1e308, time: 100e-9, slope: 1e-9 } })
 
   it.each([1, 2])('is no rest: nothing settles with %d parts', (parts) => {
-    for (const cooling of [own(1), { ...own(1), shared: true }, onCase]) {
+    for (const cooling of [sink(false, 1), { ...sink(false, 1), shared: true }, onCase]) {
       const kernel = kernelOf(stage({ cooling, parallel: { parts, imbalance: 0.1 * (parts - 1) } }), record)
       evaluate(kernel)
       expect(kernel.rows[row.hotPart]).toBe(Number.POSITIVE_INFINITY)
@@ -141,7 +131,7 @@ describe('a stage that stops delivering as its switch warms up', () => {
 
 describe('a root a tenth of a millikelvin from the edge of stability', () => {
   it('is left to the bracketed search, for the fast route does not come to rest', () => {
-    const at = stage({ cooling: own(0.5), parallel: { parts: 2, imbalance: 0.3 } })
+    const at = stage({ cooling: sink(false, 0.5), parallel: { parts: 2, imbalance: 0.3 } })
     const kernel = kernelOf(at, leaky(10))
     const { surroundings } = stabilityEdge(kernel)
     kernel.thermal.reference = surroundings - 1e-4
@@ -158,7 +148,7 @@ describe('a root just below the end of the search', () => {
     [1, 8],
     [2, 8],
   ])('is found where the fast route would overshoot that end: %d parts, %d mA', (parts, milliamps) => {
-    const at = stage({ cooling: own(3), parallel: { parts, imbalance: 0.2 } })
+    const at = stage({ cooling: sink(false, 3), parallel: { parts, imbalance: 0.2 } })
     const kernel = kernelOf(at, leaky(milliamps))
     const { junction, surroundings } = stabilityEdge(kernel)
     for (const below of [0.01, 0.5]) {

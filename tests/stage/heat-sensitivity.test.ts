@@ -7,7 +7,7 @@ import { placeHeatInverse } from '../../src/stage/heat-inverse.ts'
 import { placeSensitivity, sensitivity } from '../../src/stage/heat-sensitivity.ts'
 import { type Kernel, row, switchPower } from '../../src/stage/kernel.ts'
 import { leakageRow, rampRow } from '../evidence/records.ts'
-import { carbide, kelvin, kernelOf, ledgerAt, silicon, stage } from './samples.ts'
+import { carbide, kelvin, kernelOf, ledgerAt, onAir, silicon, stage } from './samples.ts'
 
 /** Without ripple one current stands for the interval, and the charge of the recovery is built up. */
 const steady = (fields: Parameters<typeof stage>[0] = {}): Stage =>
@@ -123,7 +123,6 @@ describe('the estimated sensitivities are the derivatives of the heat at held cu
 })
 
 const sink = (shared: boolean): Cooling => ({ kind: 'sink', ambientTemperature: kelvin(40), sinkToAmbient: 1, shared })
-const onAir = silicon({ thermal: { kind: 'ambient', junctionToAmbient: 9, mounting: null } })
 
 /** 1 - d(targets)/dT of rectifier and switch, from the differences and the network (PHYSICS 5). */
 function balanceMatrix(kernel: Kernel): readonly [number, number, number, number] {

@@ -1,6 +1,6 @@
 import fc from 'fast-check'
 import type { RectifierRecord } from '../../src/domain/rectifier.ts'
-import type { Stage } from '../../src/domain/stage.ts'
+import type { Cooling, Stage } from '../../src/domain/stage.ts'
 import { calibrate } from '../../src/evidence/calibrate.ts'
 import { blockingVoltageOf, createKernel } from '../../src/stage/create-kernel.ts'
 import { evaluate } from '../../src/stage/evaluate.ts'
@@ -135,3 +135,29 @@ export function numbersIn(value: unknown, path = ''): (readonly [string, number]
 export function between(low: number, high: number): fc.Arbitrary<number> {
   return fc.integer({ min: 0, max: 1000 }).map((k) => low + ((high - low) * k) / 1000)
 }
+
+/** A gate drive whose slope is worked out by hand where it is used. */
+export const gateDrive = {
+  kind: 'gate',
+  drive: 12,
+  resistance: 20,
+  inputCapacitance: 2e-9,
+  transconductance: 15,
+  threshold: 3.5,
+  plateau: null,
+  sourceInductance: 1e-9,
+} as const
+
+export const sink = (shared: boolean, resistance = 1): Cooling => ({
+  kind: 'sink',
+  ambientTemperature: kelvin(40),
+  sinkToAmbient: resistance,
+  shared,
+})
+
+/** Hot part without a sink. */
+export const onAir = silicon({ thermal: { kind: 'ambient', junctionToAmbient: 9, mounting: null } })
+
+/** So much leakage at 600 V and 125 °C. */
+export const leaky = (milliamps: number): RectifierRecord =>
+  carbide({ leakage: [leakageRow({ voltage: 600, current: milliamps * 1e-3, junction: kelvin(125) })] })

@@ -11,7 +11,7 @@ import {
 } from '../../src/stage/settled-point.ts'
 import { capacitive } from './by-hand.ts'
 import { eventOf } from './rows-by-hand.ts'
-import { carbide, kernelOf, ledgerAt, mainsStage, silicon, stage } from './samples.ts'
+import { carbide, gateDrive, kernelOf, ledgerAt, mainsStage, silicon, stage } from './samples.ts'
 
 const junction = 380
 const at = (made: Parameters<typeof kernelOf>[0], part = silicon()): Kernel => ledgerAt(kernelOf(made, part), junction)!
@@ -40,21 +40,11 @@ describe('the event that stands for a point', () => {
   })
 
   it('takes the slope at the valley, at no current where there is none', () => {
-    const gate = {
-      kind: 'gate',
-      drive: 12,
-      resistance: 20,
-      inputCapacitance: 2e-9,
-      transconductance: 15,
-      threshold: 3.5,
-      plateau: null,
-      sourceInductance: 1e-9,
-    } as const
     const body = silicon({ channel: { onResistance: 0.05, perKelvin: 0 }, deadTime: { before: 1e-7, after: 1e-7 } })
-    const kernel = at(stage({ switch: { slope: gate }, inductor: { inductance: 80e-6 } }), body)
+    const kernel = at(stage({ switch: { slope: gateDrive }, inductor: { inductance: 80e-6 } }), body)
     expect(kernel.instant.valley).toBeLessThan(0)
     expect(pointEvent(kernel).slope / ((15 * 8.5) / 55e-9)).toBeCloseTo(1, 12)
-    const loaded = at(stage({ switch: { slope: gate } }))
+    const loaded = at(stage({ switch: { slope: gateDrive } }))
     kernel.turnOnSlope = 1
     const { slope, instant, hot } = pointEvent(loaded)
     expect(slope / ((15 * (8.5 - instant.valley / 30)) / 55e-9)).toBeCloseTo(1, 12)
