@@ -11,14 +11,14 @@ const shared: BuildOptions = {
   logLevel: 'warning',
 }
 
+const node: BuildOptions = { ...shared, platform: 'node', target: 'node20' }
+
 /**
  * The library and its threads share their pieces. The banner gives bundled CommonJS packages the `require` that ESM lacks.
  */
 const library: BuildOptions = {
-  ...shared,
+  ...node,
   format: 'esm',
-  platform: 'node',
-  target: 'node20',
   splitting: true,
   entryPoints: ['src/index.ts', 'src/worker.ts'],
   outdir: 'dist',
@@ -28,10 +28,8 @@ const library: BuildOptions = {
 
 /** CommonJS, because Node has nothing to load for it: a quarter of its own start. */
 const commandLine: BuildOptions = {
-  ...shared,
+  ...node,
   format: 'cjs',
-  platform: 'node',
-  target: 'node20',
   entryPoints: ['src/cli.ts'],
   outfile: 'dist/cli.cjs',
   define: { 'import.meta.url': 'urlOfThisFile' },
@@ -40,10 +38,8 @@ const commandLine: BuildOptions = {
 
 /** One function expression: load-program.ts compiles it, or finds it compiled, and calls it. */
 const program: BuildOptions = {
-  ...shared,
+  ...node,
   format: 'cjs',
-  platform: 'node',
-  target: 'node20',
   entryPoints: ['src/program.ts'],
   outfile: programFile,
   banner: { js: '(function(require){const module={exports:{}};' },
